@@ -1,0 +1,7 @@
+namespace LabWatch.Lab.Instruments;
+
+/// <summary>A measuring instrument with a serial number. Its certificates belong to it, not to the channel it is installed in.</summary>
+/// <param name="Id">Id in the site (a slug).</param>
+/// <param name="SerialNumber">Serial number as engraved.</param>
+/// <param name="Description">What it is, in words.</param>
+public sealed record Instrument(string Id, string SerialNumber, string Description);

@@ -1,0 +1,100 @@
+using System.Collections.Frozen;
+using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Instruments;
+using LabWatch.Lab.Limits;
+using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
+
+namespace LabWatch.Lab;
+
+/// <summary>
+/// Everything that is configured about a site, as one immutable value: what the hazard watch needs without a database, and what an
+/// assessment was made with. Built only from validated input, so that ids resolve and stays do not overlap.
+/// </summary>
+public sealed class LabSnapshot
+{
+    private readonly FrozenDictionary<SourceKey, ReferenceSource> _sources;
+    private readonly FrozenDictionary<ChannelKey, Channel> _channels;
+
+    /// <summary>Makes a snapshot of validated parts.</summary>
+    public LabSnapshot(
+        LabSite site,
+        IReadOnlyList<ReferenceSource> sources,
+        IReadOnlyList<Instrument> instruments,
+        IReadOnlyList<Installation> installations,
+        IReadOnlyList<Certificate> certificates,
+        IReadOnlyList<AcceptanceLimit> limits,
+        IReadOnlyList<Notifier> notifiers)
+    {
+        Site = site;
+        Sources = sources;
+        Instruments = instruments;
+        Installations = installations;
+        Certificates = certificates;
+        Limits = limits;
+        Notifiers = notifiers;
+        _sources = sources.ToFrozenDictionary(source => source.Key);
+        _channels = sources.SelectMany(source => source.Channels).ToFrozenDictionary(channel => channel.Key);
+    }
+
+    /// <summary>The site.</summary>
+    public LabSite Site { get; }
+
+    /// <summary>The sources, in the order of the lab file.</summary>
+    public IReadOnlyList<ReferenceSource> Sources { get; }
+
+    /// <summary>The instruments.</summary>
+    public IReadOnlyList<Instrument> Instruments { get; }
+
+    /// <summary>Which instrument was in which channel when.</summary>
+    public IReadOnlyList<Installation> Installations { get; }
+
+    /// <summary>All revisions of all certificates.</summary>
+    public IReadOnlyList<Certificate> Certificates { get; }
+
+    /// <summary>All revisions of all acceptance limits.</summary>
+    public IReadOnlyList<AcceptanceLimit> Limits { get; }
+
+    /// <summary>The ways to tell somebody.</summary>
+    public IReadOnlyList<Notifier> Notifiers { get; }
+
+    /// <summary>The source of a key; null where there is none.</summary>
+    public ReferenceSource? FindSource(SourceKey key) => _sources.GetValueOrDefault(key);
+
+    /// <summary>The channel of a key; null where there is none.</summary>
+    public Channel? FindChannel(ChannelKey key) => _channels.GetValueOrDefault(key);
+
+    /// <summary>
+    /// The certificate in force for a channel at an instant: of the instrument installed then, the latest one valid from then or before,
+    /// in its highest revision. Null where no instrument is installed or it has no certificate yet.
+    /// </summary>
+    public Certificate? CertificateInForce(ChannelKey channel, Instant at)
+    {
+        Installation? stay = Installations.FirstOrDefault(candidate => candidate.Channel == channel && candidate.Covers(at));
+        return stay is null
+            ? null
+            : Certificates
+                .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal) && certificate.ValidFrom <= at)
+                .OrderByDescending(certificate => certificate.ValidFrom)
+                .ThenByDescending(certificate => certificate.Revision)
+                .FirstOrDefault();
+    }
+
+    /// <summary>
+    /// The acceptance limit in force for a source, criterion and set point at an instant, in its highest revision; null where there is none.
+    /// A limit for the given band goes before one for all bands.
+    /// </summary>
+    public AcceptanceLimit? LimitInForce(SourceKey source, string criterion, double? setPointCelsius, string? band, Instant at) =>
+        Limits
+            .Where(limit => limit.Source == source
+                && string.Equals(limit.Criterion, criterion, StringComparison.Ordinal)
+                && limit.EffectiveFrom <= at
+                && (limit.Band is null || string.Equals(limit.Band, band, StringComparison.Ordinal))
+                && (limit.MinimumCelsius is not { } minimum || setPointCelsius >= minimum)
+                && (limit.MaximumCelsius is not { } maximum || setPointCelsius <= maximum))
+            .OrderByDescending(limit => limit.Band is not null)
+            .ThenByDescending(limit => limit.EffectiveFrom)
+            .ThenByDescending(limit => limit.Revision)
+            .FirstOrDefault();
+}

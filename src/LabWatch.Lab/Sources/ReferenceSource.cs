@@ -1,0 +1,34 @@
+using LabWatch.Lab.Identity;
+
+namespace LabWatch.Lab.Sources;
+
+/// <summary>A reference blackbody source of a laboratory.</summary>
+/// <param name="Key">What names the source.</param>
+/// <param name="Name">Name for people.</param>
+/// <param name="Kind">What it is built as.</param>
+/// <param name="Route">How its radiance is traceable.</param>
+/// <param name="MinimumCelsius">Lowest set point it is used at.</param>
+/// <param name="MaximumCelsius">Highest set point it is used at.</param>
+/// <param name="Cavity">Geometry and coating.</param>
+/// <param name="Bands">Spectral bands it is used in; at least one.</param>
+/// <param name="Channels">Its streams of readings, at least one, ids unique.</param>
+public sealed record ReferenceSource(
+    SourceKey Key,
+    string Name,
+    SourceKind Kind,
+    TraceabilityRoute Route,
+    double MinimumCelsius,
+    double MaximumCelsius,
+    Cavity Cavity,
+    IReadOnlyList<WorkingBand> Bands,
+    IReadOnlyList<Channel> Channels)
+{
+    /// <summary>Gas that the cavity is purged with, in words; null where it is not purged.</summary>
+    public string? PurgeGas { get; init; }
+
+    /// <summary>The well thermometer that the source's temperature is taken from; null on a radiometric route without one.</summary>
+    public Channel? ReferenceChannel => Channels.FirstOrDefault(channel => channel.IsReference);
+
+    /// <summary>The channel of an id; null where the source has none of that id.</summary>
+    public Channel? FindChannel(string id) => Channels.FirstOrDefault(channel => string.Equals(channel.Id, id, StringComparison.Ordinal));
+}
