@@ -1,6 +1,6 @@
-namespace LabWatch.Lab.Assessments;
+namespace LabWatch.Metrology.Uncertainty;
 
-/// <summary>Outcome of an assessment, in the words of ILAC-G8:09/2019.</summary>
+/// <summary>Outcome of a comparison with a limit, in the words of ILAC-G8:09/2019.</summary>
 public enum Decision
 {
     /// <summary>No decision could be taken; the explanation says why.</summary>

@@ -1,4 +1,4 @@
-namespace LabWatch.Lab.Limits;
+namespace LabWatch.Metrology.Uncertainty;
 
 /// <summary>How a measured value is decided against a limit.</summary>
 public enum DecisionRule
