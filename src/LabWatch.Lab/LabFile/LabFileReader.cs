@@ -1,0 +1,89 @@
+using System.Text.Json;
+using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Findings;
+using LabWatch.Lab.Limits;
+using LabWatch.Lab.Sources;
+
+namespace LabWatch.Lab.LabFile;
+
+/// <summary>
+/// Reads a lab file: JSON (RFC 8259) with comments and trailing commas allowed, in the shape of <c>lab-file.schema.json</c>.
+/// One pass lists all findings.
+/// </summary>
+public static class LabFileReader
+{
+    /// <summary>Value of the member <c>format</c> that this reader understands.</summary>
+    public const string Format = "labwatch-lab/1";
+
+    /// <summary>Largest lab file, bytes.</summary>
+    public const int MaximumLength = 16 * 1024 * 1024;
+
+    /// <summary>The published JSON Schema of the lab file.</summary>
+    public static string Schema
+    {
+        get
+        {
+            using Stream stream = typeof(LabFileReader).Assembly.GetManifestResourceStream("LabWatch.Lab.lab-file.schema.json")!;
+            using StreamReader reader = new(stream);
+            return reader.ReadToEnd();
+        }
+    }
+
+    /// <summary>Reads and validates a lab file from UTF-8 bytes (a byte order mark is skipped).</summary>
+    public static LabFileResult Read(ReadOnlyMemory<byte> utf8)
+    {
+        if (utf8.Length > MaximumLength)
+        {
+            return new LabFileResult(null, [new Finding("too-large", string.Empty, "The lab file is larger than 16 MiB.", null, "Check that it is the right file.")]);
+        }
+
+        ReadOnlyMemory<byte> text = utf8.Span.StartsWith("\uFEFF"u8) ? utf8[3..] : utf8;
+        JsonDocumentOptions options = new() { CommentHandling = JsonCommentHandling.Skip, AllowTrailingCommas = true, AllowDuplicateProperties = false, MaxDepth = 32 };
+        try
+        {
+            using JsonDocument document = JsonDocument.Parse(text, options);
+            return Read(document.RootElement);
+        }
+        catch (JsonException exception)
+        {
+            string where = FormattableString.Invariant($"line {exception.LineNumber + 1}, byte {exception.BytePositionInLine + 1}");
+            return new LabFileResult(null, [new Finding("not-json", where, "This is not JSON: " + exception.Message, null, "Correct the text at that place; comments and trailing commas are allowed.")]);
+        }
+    }
+
+    private static LabFileResult Read(JsonElement root)
+    {
+        List<Finding> findings = [];
+        JsonCursor top = new(root, string.Empty, findings);
+        if (root.ValueKind != JsonValueKind.Object)
+        {
+            top.Report("wrong-type", "A lab file is one object.", "Start the file with an opening brace.");
+            return new LabFileResult(null, findings);
+        }
+
+        top.OnlyMembers("$schema", "format", "site", "sources", "instruments", "limits", "notifiers");
+        if (!string.Equals(top.Text("format"), Format, StringComparison.Ordinal))
+        {
+            top.Report("unknown-format", "This format of lab file is not known.", $"Write \"{Format}\", or use the program that wrote the file.", "format");
+        }
+
+        LabSite site = SiteSection.Read(top);
+        IReadOnlyList<ReferenceSource> sources = [.. top.Items("sources").Select(item => SourceSection.Read(item, site.Id))];
+        InstrumentSection.Instruments instruments = InstrumentSection.Read(top, site.Id);
+        IReadOnlyList<AcceptanceLimit> limits = [.. top.Items("limits", required: false).Select(item => LimitSection.Read(item, site.Id))];
+        IReadOnlyList<Notifier> notifiers = [.. top.Items("notifiers", required: false).Select(NotifierSection.Read)];
+
+        LabFileChecks.Run(sources, instruments, limits, notifiers, findings);
+        LabSnapshot? snapshot = findings.Count > 0
+            ? null
+            : new LabSnapshot(
+                site,
+                sources,
+                instruments.All,
+                [.. instruments.Installations.Select(stay => stay.Value)],
+                [.. instruments.Certificates.Select(certificate => certificate.Value)],
+                limits,
+                notifiers);
+        return new LabFileResult(snapshot, findings);
+    }
+}

@@ -1,0 +1,34 @@
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Limits;
+
+namespace LabWatch.Lab.LabFile;
+
+/// <summary>One entry of the member <c>limits</c> of a lab file.</summary>
+internal static class LimitSection
+{
+    public static AcceptanceLimit Read(JsonCursor item, string site)
+    {
+        item.OnlyMembers("id", "revision", "source", "criterion", "maximum", "unit", "rule", "effectiveFrom", "range", "band");
+        string criterion = item.Text("criterion");
+        if (criterion.Length > 0 && !CriterionCode.All.Contains(criterion, StringComparer.Ordinal))
+        {
+            item.Report("unknown-choice", "This criterion is not known.", $"Use one of: {string.Join(", ", CriterionCode.All)}.", "criterion");
+        }
+
+        (double Minimum, double Maximum)? range = SourceSection.Range(item, required: false);
+        return new AcceptanceLimit(
+            item.Id("id"),
+            item.PositiveInteger("revision"),
+            new SourceKey(site, item.Id("source")),
+            criterion,
+            item.Number("maximum", 1e-12, 1e12),
+            item.Text("unit"),
+            item.Choice<DecisionRule>("rule"),
+            item.Time("effectiveFrom"))
+        {
+            MinimumCelsius = range?.Minimum,
+            MaximumCelsius = range?.Maximum,
+            Band = item.OptionalText("band"),
+        };
+    }
+}

@@ -1,0 +1,67 @@
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Sources;
+
+namespace LabWatch.Lab.LabFile;
+
+/// <summary>One entry of the member <c>sources</c> of a lab file.</summary>
+internal static class SourceSection
+{
+    /// <summary>Lowest temperature that any part of the file may name: absolute zero, degree Celsius.</summary>
+    public const double LowestCelsius = -273.15;
+
+    /// <summary>Highest temperature that any part of the file may name, degree Celsius.</summary>
+    public const double HighestCelsius = 4000;
+
+    public static ReferenceSource Read(JsonCursor item, string site)
+    {
+        item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels");
+        SourceKey key = new(site, item.Id("id"));
+        (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
+        return new ReferenceSource(
+            key,
+            item.Text("name"),
+            item.Choice<SourceKind>("kind"),
+            item.Choice<TraceabilityRoute>("route"),
+            minimum,
+            maximum,
+            CavitySection.Read(item),
+            [.. item.Items("bands").Select(Band)],
+            [.. item.Items("channels").Select(channel => ChannelSection.Read(channel, key))])
+        {
+            PurgeGas = item.OptionalText("purgeGas"),
+        };
+    }
+
+    /// <summary>The member <c>range</c>: two temperatures, the first below the second.</summary>
+    public static (double Minimum, double Maximum)? Range(JsonCursor item, bool required = true)
+    {
+        if (item.Object("range", required) is not { } range)
+        {
+            return null;
+        }
+
+        range.OnlyMembers("minimumCelsius", "maximumCelsius");
+        double minimum = range.Number("minimumCelsius", LowestCelsius, HighestCelsius);
+        double maximum = range.Number("maximumCelsius", LowestCelsius, HighestCelsius);
+        if (minimum > maximum)
+        {
+            range.Report("empty-range", "The range ends below its start.", "Exchange the two temperatures or correct them.");
+        }
+
+        return (minimum, maximum);
+    }
+
+    private static WorkingBand Band(JsonCursor item)
+    {
+        item.OnlyMembers("id", "name", "wavelengthMicrometre", "lowerMicrometre", "upperMicrometre");
+        double? wavelength = item.OptionalNumber("wavelengthMicrometre", 0.1, 1000);
+        double lower = wavelength ?? item.Number("lowerMicrometre", 0.1, 1000);
+        double upper = wavelength ?? item.Number("upperMicrometre", 0.1, 1000);
+        if (lower > upper)
+        {
+            item.Report("empty-range", "The band ends below its start.", "Exchange the two wavelengths or correct them.");
+        }
+
+        return new WorkingBand(item.Id("id"), item.Text("name"), lower, upper);
+    }
+}
