@@ -27,6 +27,9 @@ public interface IAlertLedger
     /// <summary>Messages that are due to be sent, oldest first.</summary>
     ValueTask<IReadOnlyList<OutboxMessage>> DueAsync(Instant now, int count, CancellationToken cancellationToken);
 
+    /// <summary>The messages that an alert caused, in the order they were queued: who was told what, when, and whether it arrived.</summary>
+    ValueTask<IReadOnlyList<OutboxMessage>> MessagesAsync(Guid alertId, CancellationToken cancellationToken);
+
     /// <summary>Stores what became of an attempt to send a message.</summary>
     ValueTask SettleAsync(OutboxMessage message, CancellationToken cancellationToken);
 
