@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Thermometry;
+
 namespace LabWatch.Lab.Instruments;
 
 /// <summary>Indicating thermometer: t90 = indication + correction, the correction interpolated linearly between the points of a table.</summary>

@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Hazards;
+
 namespace LabWatch.Lab.Sources;
 
 /// <summary>What is known about touching a surface, for the burn threshold of ISO 13732-1.</summary>

@@ -1,4 +1,4 @@
-namespace LabWatch.Lab.Instruments;
+namespace LabWatch.Metrology.Thermometry;
 
 /// <summary>One row of a correction table.</summary>
 /// <param name="IndicatedCelsius">What the instrument indicates, degree Celsius.</param>

@@ -1,4 +1,4 @@
-namespace LabWatch.Lab.Sources;
+namespace LabWatch.Metrology.Hazards;
 
 /// <summary>Material of a surface that can be touched, in the groups of ISO 13732-1.</summary>
 public enum SurfaceMaterial

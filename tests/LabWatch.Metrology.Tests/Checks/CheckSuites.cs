@@ -1,0 +1,13 @@
+namespace LabWatch.Metrology.Tests.Checks;
+
+/// <summary>All suites, in the order of the validation page. One instance each, so that every value is computed once a run.</summary>
+internal static class CheckSuites
+{
+    public static IReadOnlyList<CheckSuite> All { get; } =
+    [
+        new Thermometry.Iec60751Suite(),
+    ];
+
+    public static T Get<T>()
+        where T : CheckSuite => All.OfType<T>().Single();
+}
