@@ -1,5 +1,6 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Limits;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Lab.LabFile;
 
