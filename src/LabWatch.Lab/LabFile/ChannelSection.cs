@@ -1,5 +1,6 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
+using LabWatch.Metrology.Hazards;
 
 namespace LabWatch.Lab.LabFile;
 

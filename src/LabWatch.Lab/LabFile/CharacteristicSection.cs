@@ -1,4 +1,5 @@
 using LabWatch.Lab.Instruments;
+using LabWatch.Metrology.Thermometry;
 
 namespace LabWatch.Lab.LabFile;
 
