@@ -1,4 +1,5 @@
 using System.Text.Json;
+using System.Text.Unicode;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Limits;
@@ -38,11 +39,21 @@ public static class LabFileReader
         }
 
         ReadOnlyMemory<byte> text = utf8.Span.StartsWith("\uFEFF"u8) ? utf8[3..] : utf8;
+        if (!Utf8.IsValid(text.Span))
+        {
+            return new LabFileResult(null, [new Finding("not-utf8", string.Empty, "The file is not UTF-8 text.", null, "Save it as UTF-8.")]);
+        }
+
         JsonDocumentOptions options = new() { CommentHandling = JsonCommentHandling.Skip, AllowTrailingCommas = true, AllowDuplicateProperties = false, MaxDepth = 32 };
         try
         {
             using JsonDocument document = JsonDocument.Parse(text, options);
             return Read(document.RootElement);
+        }
+        catch (InvalidOperationException)
+        {
+            // An escape such as \ud800 alone is JSON by its grammar, but no text.
+            return new LabFileResult(null, [new Finding("not-text", string.Empty, "A \\u escape in the file is half of a surrogate pair.", null, "Correct the escape.")]);
         }
         catch (JsonException exception)
         {

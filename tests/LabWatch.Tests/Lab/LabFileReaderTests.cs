@@ -63,7 +63,7 @@ public sealed class LabFileReaderTests
     [Theory]
     [MemberData(nameof(Breaks))]
     public void A_broken_file_is_located_by_the_reader_and_refused_by_the_schema_where_it_can(
-        string code, string pointer, bool schemaSees, Action<JsonObject> breakIt)
+        string code, string where, bool schemaSees, Action<JsonObject> breakIt)
     {
         JsonObject file = Good();
         breakIt(file);
@@ -71,7 +71,7 @@ public sealed class LabFileReaderTests
         LabFileResult result = LabFileReader.Read(Encoding.UTF8.GetBytes(file.ToJsonString()));
 
         Assert.Null(result.Snapshot);
-        Assert.Contains(result.Findings, finding => finding.Code == code && finding.Where == pointer);
+        Assert.Contains(result.Findings, finding => finding.Code == code && finding.Where == where);
         Assert.All(result.Findings, finding => Assert.False(string.IsNullOrWhiteSpace(finding.Cure)));
         Assert.Equal(schemaSees, !Schema.Evaluate(Element(file)).IsValid);
     }
@@ -95,6 +95,8 @@ public sealed class LabFileReaderTests
     [InlineData("[]")]
     [InlineData("{\"format\":\"labwatch-lab/1\",\"format\":\"labwatch-lab/1\"}")]
     [InlineData("\u0000")]
+    [InlineData("{\"format\":\"\\ud800\"}")]
+    [InlineData("{\"\\udc00\":1}")]
     [InlineData("{\"sources\":[null,1,[]]}")]
     public void Text_that_is_no_lab_file_gives_findings(string text) =>
         Assert.NotEmpty(LabFileReader.Read(Encoding.UTF8.GetBytes(text)).Findings);

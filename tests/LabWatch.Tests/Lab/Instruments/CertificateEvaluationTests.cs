@@ -1,7 +1,6 @@
 using LabWatch.Lab.Instruments;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Thermometry;
-using Xunit;
 
 namespace LabWatch.Tests.Lab.Instruments;
 
