@@ -1,4 +1,5 @@
 using System.Diagnostics.CodeAnalysis;
+using Xunit;
 
 namespace LabWatch.Metrology.Tests.Checks;
 

@@ -1,5 +1,6 @@
 using FsCheck.Xunit;
 using LabWatch.Metrology.Thermometry;
+using Xunit;
 
 namespace LabWatch.Metrology.Tests.Thermometry;
 

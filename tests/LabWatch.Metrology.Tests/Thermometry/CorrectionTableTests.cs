@@ -1,4 +1,5 @@
 using LabWatch.Metrology.Thermometry;
+using Xunit;
 
 namespace LabWatch.Metrology.Tests.Thermometry;
 
