@@ -1,0 +1,105 @@
+using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Findings;
+using LabWatch.Records.Alerts;
+using LabWatch.Service.Api.Live;
+using LabWatch.Service.Api.Ports;
+using LabWatch.Service.Api.Requests;
+using LabWatch.Service.Api.Views;
+using Microsoft.AspNetCore.Http.HttpResults;
+
+namespace LabWatch.Service.Api.Alerts;
+
+/// <summary>Alerts and their acknowledgement.</summary>
+internal static class AlertEndpoints
+{
+    private const int RowsByDefault = 50;
+    private const int MaximumRows = 500;
+
+    /// <summary>Maps the endpoints into the group of the API's version.</summary>
+    public static void Map(RouteGroupBuilder api)
+    {
+        RouteGroupBuilder group = api.MapGroup("alerts").WithTags("Alerts");
+        group.MapGet(string.Empty, ListAsync)
+            .WithName("ListAlerts")
+            .WithSummary("Alerts, newest raised first")
+            .ProducesProblem(StatusCodes.Status400BadRequest);
+        group.MapGet("{id}", FindAsync)
+            .WithName("GetAlert")
+            .WithSummary("One alert with every step of its life")
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapPost("{id}/acknowledge", AcknowledgeAsync)
+            .WithName("AcknowledgeAlert")
+            .WithSummary("Acknowledge an alert")
+            .WithDescription(
+                "Says who has seen the alert; it stops escalation, not the hazard. It cannot be taken back. "
+                + "Acknowledging again as the same person changes nothing. The answer comes when the acknowledgement is durable.")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound)
+            .ProducesProblem(StatusCodes.Status409Conflict);
+    }
+
+    private static async Task<Results<Ok<AlertListView>, ProblemHttpResult>> ListAsync(
+        [AsParameters] AlertFilter filter, HttpRequest http, SiteBoard board, IAlertLedger ledger, CancellationToken cancellationToken)
+    {
+        QueryReader query = new(http.Query);
+        query.Allow("source", "open", "after", "count");
+        AlertQuery asked = new(
+            query.Source("source"), query.Flag("open"), query.Cursor("after"), query.Count("count", RowsByDefault, MaximumRows));
+        if (query.Findings.Count > 0)
+        {
+            return Refusals.BadRequest(query.Findings);
+        }
+
+        AlertPage page = await ledger.ListAsync(asked, cancellationToken);
+        return TypedResults.Ok(new AlertListView([.. page.Items.Select(alert => AlertViews.Of(board.Lab, alert))], page.Next));
+    }
+
+    private static async Task<Results<Ok<AlertDetailView>, ProblemHttpResult>> FindAsync(
+        string id, SiteBoard board, IAlertLedger ledger, CancellationToken cancellationToken)
+    {
+        Alert? alert = await SeekAsync(id, ledger, cancellationToken);
+        return alert is null ? Missing(id) : TypedResults.Ok(await DetailAsync(board, ledger, alert, cancellationToken));
+    }
+
+    private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> AcknowledgeAsync(
+        string id, AcknowledgeRequest request, SiteBoard board, IAlertLedger ledger, IAlertPort desk, CancellationToken cancellationToken)
+    {
+        IReadOnlyList<Finding> findings = request.Check();
+        if (findings.Count > 0)
+        {
+            return Refusals.BadRequest(findings);
+        }
+
+        if (!Guid.TryParse(id, out Guid guid))
+        {
+            return Missing(id);
+        }
+
+        string by = request.By!.Trim();
+        string? note = string.IsNullOrWhiteSpace(request.Note) ? null : request.Note.Trim();
+        (Alert? alert, IReadOnlyList<Finding> refused) = await desk.AcknowledgeAsync(guid, by, note, cancellationToken);
+        if (refused.Count > 0)
+        {
+            return Refusals.BadRequest(refused);
+        }
+
+        alert ??= await ledger.FindAsync(guid, cancellationToken);
+        return alert switch
+        {
+            null => Missing(id),
+            { AcknowledgedBy: { } first } when !string.Equals(first, by, StringComparison.Ordinal) => Refusals.Conflict(
+                "acknowledged-already", $"{first} has acknowledged this alert already.", id, "Nothing is left to do; the record keeps who was first."),
+            _ => TypedResults.Ok(AlertViews.Of(board.Lab, alert)),
+        };
+    }
+
+    private static async ValueTask<Alert?> SeekAsync(string id, IAlertLedger ledger, CancellationToken cancellationToken) =>
+        Guid.TryParse(id, out Guid guid) ? await ledger.FindAsync(guid, cancellationToken) : null;
+
+    private static async ValueTask<AlertDetailView> DetailAsync(SiteBoard board, IAlertLedger ledger, Alert alert, CancellationToken cancellationToken) => new(
+        AlertViews.Of(board.Lab, alert),
+        [.. (await ledger.TransitionsAsync(alert.Id, cancellationToken)).Select(AlertViews.Of)],
+        SiteBoard.Caution);
+
+    private static ProblemHttpResult Missing(string id) => Refusals.NotFound("alert", id, "GET /api/v1/alerts lists the alerts.");
+}

@@ -1,0 +1,40 @@
+using LabWatch.Service.Api.Alerts;
+using LabWatch.Service.Api.Assessments;
+using LabWatch.Service.Api.Demo;
+using LabWatch.Service.Api.Health;
+using LabWatch.Service.Api.Hosting;
+using LabWatch.Service.Api.Ports;
+using LabWatch.Service.Api.Requests;
+using LabWatch.Service.Api.Sources;
+using LabWatch.Service.Api.Streaming;
+
+namespace LabWatch.Service.Api;
+
+/// <summary>Maps the HTTP API.</summary>
+internal static class ApiMapping
+{
+    /// <summary>Adds what every answer goes through, and the endpoints. Call it before <see cref="PagesMapping.MapLabWatchPages"/>.</summary>
+    public static WebApplication MapLabWatchApi(this WebApplication app)
+    {
+        ArgumentNullException.ThrowIfNull(app);
+        app.UseResponseCompression();
+        SecurityHeaders.Use(app);
+        FailureAnswers.Use(app);
+        CrossSiteGuard.Use(app);
+        RouteGroupBuilder api = app.MapGroup("/api/v1");
+        SourceEndpoints.Map(api);
+        AssessmentEndpoints.Map(api);
+        AlertEndpoints.Map(api);
+        StreamEndpoints.Map(api);
+        if (app.Services.GetService<IDemoPort>() is not null)
+        {
+            FaultEndpoints.Map(api);
+        }
+
+        api.Map("{**rest}", (string? rest) => Refusals.NotFound("endpoint", rest, "/openapi/v1.json lists the endpoints.")).ExcludeFromDescription();
+        HealthEndpoints.Map(app);
+        app.MapOpenApi();
+        app.MapPrometheusScrapingEndpoint("/metrics");
+        return app;
+    }
+}

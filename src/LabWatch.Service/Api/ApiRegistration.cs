@@ -1,0 +1,71 @@
+using System.IO.Compression;
+using System.Text.Json.Serialization;
+using LabWatch.Lab.Readings;
+using LabWatch.Service.Api.Health;
+using LabWatch.Service.Api.Hosting;
+using LabWatch.Service.Api.Live;
+using LabWatch.Service.Api.Streaming;
+using Microsoft.AspNetCore.ResponseCompression;
+using Microsoft.Extensions.DependencyInjection.Extensions;
+using OpenTelemetry.Metrics;
+
+namespace LabWatch.Service.Api;
+
+/// <summary>Registers what the HTTP API and the pages need besides the rooms they show.</summary>
+internal static class ApiRegistration
+{
+    private static readonly string[] CompressedTypes =
+        ["text/html", "text/css", "text/plain", "text/csv", "text/javascript", "application/javascript", "application/json", "application/problem+json", "application/manifest+json", "image/svg+xml"];
+
+    /// <summary>Adds the API. Calling it again changes nothing.</summary>
+    public static IServiceCollection AddLabWatchApi(this IServiceCollection services)
+    {
+        ArgumentNullException.ThrowIfNull(services);
+        if (services.Any(service => service.ServiceType == typeof(SiteBoard)))
+        {
+            return services;
+        }
+
+        services.TryAddSingleton(TimeProvider.System);
+        services.TryAddSingleton(PagesFolder.BesideProgram);
+        AddLive(services);
+        AddHttp(services);
+        return services;
+    }
+
+    private static void AddLive(IServiceCollection services)
+    {
+        services.TryAddSingleton<LiveReadings>();
+        services.AddSingleton<IReadingTap>(provider => provider.GetRequiredService<LiveReadings>());
+        services.TryAddSingleton<SourceStatusMaker>();
+        services.TryAddSingleton<SiteBoard>();
+        services.TryAddSingleton<StreamOptions>();
+        services.TryAddSingleton<StreamMetrics>();
+        services.TryAddSingleton<StreamHub>();
+        services.AddHostedService<ChangePump>();
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, ReadingStoreCheck>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, RecordsCheck>());
+    }
+
+    private static void AddHttp(IServiceCollection services)
+    {
+        services.AddProblemDetails();
+        services.ConfigureHttpJsonOptions(options =>
+        {
+            options.SerializerOptions.NumberHandling = JsonNumberHandling.Strict;
+            options.SerializerOptions.RespectNullableAnnotations = true;
+        });
+        OpenApiDocument.Add(services);
+        services.AddResponseCompression(options =>
+        {
+            options.EnableForHttps = true;
+            options.MimeTypes = CompressedTypes;
+            options.Providers.Add<BrotliCompressionProvider>();
+            options.Providers.Add<GzipCompressionProvider>();
+        });
+        services.Configure<BrotliCompressionProviderOptions>(options => options.Level = CompressionLevel.Fastest);
+        services.AddOpenTelemetry().WithMetrics(metrics => metrics
+            .AddMeter("LabWatch.*", "Microsoft.AspNetCore.Hosting", "Microsoft.AspNetCore.Server.Kestrel", "System.Runtime")
+            .AddPrometheusExporter());
+    }
+}

@@ -1,0 +1,54 @@
+using LabWatch.Records.Assessments;
+using LabWatch.Service.Api.Live;
+using LabWatch.Service.Api.Requests;
+using LabWatch.Service.Api.Views;
+using Microsoft.AspNetCore.Http.HttpResults;
+
+namespace LabWatch.Service.Api.Assessments;
+
+/// <summary>The assessments made.</summary>
+internal static class AssessmentEndpoints
+{
+    private const int RowsByDefault = 50;
+    private const int MaximumRows = 500;
+
+    /// <summary>Maps the endpoints into the group of the API's version.</summary>
+    public static void Map(RouteGroupBuilder api)
+    {
+        RouteGroupBuilder group = api.MapGroup("assessments").WithTags("Assessments");
+        group.MapGet(string.Empty, ListAsync)
+            .WithName("ListAssessments")
+            .WithSummary("Assessments, newest window first, highest revisions only")
+            .ProducesProblem(StatusCodes.Status400BadRequest);
+        group.MapGet("{id}", FindAsync)
+            .WithName("GetAssessment")
+            .WithSummary("One assessment, any revision, with its provenance")
+            .ProducesProblem(StatusCodes.Status404NotFound);
+    }
+
+    private static async Task<Results<Ok<AssessmentListView>, ProblemHttpResult>> ListAsync(
+        [AsParameters] AssessmentFilter filter, HttpRequest http, IAssessmentLedger ledger, CancellationToken cancellationToken)
+    {
+        QueryReader query = new(http.Query);
+        query.Allow("source", "criterion", "from", "to", "after", "count");
+        AssessmentQuery asked = new(
+            query.Source("source"),
+            query.Criterion("criterion"),
+            query.Window("from", "to"),
+            query.Cursor("after"),
+            query.Count("count", RowsByDefault, MaximumRows));
+        if (query.Findings.Count > 0)
+        {
+            return Refusals.BadRequest(query.Findings);
+        }
+
+        AssessmentPage page = await ledger.ListAsync(asked, cancellationToken);
+        return TypedResults.Ok(new AssessmentListView([.. page.Items.Select(AssessmentViews.Of)], page.Next));
+    }
+
+    private static async Task<Results<Ok<AssessmentView>, ProblemHttpResult>> FindAsync(
+        string id, IAssessmentLedger ledger, CancellationToken cancellationToken) =>
+        await ledger.FindAsync(id, cancellationToken) is { } assessment
+            ? TypedResults.Ok(AssessmentViews.Of(assessment))
+            : Refusals.NotFound("assessment", id, "GET /api/v1/assessments lists the assessments.");
+}

@@ -1,0 +1,48 @@
+using LabWatch.Lab;
+using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Identity;
+using LabWatch.Records.Alerts;
+using LabWatch.Service.Api.Views;
+
+namespace LabWatch.Service.Api.Live;
+
+/// <summary>Alerts as the API shows them.</summary>
+internal static class AlertViews
+{
+    /// <summary>One alert with the names that the site has for its source and subject.</summary>
+    public static AlertView Of(LabSnapshot lab, Alert alert) => new(
+        alert.Id,
+        alert.Source.ToString(),
+        lab.FindSource(alert.Source)?.Name ?? alert.Source.ToString(),
+        alert.Code,
+        alert.Subject,
+        lab.FindChannel(new ChannelKey(alert.Source, alert.Subject))?.Name ?? alert.Subject,
+        Names.Of(alert.Priority),
+        Names.Of(alert.State),
+        alert.IsHazard,
+        alert.RaisedAt,
+        alert.ReturnedAt,
+        alert.AcknowledgedAt,
+        alert.AcknowledgedBy,
+        alert.AcknowledgeNote,
+        alert.Headline,
+        alert.Detail,
+        alert.Value is { } value ? Numbers.OrNull(value) : null,
+        alert.Limit is { } limit ? Numbers.OrNull(limit) : null,
+        alert.Unit);
+
+    /// <summary>One step in an alert's life.</summary>
+    public static AlertTransitionView Of(AlertTransition step) =>
+        new(step.Sequence, step.At, step.Event, step.By, step.Note, Names.Of(step.Alert.State));
+
+    /// <summary>Alerts as a page lists them: hazards first, then by priority, newest first.</summary>
+    public static IReadOnlyList<AlertView> Sorted(LabSnapshot lab, IEnumerable<Alert> alerts) =>
+    [
+        .. alerts
+            .OrderByDescending(alert => alert.IsHazard)
+            .ThenByDescending(alert => alert.Priority)
+            .ThenByDescending(alert => alert.RaisedAt)
+            .ThenBy(alert => alert.Id)
+            .Select(alert => Of(lab, alert)),
+    ];
+}

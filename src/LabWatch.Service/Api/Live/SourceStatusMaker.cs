@@ -1,0 +1,63 @@
+using LabWatch.Lab;
+using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Readings;
+using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
+using LabWatch.Service.Api.Ports;
+using LabWatch.Service.Api.Views;
+
+namespace LabWatch.Service.Api.Live;
+
+/// <summary>Puts together what is known about a source now.</summary>
+internal sealed class SourceStatusMaker(LiveReadings live, IReadinessPort readiness, TimeProvider clock)
+{
+    /// <summary>The status of a source with the given open alerts (those of other sources are left out).</summary>
+    public async ValueTask<SourceStatusView> MakeAsync(
+        LabSnapshot lab, ReferenceSource source, IReadOnlyList<Alert> openAlerts, CancellationToken cancellationToken)
+    {
+        IReadOnlyDictionary<string, Reading> newest = await live.NewestAsync(source.Key, cancellationToken).ConfigureAwait(false);
+        ReadinessView state = await readiness.OfAsync(source, cancellationToken).ConfigureAwait(false);
+        Instant now = Instant.Now(clock);
+        List<NewestReadingView> shown = [];
+        foreach (Channel channel in source.Channels)
+        {
+            if (newest.TryGetValue(channel.Id, out Reading reading))
+            {
+                shown.Add(Show(lab, channel, reading, now));
+            }
+        }
+
+        return new SourceStatusView(
+            source.Key.ToString(),
+            state,
+            Reference(lab, source, newest),
+            SetPoint(source, newest),
+            shown.Count == 0 ? null : shown.Max(reading => reading.Time),
+            shown.All(reading => reading.IsSilent),
+            shown,
+            AlertViews.Sorted(lab, openAlerts.Where(alert => alert.Source == source.Key)));
+    }
+
+    private static NewestReadingView Show(LabSnapshot lab, Channel channel, Reading reading, Instant now) => new(
+        channel.Id,
+        reading.Time,
+        Numbers.OrNull(reading.Value),
+        Temperatures.IsTemperature(channel) ? Temperatures.Of(lab, channel, reading.Time, reading.Value)?.Celsius : null,
+        Names.OfFlags(reading.Quality),
+        Silence.IsSilent(channel, reading.Time, now));
+
+    private static TemperatureView? Reference(LabSnapshot lab, ReferenceSource source, IReadOnlyDictionary<string, Reading> newest)
+    {
+        Channel? channel = source.ReferenceChannel
+            ?? source.Channels.FirstOrDefault(candidate => candidate.Quantity == ChannelQuantity.ComparatorTemperature);
+        return channel is not null && newest.TryGetValue(channel.Id, out Reading reading)
+            ? Temperatures.Of(lab, channel, reading.Time, reading.Value)
+            : null;
+    }
+
+    private static double? SetPoint(ReferenceSource source, IReadOnlyDictionary<string, Reading> newest)
+    {
+        Channel? channel = source.Channels.FirstOrDefault(candidate => candidate.Quantity == ChannelQuantity.SetPoint);
+        return channel is not null && newest.TryGetValue(channel.Id, out Reading reading) ? Numbers.OrNull(reading.Value) : null;
+    }
+}

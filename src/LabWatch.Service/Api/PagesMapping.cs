@@ -1,0 +1,54 @@
+using LabWatch.Service.Api.Hosting;
+using Microsoft.Extensions.FileProviders;
+using Microsoft.Net.Http.Headers;
+
+namespace LabWatch.Service.Api;
+
+/// <summary>Serves the pages.</summary>
+internal static class PagesMapping
+{
+    private const string ForEver = "public, max-age=31536000, immutable";
+    private const string AskAgain = "no-cache";
+
+    /// <summary>Serves the built pages, or a page that says how to build them.</summary>
+    public static WebApplication MapLabWatchPages(this WebApplication app)
+    {
+        ArgumentNullException.ThrowIfNull(app);
+        PagesFolder folder = app.Services.GetRequiredService<PagesFolder>();
+        if (!folder.IsBuilt)
+        {
+            ApiLog.PagesMissing(app.Logger, folder.Path);
+            app.MapGet("/", () => TypedResults.Content(Unbuilt, "text/html; charset=utf-8")).ExcludeFromDescription();
+            return app;
+        }
+
+        StaticFileOptions options = new()
+        {
+            FileProvider = new PhysicalFileProvider(folder.Path),
+            OnPrepareResponse = static context =>
+            {
+                // Names under assets/ carry a hash of the content.
+                bool isHashed = context.Context.Request.Path.StartsWithSegments("/assets", StringComparison.Ordinal);
+                context.Context.Response.Headers[HeaderNames.CacheControl] = isHashed ? ForEver : AskAgain;
+            },
+        };
+        app.UseStaticFiles(options);
+        app.MapFallbackToFile("/", "index.html", options);
+        app.MapFallbackToFile("/sources/{**rest}", "index.html", options);
+        return app;
+    }
+
+    private const string Unbuilt = """
+        <!doctype html>
+        <html lang="en">
+        <head><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>LabWatch</title></head>
+        <body>
+        <h1>LabWatch is running</h1>
+        <p>The pages were not built with this service. They need Node.js 20.19 or later: install it (with npm), then build the service again:</p>
+        <pre>dotnet build src/LabWatch.Service</pre>
+        <p>Everything else works: <a href="/health/ready">health</a>, <a href="/api/v1/sources">sources</a>, <a href="/api/v1/alerts?open=true">open alerts</a>, <a href="/openapi/v1.json">description of the API</a>.</p>
+        <p>LabWatch is not a protective device. Independent protection and local rules remain in force.</p>
+        </body>
+        </html>
+        """;
+}

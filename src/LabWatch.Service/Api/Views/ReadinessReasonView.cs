@@ -1,0 +1,8 @@
+using System.ComponentModel;
+
+namespace LabWatch.Service.Api.Views;
+
+/// <summary>One reason for a readiness.</summary>
+internal sealed record ReadinessReasonView(
+    [property: Description("Stable machine name.")] string Code,
+    [property: Description("The reason in plain words with numbers and units.")] string Text);
