@@ -4,7 +4,7 @@ using LabWatch.Lab.Time;
 namespace LabWatch.Records.Alerts;
 
 /// <summary>The alerts, their transitions, and the outbox of messages about them.</summary>
-public interface IAlertLedger
+public interface IAlertLedger : IPositionLedger
 {
     /// <summary>
     /// Stores an alert's new state, the transition that led to it, and the messages it causes, in one transaction. Idempotent by the
@@ -32,10 +32,4 @@ public interface IAlertLedger
 
     /// <summary>Stores what became of an attempt to send a message.</summary>
     ValueTask SettleAsync(OutboxMessage message, CancellationToken cancellationToken);
-
-    /// <summary>A stored position, such as the last assessment that was looked at; 0 where none.</summary>
-    ValueTask<long> PositionAsync(string reader, CancellationToken cancellationToken);
-
-    /// <summary>Stores a position.</summary>
-    ValueTask SetPositionAsync(string reader, long position, CancellationToken cancellationToken);
 }

@@ -11,7 +11,13 @@ public interface IAssessmentLedger
     /// Records an assessment; recording the same id again changes nothing. In the same transaction it moves the watermark of
     /// (source, criterion) to the end of the window where that is later, and queues the assessment for the alerts.
     /// </summary>
-    ValueTask RecordAsync(Assessment assessment, CancellationToken cancellationToken);
+    ValueTask RecordAsync(Assessment assessment, CancellationToken cancellationToken) => RecordAsync([assessment], cancellationToken);
+
+    /// <summary>The same for several assessments in one transaction: all are recorded, or none.</summary>
+    ValueTask RecordAsync(IReadOnlyList<Assessment> assessments, CancellationToken cancellationToken);
+
+    /// <summary>Moves the watermark of a source and criterion to a later end; an earlier one changes nothing. For windows without readings.</summary>
+    ValueTask MoveWatermarkAsync(SourceKey source, string criterion, Instant windowEnd, CancellationToken cancellationToken);
 
     /// <summary>End of the last window assessed for a source and criterion; null before the first.</summary>
     ValueTask<Instant?> WatermarkAsync(SourceKey source, string criterion, CancellationToken cancellationToken);
@@ -27,9 +33,6 @@ public interface IAssessmentLedger
 
     /// <summary>Highest revisions, newest window first, one page at a time.</summary>
     ValueTask<AssessmentPage> ListAsync(AssessmentQuery query, CancellationToken cancellationToken);
-
-    /// <summary>Highest revisions whose window overlaps a span: what late readings may have changed.</summary>
-    ValueTask<IReadOnlyList<Assessment>> OverlappingAsync(SourceKey source, TimeWindow span, CancellationToken cancellationToken);
 
     /// <summary>Assessments queued for the alerts after a sequence number, in order; at most <paramref name="count"/>.</summary>
     ValueTask<IReadOnlyList<(long Sequence, Assessment Assessment)>> QueuedAsync(long afterSequence, int count, CancellationToken cancellationToken);

@@ -1,0 +1,68 @@
+using LabWatch.Lab.Assessments;
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Time;
+using LabWatch.Records.Storage;
+using LabWatch.Records.Storage.Rows;
+using Microsoft.EntityFrameworkCore;
+
+namespace LabWatch.Records.Assessments;
+
+/// <summary>What belongs to recording assessments, inside the caller's transaction.</summary>
+internal static class AssessmentWriting
+{
+    /// <summary>Adds those that are not there yet, in order, with their queue numbers; moves heads and watermarks. The number added.</summary>
+    public static async Task<int> AddAsync(RecordsContext context, IReadOnlyList<Assessment> assessments, CancellationToken cancellationToken)
+    {
+        string[] ids = [.. assessments.Select(assessment => assessment.Id)];
+        HashSet<string> seen = [.. await context.Assessments.Where(row => ids.Contains(row.Id)).Select(row => row.Id).ToListAsync(cancellationToken)];
+        long sequence = await context.Assessments.MaxAsync(row => (long?)row.Sequence, cancellationToken) ?? 0;
+        int added = 0;
+        foreach (Assessment assessment in assessments)
+        {
+            if (seen.Add(assessment.Id))
+            {
+                added++;
+                AssessmentRow row = AssessmentMapping.ToRow(assessment, sequence + added);
+                context.Assessments.Add(row);
+                await MoveHeadAsync(context, row, cancellationToken);
+                await MoveWatermarkAsync(context, assessment.Source, assessment.Criterion, assessment.Window.End, cancellationToken);
+            }
+        }
+
+        return added;
+    }
+
+    /// <summary>Moves a watermark forward, never back.</summary>
+    public static async Task MoveWatermarkAsync(
+        RecordsContext context, SourceKey source, string criterion, Instant end, CancellationToken cancellationToken)
+    {
+        WatermarkRow? row = await context.Watermarks.FindAsync([source.Site, source.Source, criterion], cancellationToken);
+        if (row is null)
+        {
+            context.Watermarks.Add(
+                new WatermarkRow { Site = source.Site, Source = source.Source, Criterion = criterion, WindowEnd = end.Microseconds });
+        }
+        else if (row.WindowEnd < end.Microseconds)
+        {
+            row.WindowEnd = end.Microseconds;
+        }
+    }
+
+    private static async Task MoveHeadAsync(RecordsContext context, AssessmentRow row, CancellationToken cancellationToken)
+    {
+        AssessmentHeadRow? head = await context.AssessmentHeads.FindAsync([row.Site, row.Source, row.Criterion, row.Scope], cancellationToken);
+        if (head is null)
+        {
+            head = new AssessmentHeadRow
+            {
+                Site = row.Site, Source = row.Source, Criterion = row.Criterion, Scope = row.Scope, AssessmentId = row.Id, WindowEnd = long.MinValue,
+            };
+            context.AssessmentHeads.Add(head);
+        }
+
+        if ((row.WindowEnd, row.Revision).CompareTo((head.WindowEnd, head.Revision)) >= 0)
+        {
+            (head.WindowEnd, head.Revision, head.AssessmentId) = (row.WindowEnd, row.Revision, row.Id);
+        }
+    }
+}

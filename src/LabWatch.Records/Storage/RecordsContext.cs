@@ -1,0 +1,26 @@
+using LabWatch.Records.Storage.Rows;
+using Microsoft.EntityFrameworkCore;
+
+namespace LabWatch.Records.Storage;
+
+/// <summary>The tables of the records, the same for each engine. One derived context an engine carries its migrations.</summary>
+internal abstract class RecordsContext(DbContextOptions options) : DbContext(options)
+{
+    public DbSet<AssessmentRow> Assessments => Set<AssessmentRow>();
+
+    public DbSet<AssessmentHeadRow> AssessmentHeads => Set<AssessmentHeadRow>();
+
+    public DbSet<WatermarkRow> Watermarks => Set<WatermarkRow>();
+
+    public DbSet<AlertRow> Alerts => Set<AlertRow>();
+
+    public DbSet<AlertTransitionRow> AlertTransitions => Set<AlertTransitionRow>();
+
+    public DbSet<OutboxRow> Outbox => Set<OutboxRow>();
+
+    public DbSet<PositionRow> Positions => Set<PositionRow>();
+
+    public DbSet<LabImportRow> LabImports => Set<LabImportRow>();
+
+    protected override void OnModelCreating(ModelBuilder modelBuilder) => RecordsModel.Build(modelBuilder);
+}
