@@ -62,6 +62,14 @@ internal sealed class AlertLedger(RecordsDatabase database, IPositionLedger posi
         return rows.ConvertAll(AlertMapping.ToMessage);
     }
 
+    public async ValueTask<IReadOnlyList<OutboxMessage>> MessagesAsync(Guid alertId, CancellationToken cancellationToken)
+    {
+        List<OutboxRow> rows = await database.ReadAsync(
+            context => context.Outbox.Where(row => row.AlertId == alertId).OrderBy(row => row.QueuedAt).ThenBy(row => row.Id).ToListAsync(cancellationToken),
+            cancellationToken);
+        return rows.ConvertAll(AlertMapping.ToMessage);
+    }
+
     public async ValueTask SettleAsync(OutboxMessage message, CancellationToken cancellationToken) =>
         await database.WriteAsync(
             context => context.Outbox.Where(row => row.Id == message.Id).ExecuteUpdateAsync(

@@ -43,6 +43,7 @@ internal static class RecordsModel
         model.Entity<OutboxRow>(table =>
         {
             table.ToTable("outbox").HasKey(row => row.Id);
+            table.HasIndex(row => row.AlertId);
             table.HasIndex(row => row.DueAt).HasFilter("sent_at IS NULL AND given_up_at IS NULL");
         });
     }

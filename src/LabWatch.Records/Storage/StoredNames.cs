@@ -1,5 +1,5 @@
 using LabWatch.Lab.Alerts;
-using LabWatch.Lab.Assessments;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Records.Storage;
 

@@ -441,6 +441,8 @@ namespace LabWatch.Records.Migrations.PostgreSql
 
                     b.HasKey("Id");
 
+                    b.HasIndex("AlertId");
+
                     b.HasIndex("DueAt")
                         .HasFilter("sent_at IS NULL AND given_up_at IS NULL");
 

@@ -436,6 +436,8 @@ namespace LabWatch.Records.Migrations.Sqlite
 
                     b.HasKey("Id");
 
+                    b.HasIndex("AlertId");
+
                     b.HasIndex("DueAt")
                         .HasFilter("sent_at IS NULL AND given_up_at IS NULL");
 

@@ -5,111 +5,106 @@ using Microsoft.EntityFrameworkCore;
 using Microsoft.EntityFrameworkCore.Infrastructure;
 using Microsoft.EntityFrameworkCore.Migrations;
 using Microsoft.EntityFrameworkCore.Storage.ValueConversion;
-using Npgsql.EntityFrameworkCore.PostgreSQL.Metadata;
 
 #nullable disable
 
-namespace LabWatch.Records.Migrations.PostgreSql
+namespace LabWatch.Records.Migrations.Sqlite
 {
-    [DbContext(typeof(PostgreSqlRecordsContext))]
-    [Migration("20261201095006_Initial")]
+    [DbContext(typeof(SqliteRecordsContext))]
+    [Migration("20261201095655_Initial")]
     partial class Initial
     {
         /// <inheritdoc />
         protected override void BuildTargetModel(ModelBuilder modelBuilder)
         {
 #pragma warning disable 612, 618
-            modelBuilder
-                .HasAnnotation("ProductVersion", "10.0.15")
-                .HasAnnotation("Relational:MaxIdentifierLength", 63);
-
-            NpgsqlModelBuilderExtensions.UseIdentityByDefaultColumns(modelBuilder);
+            modelBuilder.HasAnnotation("ProductVersion", "10.0.15");
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertRow", b =>
                 {
                     b.Property<Guid>("Id")
-                        .HasColumnType("uuid")
+                        .HasColumnType("TEXT")
                         .HasColumnName("id");
 
                     b.Property<string>("AcknowledgeNote")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("acknowledge_note");
 
                     b.Property<long?>("AcknowledgedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("acknowledged_at");
 
                     b.Property<string>("AcknowledgedBy")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("acknowledged_by");
 
                     b.Property<string>("Code")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("code");
 
                     b.Property<string>("Detail")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("detail");
 
                     b.Property<string>("Headline")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("headline");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("limit_value");
 
                     b.Property<long>("Number")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("number");
 
                     b.Property<string>("Priority")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("priority");
 
                     b.Property<long>("RaisedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("raised_at");
 
                     b.Property<long?>("ReturnedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("returned_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("source");
 
                     b.Property<string>("State")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("state");
 
                     b.Property<string>("Subject")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("subject");
 
                     b.Property<int>("Transition")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("transition");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("value");
 
                     b.HasKey("Id");
@@ -127,83 +122,83 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertTransitionRow", b =>
                 {
                     b.Property<Guid>("AlertId")
-                        .HasColumnType("uuid")
+                        .HasColumnType("TEXT")
                         .HasColumnName("alert_id");
 
                     b.Property<int>("Sequence")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("sequence");
 
                     b.Property<string>("AcknowledgeNote")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("acknowledge_note");
 
                     b.Property<long?>("AcknowledgedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("acknowledged_at");
 
                     b.Property<string>("AcknowledgedBy")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("acknowledged_by");
 
                     b.Property<long>("At")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("at");
 
                     b.Property<string>("By")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("by");
 
                     b.Property<string>("Detail")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("detail");
 
                     b.Property<string>("Event")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("event");
 
                     b.Property<string>("Headline")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("headline");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("limit_value");
 
                     b.Property<string>("Note")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("note");
 
                     b.Property<string>("Priority")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("priority");
 
                     b.Property<long?>("ReturnedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("returned_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("State")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("state");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("value");
 
                     b.HasKey("AlertId", "Sequence");
@@ -214,32 +209,32 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AssessmentHeadRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("source");
 
                     b.Property<string>("Criterion")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("criterion");
 
                     b.Property<string>("Scope")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("scope");
 
                     b.Property<string>("AssessmentId")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("assessment_id");
 
                     b.Property<int>("Revision")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("revision");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("window_end");
 
                     b.HasKey("Site", "Source", "Criterion", "Scope");
@@ -250,100 +245,100 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AssessmentRow", b =>
                 {
                     b.Property<string>("Id")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("id");
 
                     b.Property<long>("ComputedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("computed_at");
 
                     b.Property<double?>("ConformityProbability")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("conformity_probability");
 
                     b.Property<double?>("CoverageFactor")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("coverage_factor");
 
                     b.Property<string>("Criterion")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("criterion");
 
                     b.Property<string>("Decision")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("decision");
 
                     b.Property<double?>("DegreesOfFreedom")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("degrees_of_freedom");
 
                     b.Property<string>("Explanation")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("explanation");
 
                     b.Property<string>("Figures")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("figures");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("limit_value");
 
                     b.Property<string>("Provenance")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("provenance");
 
                     b.Property<int>("Revision")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("revision");
 
                     b.Property<string>("Scope")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("scope");
 
                     b.Property<long>("Sequence")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("sequence");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("source");
 
                     b.Property<double?>("StandardUncertainty")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("standard_uncertainty");
 
                     b.Property<string>("SupersedeReason")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("supersede_reason");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("double precision")
+                        .HasColumnType("REAL")
                         .HasColumnName("value");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("window_end");
 
                     b.Property<long>("WindowStart")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("window_start");
 
                     b.HasKey("Id");
@@ -362,30 +357,30 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.LabImportRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<int>("Sequence")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("sequence");
 
                     b.Property<long>("At")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("at");
 
                     b.Property<string>("By")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("by");
 
                     b.Property<string>("Digest")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("digest");
 
                     b.Property<string>("Document")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("document");
 
                     b.HasKey("Site", "Sequence");
@@ -396,53 +391,55 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.OutboxRow", b =>
                 {
                     b.Property<string>("Id")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("id");
 
                     b.Property<Guid>("AlertId")
-                        .HasColumnType("uuid")
+                        .HasColumnType("TEXT")
                         .HasColumnName("alert_id");
 
                     b.Property<int>("Attempts")
-                        .HasColumnType("integer")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("attempts");
 
                     b.Property<string>("Body")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("body");
 
                     b.Property<long>("DueAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("due_at");
 
                     b.Property<long?>("GivenUpAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("given_up_at");
 
                     b.Property<string>("LastError")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("last_error");
 
                     b.Property<string>("Notifier")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("notifier");
 
                     b.Property<long>("QueuedAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("queued_at");
 
                     b.Property<long?>("SentAt")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("sent_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.HasKey("Id");
+
+                    b.HasIndex("AlertId");
 
                     b.HasIndex("DueAt")
                         .HasFilter("sent_at IS NULL AND given_up_at IS NULL");
@@ -453,15 +450,15 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.PositionRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("Reader")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("reader");
 
                     b.Property<long>("Position")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("position");
 
                     b.HasKey("Site", "Reader");
@@ -472,19 +469,19 @@ namespace LabWatch.Records.Migrations.PostgreSql
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("source");
 
                     b.Property<string>("Criterion")
-                        .HasColumnType("text")
+                        .HasColumnType("TEXT")
                         .HasColumnName("criterion");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("bigint")
+                        .HasColumnType("INTEGER")
                         .HasColumnName("window_end");
 
                     b.HasKey("Site", "Source", "Criterion");

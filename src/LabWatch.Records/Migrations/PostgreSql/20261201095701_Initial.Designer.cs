@@ -5,106 +5,111 @@ using Microsoft.EntityFrameworkCore;
 using Microsoft.EntityFrameworkCore.Infrastructure;
 using Microsoft.EntityFrameworkCore.Migrations;
 using Microsoft.EntityFrameworkCore.Storage.ValueConversion;
+using Npgsql.EntityFrameworkCore.PostgreSQL.Metadata;
 
 #nullable disable
 
-namespace LabWatch.Records.Migrations.Sqlite
+namespace LabWatch.Records.Migrations.PostgreSql
 {
-    [DbContext(typeof(SqliteRecordsContext))]
-    [Migration("20261201095001_Initial")]
+    [DbContext(typeof(PostgreSqlRecordsContext))]
+    [Migration("20261201095701_Initial")]
     partial class Initial
     {
         /// <inheritdoc />
         protected override void BuildTargetModel(ModelBuilder modelBuilder)
         {
 #pragma warning disable 612, 618
-            modelBuilder.HasAnnotation("ProductVersion", "10.0.15");
+            modelBuilder
+                .HasAnnotation("ProductVersion", "10.0.15")
+                .HasAnnotation("Relational:MaxIdentifierLength", 63);
+
+            NpgsqlModelBuilderExtensions.UseIdentityByDefaultColumns(modelBuilder);
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertRow", b =>
                 {
                     b.Property<Guid>("Id")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("uuid")
                         .HasColumnName("id");
 
                     b.Property<string>("AcknowledgeNote")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("acknowledge_note");
 
                     b.Property<long?>("AcknowledgedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("acknowledged_at");
 
                     b.Property<string>("AcknowledgedBy")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("acknowledged_by");
 
                     b.Property<string>("Code")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("code");
 
                     b.Property<string>("Detail")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("detail");
 
                     b.Property<string>("Headline")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("headline");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("limit_value");
 
                     b.Property<long>("Number")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("number");
 
                     b.Property<string>("Priority")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("priority");
 
                     b.Property<long>("RaisedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("raised_at");
 
                     b.Property<long?>("ReturnedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("returned_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("source");
 
                     b.Property<string>("State")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("state");
 
                     b.Property<string>("Subject")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("subject");
 
                     b.Property<int>("Transition")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("transition");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("value");
 
                     b.HasKey("Id");
@@ -122,83 +127,83 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertTransitionRow", b =>
                 {
                     b.Property<Guid>("AlertId")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("uuid")
                         .HasColumnName("alert_id");
 
                     b.Property<int>("Sequence")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("sequence");
 
                     b.Property<string>("AcknowledgeNote")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("acknowledge_note");
 
                     b.Property<long?>("AcknowledgedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("acknowledged_at");
 
                     b.Property<string>("AcknowledgedBy")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("acknowledged_by");
 
                     b.Property<long>("At")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("at");
 
                     b.Property<string>("By")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("by");
 
                     b.Property<string>("Detail")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("detail");
 
                     b.Property<string>("Event")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("event");
 
                     b.Property<string>("Headline")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("headline");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("limit_value");
 
                     b.Property<string>("Note")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("note");
 
                     b.Property<string>("Priority")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("priority");
 
                     b.Property<long?>("ReturnedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("returned_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("State")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("state");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("value");
 
                     b.HasKey("AlertId", "Sequence");
@@ -209,32 +214,32 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AssessmentHeadRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("source");
 
                     b.Property<string>("Criterion")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("criterion");
 
                     b.Property<string>("Scope")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("scope");
 
                     b.Property<string>("AssessmentId")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("assessment_id");
 
                     b.Property<int>("Revision")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("revision");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("window_end");
 
                     b.HasKey("Site", "Source", "Criterion", "Scope");
@@ -245,100 +250,100 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AssessmentRow", b =>
                 {
                     b.Property<string>("Id")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("id");
 
                     b.Property<long>("ComputedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("computed_at");
 
                     b.Property<double?>("ConformityProbability")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("conformity_probability");
 
                     b.Property<double?>("CoverageFactor")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("coverage_factor");
 
                     b.Property<string>("Criterion")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("criterion");
 
                     b.Property<string>("Decision")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("decision");
 
                     b.Property<double?>("DegreesOfFreedom")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("degrees_of_freedom");
 
                     b.Property<string>("Explanation")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("explanation");
 
                     b.Property<string>("Figures")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("figures");
 
                     b.Property<double?>("LimitValue")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("limit_value");
 
                     b.Property<string>("Provenance")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("provenance");
 
                     b.Property<int>("Revision")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("revision");
 
                     b.Property<string>("Scope")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("scope");
 
                     b.Property<long>("Sequence")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("sequence");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("source");
 
                     b.Property<double?>("StandardUncertainty")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("standard_uncertainty");
 
                     b.Property<string>("SupersedeReason")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("supersede_reason");
 
                     b.Property<string>("Unit")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("unit");
 
                     b.Property<double?>("Value")
-                        .HasColumnType("REAL")
+                        .HasColumnType("double precision")
                         .HasColumnName("value");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("window_end");
 
                     b.Property<long>("WindowStart")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("window_start");
 
                     b.HasKey("Id");
@@ -357,30 +362,30 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.LabImportRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<int>("Sequence")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("sequence");
 
                     b.Property<long>("At")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("at");
 
                     b.Property<string>("By")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("by");
 
                     b.Property<string>("Digest")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("digest");
 
                     b.Property<string>("Document")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("document");
 
                     b.HasKey("Site", "Sequence");
@@ -391,53 +396,55 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.OutboxRow", b =>
                 {
                     b.Property<string>("Id")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("id");
 
                     b.Property<Guid>("AlertId")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("uuid")
                         .HasColumnName("alert_id");
 
                     b.Property<int>("Attempts")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("integer")
                         .HasColumnName("attempts");
 
                     b.Property<string>("Body")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("body");
 
                     b.Property<long>("DueAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("due_at");
 
                     b.Property<long?>("GivenUpAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("given_up_at");
 
                     b.Property<string>("LastError")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("last_error");
 
                     b.Property<string>("Notifier")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("notifier");
 
                     b.Property<long>("QueuedAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("queued_at");
 
                     b.Property<long?>("SentAt")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("sent_at");
 
                     b.Property<string>("Site")
                         .IsRequired()
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.HasKey("Id");
+
+                    b.HasIndex("AlertId");
 
                     b.HasIndex("DueAt")
                         .HasFilter("sent_at IS NULL AND given_up_at IS NULL");
@@ -448,15 +455,15 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.PositionRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("Reader")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("reader");
 
                     b.Property<long>("Position")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("position");
 
                     b.HasKey("Site", "Reader");
@@ -467,19 +474,19 @@ namespace LabWatch.Records.Migrations.Sqlite
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>
                 {
                     b.Property<string>("Site")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("site");
 
                     b.Property<string>("Source")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("source");
 
                     b.Property<string>("Criterion")
-                        .HasColumnType("TEXT")
+                        .HasColumnType("text")
                         .HasColumnName("criterion");
 
                     b.Property<long>("WindowEnd")
-                        .HasColumnType("INTEGER")
+                        .HasColumnType("bigint")
                         .HasColumnName("window_end");
 
                     b.HasKey("Site", "Source", "Criterion");

@@ -215,6 +215,11 @@ namespace LabWatch.Records.Migrations.PostgreSql
                 columns: new[] { "window_end", "sequence" });
 
             migrationBuilder.CreateIndex(
+                name: "IX_outbox_alert_id",
+                table: "outbox",
+                column: "alert_id");
+
+            migrationBuilder.CreateIndex(
                 name: "IX_outbox_due_at",
                 table: "outbox",
                 column: "due_at",

@@ -1,0 +1,15 @@
+using LabWatch.Records.Alerts;
+using LabWatch.Records.Assessments;
+using LabWatch.Records.LabFiles;
+
+namespace LabWatch.Tests.Records.Contract;
+
+/// <summary>An empty records database and its ledgers, for one test.</summary>
+internal interface IRecordsUnderTest : IAsyncDisposable
+{
+    IAssessmentLedger Assessments { get; }
+
+    IAlertLedger Alerts { get; }
+
+    ILabImportLedger LabImports { get; }
+}
