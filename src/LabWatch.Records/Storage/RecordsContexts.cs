@@ -47,6 +47,5 @@ internal sealed class RecordsContexts
 
     private static DbContextOptionsBuilder<TContext> Common<TContext>(DbContextOptionsBuilder<TContext> builder)
         where TContext : DbContext =>
-        builder.UseQueryTrackingBehavior(QueryTrackingBehavior.NoTracking)
-            .EnableThreadSafetyChecks(false);
+        builder.EnableThreadSafetyChecks(false);
 }

@@ -50,6 +50,7 @@ internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator 
         try
         {
             await using RecordsContext context = contexts.Create();
+            context.ChangeTracker.QueryTrackingBehavior = QueryTrackingBehavior.NoTracking;
             return await read(context);
         }
         catch (Exception exception) when (RecordsFailure.IsOfTheMoment(exception))

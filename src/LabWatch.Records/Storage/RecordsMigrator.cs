@@ -18,30 +18,34 @@ internal sealed class RecordsMigrator(RecordsContexts contexts, TimeProvider clo
     {
         using FileStream? alone = contexts.IsSqlite ? TakeMigrationLock() : null;
         await using RecordsContext context = contexts.Create();
-        IReadOnlyList<string> applied = await AppliedAsync(context, cancellationToken);
+        IHistoryRepository history = context.GetService<IHistoryRepository>();
         IMigrationsAssembly known = context.GetService<IMigrationsAssembly>();
+        bool exists = await history.ExistsAsync(cancellationToken);
+        IReadOnlyList<string> applied = exists
+            ? [.. (await history.GetAppliedMigrationsAsync(cancellationToken)).Select(row => row.MigrationId).Order(StringComparer.Ordinal)]
+            : [];
         RefuseNewer(applied, known);
         List<string> pending = [.. known.Migrations.Keys.Except(applied, StringComparer.Ordinal)];
         if (pending.Count > 0)
         {
-            await ApplyAsync(context, applied, pending, cancellationToken);
+            if (contexts.IsSqlite)
+            {
+                await PrepareFileAsync(context, exists, applied.LastOrDefault() ?? "none", cancellationToken);
+            }
+
+            await context.Database.MigrateAsync(cancellationToken);
+            RecordsLog.Migrated(logger, pending.Count, pending[^1]);
         }
     }
 
-    private async Task ApplyAsync(RecordsContext context, IReadOnlyList<string> applied, List<string> pending, CancellationToken cancellationToken)
+    private async Task PrepareFileAsync(RecordsContext context, bool exists, string schema, CancellationToken cancellationToken)
     {
-        if (contexts.IsSqlite)
+        await UseWriteAheadLogAsync(context, cancellationToken);
+        await ForgetBrokenOffMigrationAsync(context, cancellationToken);
+        if (exists)
         {
-            await UseWriteAheadLogAsync(context, cancellationToken);
-            await ForgetBrokenOffMigrationAsync(context, cancellationToken);
-            if (applied.Count > 0)
-            {
-                await CopyAsync(applied[^1], cancellationToken);
-            }
+            await CopyAsync(schema, cancellationToken);
         }
-
-        await context.Database.MigrateAsync(cancellationToken);
-        RecordsLog.Migrated(logger, pending.Count, pending[^1]);
     }
 
     private void RefuseNewer(IReadOnlyList<string> applied, IMigrationsAssembly known)
@@ -54,15 +58,6 @@ internal sealed class RecordsMigrator(RecordsContexts contexts, TimeProvider clo
                 + $"(schema {unknown}; this version knows up to {known.Migrations.Keys.LastOrDefault()}). Nothing was changed. Install the newer version again, "
                 + "or restore the backup that was made before the upgrade.");
         }
-    }
-
-    /// <summary>The migrations that the database has, in order; read without the tools of the ORM, so that an up-to-date start is quick.</summary>
-    private static async Task<IReadOnlyList<string>> AppliedAsync(RecordsContext context, CancellationToken cancellationToken)
-    {
-        IHistoryRepository history = context.GetService<IHistoryRepository>();
-        return await history.ExistsAsync(cancellationToken)
-            ? [.. (await history.GetAppliedMigrationsAsync(cancellationToken)).Select(row => row.MigrationId).Order(StringComparer.Ordinal)]
-            : [];
     }
 
     private FileStream TakeMigrationLock()

@@ -1,7 +1,5 @@
 using LabWatch.Lab.Alerts;
-using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
-using Xunit;
 
 namespace LabWatch.Tests.Records.Contract;
 

@@ -2,7 +2,6 @@ using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Uncertainty;
 using LabWatch.Records.Assessments;
-using Xunit;
 
 namespace LabWatch.Tests.Records.Contract;
 

@@ -1,5 +1,4 @@
 using LabWatch.Records.LabFiles;
-using Xunit;
 
 namespace LabWatch.Tests.Records.Contract;
 
