@@ -30,7 +30,7 @@ internal sealed class RecordsMigrator(RecordsContexts contexts, TimeProvider clo
         {
             if (contexts.IsSqlite)
             {
-                await PrepareFileAsync(context, exists, applied.LastOrDefault() ?? "none", cancellationToken);
+                await PrepareFileAsync(context, exists, applied.Count > 0 ? applied[^1] : "none", cancellationToken);
             }
 
             await context.Database.MigrateAsync(cancellationToken);
