@@ -1,0 +1,81 @@
+using System.Buffers;
+using System.Collections.Concurrent;
+using LabWatch.Intake.Diagnostics;
+using LabWatch.Intake.Payloads;
+using LabWatch.Intake.Spool;
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Readings;
+using LabWatch.Lab.Time;
+using LabWatch.Readings.Quarantine;
+using Microsoft.Extensions.Logging;
+
+namespace LabWatch.Intake.Pipeline;
+
+/// <summary>
+/// The entrance for every broker: decodes a message, lets the taps see it, and queues it for the committer. Never waits.
+/// </summary>
+internal sealed class MessageIntake(
+    PayloadDecoder decoder,
+    IEnumerable<IReadingTap> taps,
+    IntakeQueue queue,
+    IntakeCounters counters,
+    TimeProvider clock,
+    ILogger<MessageIntake> logger)
+{
+    /// <summary>Longest part of a refused payload that is kept, bytes.</summary>
+    public const int QuarantinedBytes = 64 << 10;
+
+    private const int TapLocks = 16;
+    private readonly IReadingTap[] _taps = [.. taps];
+    private readonly Lock[] _tapLocks = [.. Enumerable.Range(0, TapLocks).Select(_ => new Lock())];
+    private readonly ConcurrentDictionary<SourceKey, Instant> _lastMessages = new();
+
+    public IReadOnlyDictionary<SourceKey, Instant> LastMessages => _lastMessages;
+
+    /// <summary>Takes a message in; false where the queue is full or closed, after the taps have seen it.</summary>
+    public bool TryAccept(string topic, in ReadOnlySequence<byte> payload, bool retained, IDelivery delivery)
+    {
+        Instant arrival = Instant.Now(clock);
+        DecodedMessage decoded = Observe(topic, payload, retained, arrival);
+        QuarantinedMessage? refused = decoded.Findings.Count == 0 ? null
+            : new QuarantinedMessage(arrival, topic, payload.Slice(0, Math.Min(payload.Length, QuarantinedBytes)).ToArray(), decoded.Findings);
+        return queue.TryAdd(new IntakeItem(new SpoolEntry(decoded.Pack, refused), delivery, payload.Length));
+    }
+
+    /// <summary>Shows a message to the taps alone: nothing of it is stored.</summary>
+    public void Observe(string topic, in ReadOnlySequence<byte> payload, bool retained) =>
+        Observe(topic, payload, retained, Instant.Now(clock));
+
+    private DecodedMessage Observe(string topic, in ReadOnlySequence<byte> payload, bool retained, Instant arrival)
+    {
+        counters.Received();
+        DecodedMessage decoded = decoder.Decode(topic, payload, retained, arrival);
+        if (decoded.Pack is { } pack)
+        {
+            counters.Decoded(pack.Readings.Count);
+            _lastMessages[pack.Source] = arrival;
+            lock (_tapLocks[(int)((uint)pack.Source.GetHashCode() % TapLocks)])
+            {
+                Show(pack);
+            }
+        }
+
+        return decoded;
+    }
+
+    private void Show(ReadingPack pack)
+    {
+        foreach (IReadingTap tap in _taps)
+        {
+            try
+            {
+                tap.OnPack(pack);
+            }
+            catch (Exception exception)
+            {
+                // A tap must not throw. Where one does, the others still see the pack and it is still stored.
+                IntakeLog.TapFailed(logger, exception, tap.GetType().Name, pack.Source.ToString());
+            }
+        }
+    }
+}
