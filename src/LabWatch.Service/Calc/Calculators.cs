@@ -1,0 +1,13 @@
+namespace LabWatch.Service.Calc;
+
+/// <summary>All calculators, in the order of the help text.</summary>
+internal static class Calculators
+{
+    public static IReadOnlyList<Calculator> All { get; } =
+    [
+        new PrtCvdCalculator(),
+    ];
+
+    /// <summary>The calculator of a name; null where there is none.</summary>
+    public static Calculator? Find(string name) => All.FirstOrDefault(calculator => string.Equals(calculator.Name, name, StringComparison.Ordinal));
+}
