@@ -1,0 +1,104 @@
+namespace LabWatch.Metrology.Cavities;
+
+/// <summary>
+/// Panels along the meridian, each with the nodes of one Gauss-Legendre rule. They shrink by halves towards apexes and corners, where the radiosity behaves like
+/// s^beta or s log s (s the distance), so that a polynomial fits it on every panel.
+/// </summary>
+internal sealed class PanelMesh
+{
+    private readonly List<Panel> _panels = [];
+
+    /// <param name="meridian">The meridian.</param>
+    /// <param name="options">Fineness.</param>
+    /// <param name="grid">Zones whose limits have to be limits of panels too, so that sums over zones are exact.</param>
+    public PanelMesh(Meridian meridian, PanelOptions options, ZoneGrid grid)
+    {
+        Order = options.Order;
+        Rule = new PanelRule(options.Order);
+        for (int line = 0; line < meridian.Lines.Count; line++) AddLine(meridian, line, options, grid);
+        int n = _panels.Count * Order;
+        (Points, T, Weights) = (new RingPoint[n], new double[n], new double[n]);
+        for (int p = 0; p < _panels.Count; p++)
+        {
+            Panel panel = _panels[p];
+            for (int i = 0; i < Order; i++)
+            {
+                int node = p * Order + i;
+                T[node] = panel.T(Rule.X[i]);
+                Points[node] = RingPoint.On(meridian, panel.Line, T[node]);
+                Weights[node] = Rule.W[i] * panel.HalfLength;
+            }
+        }
+    }
+
+    public int Order { get; }
+
+    public PanelRule Rule { get; }
+
+    public IReadOnlyList<Panel> Panels => _panels;
+
+    public RingPoint[] Points { get; }
+
+    /// <summary>Distance of each node from the start of its line.</summary>
+    public double[] T { get; }
+
+    /// <summary>Length of the meridian that each node stands for.</summary>
+    public double[] Weights { get; }
+
+    public int Count => Points.Length;
+
+    private void AddLine(Meridian meridian, int index, PanelOptions options, ZoneGrid grid)
+    {
+        MeridianLine line = meridian.Lines[index];
+        SortedSet<double> cuts = [0, line.Length];
+        bool cone = index == 0 && line.EndZ > line.StartZ;
+        double shortest = options.Shortest * Math.Min(1, line.Length);
+        if (meridian.ApertureRadius < 1) shortest = Math.Min(shortest, (1 - meridian.ApertureRadius) / 8);
+        Grade(cuts, line.Length, atStart: index > 0 || cone, atEnd: index < meridian.Lines.Count - 1, shortest, options);
+        foreach (double cut in grid.Limits(index)) AddCut(cuts, cut);
+        foreach (double cut in ShadowCuts(meridian, line)) AddCut(cuts, cut);
+        double from = double.NaN;
+        foreach (double to in cuts)
+        {
+            if (!double.IsNaN(from)) _panels.Add(new Panel(index, from, to));
+            from = to;
+        }
+    }
+
+    private static void Grade(SortedSet<double> cuts, double length, bool atStart, bool atEnd, double shortest, PanelOptions options)
+    {
+        double left = 0, right = length;
+        double stepLeft = atStart ? shortest : options.Longest, stepRight = atEnd ? shortest : options.Longest;
+        while (right - left > stepLeft + stepRight || right - left > options.Longest)
+        {
+            if (stepLeft <= stepRight)
+            {
+                left += Math.Min(stepLeft, (right - left) / 2);
+                cuts.Add(left);
+                stepLeft = Math.Min(options.Longest, atStart ? left * (options.Growth - 1) : options.Longest);
+            }
+            else
+            {
+                right -= Math.Min(stepRight, (right - left) / 2);
+                cuts.Add(right);
+                stepRight = Math.Min(options.Longest, atEnd ? (length - right) * (options.Growth - 1) : options.Longest);
+            }
+        }
+    }
+
+    /// <summary>The height from which the whole re-entrant cone is in sight, and steps towards it from below, where the view of the cone has the power 3/2.</summary>
+    private static IEnumerable<double> ShadowCuts(Meridian meridian, MeridianLine line)
+    {
+        if (meridian.Obstacle <= 0 || line.Surface != CavitySurface.Wall) yield break;
+        double top = 2 * meridian.Obstacle;
+        yield return top;
+        for (double d = 0.3; d > 0.002; d /= 3) yield return top * (1 - d);
+    }
+
+    private static void AddCut(SortedSet<double> cuts, double cut)
+    {
+        if (cut <= 0 || cut >= cuts.Max) return;
+        double below = cuts.GetViewBetween(0, cut).Max, above = cuts.GetViewBetween(cut, cuts.Max).Min;
+        if (Math.Min(cut - below, above - cut) > 1e-9) cuts.Add(cut);
+    }
+}
