@@ -1,20 +1,22 @@
 namespace LabWatch.Metrology.Cavities;
 
 /// <summary>
-/// What one trace of a geometry, view and diffuse fraction found: the mean number of hits in each zone after k earlier reflections, and the mean number of escapes at
-/// that reflection. It serves every wall emissivity, wavelength and temperature profile.
+/// What one trace of a geometry, view and diffuse fraction found: the mean number of hits in each zone after so many earlier reflections, and the mean number of
+/// escapes at the reflection that follows. It serves every wall emissivity, wavelength and temperature profile.
 /// </summary>
 public sealed class HitCounts
 {
-    private readonly double[][] _counts;
-    private readonly double[] _escapes;
-    private readonly double[][]? _replicateEscapes;
+    private readonly HitOrder[] _orders;
+    private readonly double[][] _hits;
+    private readonly double[][] _escapes;
+    private readonly bool[] _isSecond;
 
-    internal HitCounts(
-        ZoneGrid grid, CavityMethod method, double diffuseFraction, double[][] counts, double[] escapes, double relativeError, double[][]? replicateEscapes = null)
+    internal HitCounts(HitTally tally, CavityMethod method, double diffuseFraction, double relativeError)
     {
-        (Grid, Method, DiffuseFraction, RelativeError) = (grid, method, diffuseFraction, relativeError);
-        (_counts, _escapes, _replicateEscapes) = (counts, escapes, replicateEscapes);
+        (Grid, Method, DiffuseFraction, RelativeError) = (tally.Grid, method, diffuseFraction, relativeError);
+        (_orders, _hits, _escapes, Second) = (tally.Orders, tally.MeanHits(), tally.Escapes, tally.Second);
+        _isSecond = [.. Grid.Zones.Select(zone => tally.IsSecond(zone.Surface))];
+        Depth = _orders[^1].Total + 1;
     }
 
     /// <summary>The zones.</summary>
@@ -26,77 +28,86 @@ public sealed class HitCounts
     /// <summary>Diffuse fraction of the reflection that the counts hold for.</summary>
     public double DiffuseFraction { get; }
 
+    /// <summary>Surfaces of the second material.</summary>
+    public SecondMaterial Second { get; }
+
     /// <summary>Estimated numerical error of 1 - e_eff, relative, apart from the Monte Carlo standard error.</summary>
     public double RelativeError { get; }
 
     /// <summary>Number of reflections followed; later ones go on in a fixed ratio.</summary>
-    public int Depth => _counts.Length;
+    public int Depth { get; }
 
-    /// <summary>Mean hits in each zone after <paramref name="reflections"/> earlier reflections.</summary>
-    public ReadOnlySpan<double> Hits(int reflections) => _counts[reflections];
+    /// <summary>The orders that hits are counted by.</summary>
+    public IReadOnlyList<HitOrder> Orders => _orders;
 
-    /// <summary>Mean escapes through the aperture at the reflection after <paramref name="reflections"/> earlier ones.</summary>
-    public double Escapes(int reflections) => _escapes[reflections];
+    /// <summary>Mean hits in each zone, for one order.</summary>
+    public ReadOnlySpan<double> Hits(int order) => _hits[order];
 
     /// <summary>The zone weights and 1 - e_eff for one emissivity of all walls.</summary>
     /// <param name="emissivity">Wall emissivity, above 0, at most 1.</param>
-    public ZoneWeights Weights(double emissivity)
+    public ZoneWeights Weights(double emissivity) => Weights(emissivity, emissivity);
+
+    /// <summary>The zone weights and 1 - e_eff for two materials.</summary>
+    /// <param name="first">Emissivity of the first material, above 0, at most 1.</param>
+    /// <param name="second">Emissivity of the second material, above 0, at most 1.</param>
+    public ZoneWeights Weights(double first, double second)
     {
-        if (!(emissivity > 0 && emissivity <= 1)) throw new ArgumentOutOfRangeException(nameof(emissivity), "An emissivity lies above 0 and is at most 1.");
-        double rho = 1 - emissivity;
-        int zones = Grid.Zones.Count, last = Depth - 1;
-        double[] weights = new double[zones], slopes = new double[zones];
+        if (!(first > 0 && first <= 1)) throw new ArgumentOutOfRangeException(nameof(first), "An emissivity lies above 0 and is at most 1.");
+        if (!(second > 0 && second <= 1)) throw new ArgumentOutOfRangeException(nameof(second), "An emissivity lies above 0 and is at most 1.");
+        double[] weights = new double[_isSecond.Length];
+        (double[] factors, double tail) = Factors(1 - first, 1 - second);
+        for (int o = 0; o < _orders.Length; o++)
+        {
+            double factor = factors[o] * (_orders[o].Total == Depth - 1 ? 1 + tail : 1);
+            if (factor == 0) continue;
+            double[] hits = _hits[o];
+            for (int i = 0; i < weights.Length; i++) weights[i] += factor * hits[i];
+        }
+
+        for (int i = 0; i < weights.Length; i++) weights[i] *= _isSecond[i] ? second : first;
+        double[] complements = [.. _escapes.Select(escapes => Complement(escapes, factors, tail, 1 - first, 1 - second))];
+        Statistics.Summary summary = Statistics.Summary.Of(complements);
+        double error = complements.Length > 1 ? summary.StandardDeviation / Math.Sqrt(complements.Length) : 0;
+        return new ZoneWeights(this, first, second, weights, summary.Mean, error);
+    }
+
+    /// <summary>
+    /// The reflectance of each order, (1 - e1)^a (1 - e2)^b, and what all later orders add to the last in units of it: they fall in the ratio of the last two,
+    /// the slowest mode of the cavity.
+    /// </summary>
+    private (double[] Factors, double Tail) Factors(double firstRho, double secondRho)
+    {
+        double[] factors = new double[_orders.Length];
+        double before = 0, last = 0;
+        for (int o = 0; o < factors.Length; o++)
+        {
+            HitOrder order = _orders[o];
+            factors[o] = Power(firstRho, order.First) * Power(secondRho, order.Second);
+            if (order.Total == Depth - 1) last += factors[o] * _hits[o].Sum();
+            else if (order.Total == Depth - 2) before += factors[o] * _hits[o].Sum();
+        }
+
+        double ratio = before > 0 ? last / before : 0;
+        return (factors, ratio is > 0 and < 1 ? ratio / (1 - ratio) : 0);
+    }
+
+    /// <summary>1 - e_eff: what leaves after each order, with the reflectance of the material that reflects last.</summary>
+    private double Complement(double[] escapes, double[] factors, double tail, double firstRho, double secondRho)
+    {
+        double sum = 0;
+        for (int o = 0; o < factors.Length; o++)
+        {
+            double factor = factors[o] * (_orders[o].Total == Depth - 1 ? 1 + tail : 1);
+            sum += factor * (firstRho * escapes[2 * o] + secondRho * escapes[2 * o + 1]);
+        }
+
+        return sum;
+    }
+
+    private static double Power(double value, int exponent)
+    {
         double power = 1;
-        for (int k = 0; k < Depth; k++)
-        {
-            // w = e sum rho^k H_k, dw/de = sum (rho^k - k e rho^(k-1)) H_k.
-            double slope = power - (k == 0 ? 0 : k * emissivity * Math.Pow(rho, k - 1));
-            for (int i = 0; i < zones; i++)
-            {
-                weights[i] += emissivity * power * _counts[k][i];
-                slopes[i] += slope * _counts[k][i];
-            }
-
-            power *= rho;
-        }
-
-        // All later orders: sum over m >= 1 of rho^(last + m) ratio^m H_last.
-        double ratio = TailRatio(), closed = 1 - rho * ratio;
-        double tail = power * ratio / closed;
-        double tailSlope = tail - emissivity * Math.Pow(rho, last) * ratio * (Depth * closed + rho * ratio) / (closed * closed);
-        for (int i = 0; i < zones; i++)
-        {
-            weights[i] += emissivity * tail * _counts[last][i];
-            slopes[i] += tailSlope * _counts[last][i];
-        }
-
-        return new ZoneWeights(this, emissivity, weights, slopes, Complement(_escapes, rho, ratio), StandardError(rho, ratio));
-    }
-
-    /// <summary>Ratio of the hits of two successive late reflections: the slowest mode of the cavity.</summary>
-    private double TailRatio()
-    {
-        if (Depth < 2) return 0;
-        double before = _counts[Depth - 2].Sum(), after = _counts[Depth - 1].Sum();
-        return before > 0 ? Math.Clamp(after / before, 0, 1) : 0;
-    }
-
-    private double StandardError(double rho, double ratio)
-    {
-        if (_replicateEscapes is not { Length: > 1 } replicates) return 0;
-        double[] values = [.. replicates.Select(escapes => Complement(escapes, rho, ratio))];
-        return Statistics.Summary.Of(values).StandardDeviation / Math.Sqrt(values.Length);
-    }
-
-    private static double Complement(double[] escapes, double rho, double ratio)
-    {
-        double sum = 0, power = rho;
-        foreach (double escape in escapes)
-        {
-            sum += power * escape;
-            power *= rho;
-        }
-
-        return sum + power * ratio * escapes[^1] / (1 - rho * ratio);
+        for (int i = 0; i < exponent; i++) power *= value;
+        return power;
     }
 }

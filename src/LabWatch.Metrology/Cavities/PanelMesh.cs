@@ -54,7 +54,7 @@ internal sealed class PanelMesh
         bool cone = index == 0 && line.EndZ > line.StartZ;
         double shortest = options.Shortest * Math.Min(1, line.Length);
         if (meridian.ApertureRadius < 1) shortest = Math.Min(shortest, (1 - meridian.ApertureRadius) / 8);
-        Grade(cuts, line.Length, atStart: index > 0 || cone, atEnd: index < meridian.Lines.Count - 1, shortest, options);
+        Grade(cuts, 0, line.Length, (line.Length, index > 0 || cone, index < meridian.Lines.Count - 1), shortest, options);
         foreach (double cut in grid.Limits(index)) AddCut(cuts, cut);
         foreach (double cut in ShadowCuts(meridian, line)) AddCut(cuts, cut);
         double from = double.NaN;
@@ -65,25 +65,18 @@ internal sealed class PanelMesh
         }
     }
 
-    private static void Grade(SortedSet<double> cuts, double length, bool atStart, bool atEnd, double shortest, PanelOptions options)
+    /// <summary>Cuts [from, to] until no piece is longer than allowed, or than its distance from a graded end times growth less one.</summary>
+    private static void Grade(SortedSet<double> cuts, double from, double to, (double Length, bool AtStart, bool AtEnd) line, double shortest, PanelOptions options)
     {
-        double left = 0, right = length;
-        double stepLeft = atStart ? shortest : options.Longest, stepRight = atEnd ? shortest : options.Longest;
-        while (right - left > stepLeft + stepRight || right - left > options.Longest)
-        {
-            if (stepLeft <= stepRight)
-            {
-                left += Math.Min(stepLeft, (right - left) / 2);
-                cuts.Add(left);
-                stepLeft = Math.Min(options.Longest, atStart ? left * (options.Growth - 1) : options.Longest);
-            }
-            else
-            {
-                right -= Math.Min(stepRight, (right - left) / 2);
-                cuts.Add(right);
-                stepRight = Math.Min(options.Longest, atEnd ? (length - right) * (options.Growth - 1) : options.Longest);
-            }
-        }
+        double length = to - from, near = double.PositiveInfinity;
+        bool touchesStart = line.AtStart && from <= 0, touchesEnd = line.AtEnd && to >= line.Length;
+        if (line.AtStart) near = from;
+        if (line.AtEnd) near = Math.Min(near, line.Length - to);
+        if (length <= options.Longest && (length <= shortest || length <= (options.Growth - 1) * near * 1.001)) return;
+        double cut = touchesStart == touchesEnd ? from + length / 2 : touchesStart ? from + length / options.Growth : to - length / options.Growth;
+        cuts.Add(cut);
+        Grade(cuts, from, cut, line, shortest, options);
+        Grade(cuts, cut, to, line, shortest, options);
     }
 
     /// <summary>The height from which the whole re-entrant cone is in sight, and steps towards it from below, where the view of the cone has the power 3/2.</summary>

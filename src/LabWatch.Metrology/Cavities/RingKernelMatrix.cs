@@ -34,18 +34,18 @@ internal sealed class RingKernelMatrix
 
     public int Count => ToAperture.Length;
 
-    /// <summary>Largest difference from one of any node's view factors to all walls and the aperture.</summary>
-    public double ClosureDefect()
+    /// <summary>For each node what its view factors to all walls and the aperture miss to one: the error of the kernels there.</summary>
+    public double[] Defects()
     {
-        double worst = 0;
+        double[] defects = new double[Count];
         for (int i = 0; i < Count; i++)
         {
             double sum = ToAperture[i];
             foreach (double entry in Entries.AsSpan(i * Count, Count)) sum += entry;
-            worst = Math.Max(worst, Math.Abs(sum - 1));
+            defects[i] = sum - 1;
         }
 
-        return worst;
+        return defects;
     }
 
     /// <summary>Fills the view factors from a place to all nodes.</summary>
@@ -102,16 +102,12 @@ internal sealed class RingKernelMatrix
 
     private void NearPiece(in RingPoint x, in Panel panel, double from, double to, Span<double> entries)
     {
-        // A place on the same line is a limit of the piece, and the kernel is smooth up to it from one side.
-        if (to - from > 1e-12 && x.Line != panel.Line && !IsFar(x, panel, from, to))
+        if (to - from > 1e-7 && !IsShort(x, panel, from, to))
         {
             double middle = (from + to) / 2;
-            if (middle > from && middle < to && to - from > 1e-7)
-            {
-                NearPiece(x, panel, from, middle, entries);
-                NearPiece(x, panel, middle, to, entries);
-                return;
-            }
+            NearPiece(x, panel, from, middle, entries);
+            NearPiece(x, panel, middle, to, entries);
+            return;
         }
 
         double half = (to - from) / 2;
@@ -121,6 +117,16 @@ internal sealed class RingKernelMatrix
             RingPoint y = RingPoint.On(_meridian, panel.Line, panel.T(u));
             _mesh.Rule.AddBasis(u, half * panel.HalfLength * NearRule.W[i] * RingKernel.ToRing(x, y), entries);
         }
+    }
+
+    /// <summary>
+    /// Whether one rule does for a piece. On the line of the place itself the kernel is smooth on either side of it, up to the scale of the distance to the opposite wall.
+    /// </summary>
+    private bool IsShort(in RingPoint x, in Panel panel, double from, double to)
+    {
+        if (x.Line != panel.Line) return IsFar(x, panel, from, to);
+        double start = _meridian.Lines[panel.Line].R(panel.T(from)), end = _meridian.Lines[panel.Line].R(panel.T(to));
+        return (to - from) * panel.HalfLength <= 2 * Math.Max(x.R, Math.Min(start, end));
     }
 
     /// <summary>Whether a piece of a panel is far from a place, measured by its own length, on the same side of the axis.</summary>

@@ -7,12 +7,11 @@ namespace LabWatch.Metrology.Cavities;
 public sealed class ZoneWeights
 {
     private readonly double[] _weights;
-    private readonly double[] _slopes;
 
-    internal ZoneWeights(HitCounts counts, double emissivity, double[] weights, double[] slopes, double isothermalComplement, double standardError)
+    internal ZoneWeights(HitCounts counts, double emissivity, double secondEmissivity, double[] weights, double isothermalComplement, double standardError)
     {
-        (Counts, Emissivity, IsothermalComplement, StandardError) = (counts, emissivity, isothermalComplement, standardError);
-        (_weights, _slopes) = (weights, slopes);
+        (Counts, Emissivity, SecondEmissivity) = (counts, emissivity, secondEmissivity);
+        (IsothermalComplement, StandardError, _weights) = (isothermalComplement, standardError, weights);
     }
 
     /// <summary>The counts behind the weights.</summary>
@@ -20,6 +19,9 @@ public sealed class ZoneWeights
 
     /// <summary>The wall emissivity.</summary>
     public double Emissivity { get; }
+
+    /// <summary>The emissivity of the second material; the same where there is none.</summary>
+    public double SecondEmissivity { get; }
 
     /// <summary>One minus the isothermal effective emissivity, to full relative precision.</summary>
     public double IsothermalComplement { get; }
@@ -33,8 +35,21 @@ public sealed class ZoneWeights
     /// <summary>The weight of each zone.</summary>
     public ReadOnlySpan<double> Weights => _weights;
 
-    /// <summary>Derivative of each weight with respect to the wall emissivity; the sum of them is that of the isothermal effective emissivity.</summary>
-    public ReadOnlySpan<double> WeightSlopes => _slopes;
+    /// <summary>
+    /// Derivatives with respect to the wall emissivity: of each weight, and of <see cref="IsothermalComplement"/>. Central differences of the polynomials in the
+    /// emissivity, extrapolated (L. F. Richardson, 1911); relative error about 1e-9.
+    /// </summary>
+    /// <param name="ofSecond">For the emissivity of the second material alone; otherwise of the first, or of all walls where there is one material.</param>
+    public (double[] Weights, double IsothermalComplement) Slopes(bool ofSecond = false)
+    {
+        double at = ofSecond ? SecondEmissivity : Emissivity;
+        double step = Math.Min(1e-3, Math.Min(at / 4, (1 - at) / 2));
+        if (step <= 0) step = 1e-6;
+        (double[] wide, double wideSum) = Difference(ofSecond, at, 2 * step);
+        (double[] fine, double fineSum) = Difference(ofSecond, at, step);
+        for (int i = 0; i < fine.Length; i++) fine[i] = (4 * fine[i] - wide[i]) / 3;
+        return (fine, (4 * fineSum - wideSum) / 3);
+    }
 
     /// <summary>
     /// One minus the effective emissivity of a cavity that is not isothermal. No allocation.
@@ -47,4 +62,17 @@ public sealed class ZoneWeights
         for (int i = 0; i < _weights.Length; i++) sum += _weights[i] * radianceDeficits[i];
         return sum;
     }
+
+    private (double[] Weights, double Complement) Difference(bool ofSecond, double at, double step)
+    {
+        double high = Math.Min(1, at + step), low = at - step;
+        ZoneWeights up = At(ofSecond, high), down = At(ofSecond, low);
+        double[] slopes = new double[_weights.Length];
+        for (int i = 0; i < slopes.Length; i++) slopes[i] = (up._weights[i] - down._weights[i]) / (high - low);
+        return (slopes, (up.IsothermalComplement - down.IsothermalComplement) / (high - low));
+    }
+
+    private ZoneWeights At(bool ofSecond, double emissivity) => ofSecond
+        ? Counts.Weights(Emissivity, emissivity)
+        : Counts.Weights(emissivity, Counts.Second == SecondMaterial.None ? emissivity : SecondEmissivity);
 }

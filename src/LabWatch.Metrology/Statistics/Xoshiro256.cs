@@ -42,7 +42,7 @@ internal struct Xoshiro256
     public double NextUniform() => ((Next() >> 11) + 0.5) * (1.0 / (1UL << 53));
 
     /// <summary>The next standard normal number, by inversion, so that one number is used for each.</summary>
-    public double NextNormal() => NormalDistribution.Quantile(NextUniform());
+    public double NextNormal() => NormalQuantile.Of(NextUniform());
 
     private static ulong SplitMix(ref ulong state)
     {

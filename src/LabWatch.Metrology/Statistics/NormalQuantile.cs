@@ -1,21 +1,13 @@
-using MathNet.Numerics;
-
 namespace LabWatch.Metrology.Statistics;
 
-/// <summary>The standard normal distribution.</summary>
-public static class NormalDistribution
+/// <summary>
+/// The quantile of the standard normal distribution, fast enough to draw millions: algorithm AS 241 (PPND16) of M. J. Wichura, Appl. Statist. 37 (1988) 477-484,
+/// relative accuracy about 1e-16.
+/// </summary>
+internal static class NormalQuantile
 {
-    /// <summary>Density at <paramref name="z"/>.</summary>
-    public static double Density(double z) => Math.Exp(-z * z / 2) / Math.Sqrt(2 * Math.PI);
-
-    /// <summary>Probability of a value below <paramref name="z"/>; accurate in both tails.</summary>
-    public static double Cumulative(double z) => SpecialFunctions.Erfc(-z / Math.Sqrt(2)) / 2;
-
-    /// <summary>
-    /// The value below which the probability is <paramref name="p"/>; infinite for 0 and 1, NaN outside of [0, 1].
-    /// Algorithm AS 241 (PPND16) of M. J. Wichura, Appl. Statist. 37 (1988) 477-484, relative accuracy about 1e-16.
-    /// </summary>
-    public static double Quantile(double p)
+    /// <summary>The value below which the probability is <paramref name="p"/>; infinite for 0 and 1, NaN outside of [0, 1].</summary>
+    public static double Of(double p)
     {
         if (!(p >= 0 && p <= 1)) return double.NaN;
         double q = p - 0.5;
