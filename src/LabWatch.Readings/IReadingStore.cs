@@ -43,4 +43,10 @@ public interface IReadingStore : IAsyncDisposable
     /// every hour. Start with 0.
     /// </summary>
     ValueTask<ChangedHours> ChangesAsync(long afterChange, CancellationToken cancellationToken);
+
+    /// <summary>
+    /// Sealed parts of source-hours in the order in which they were sealed, those with a higher seal number than the one given (start
+    /// with 0), at most <paramref name="count"/> of them. Engines that do not seal give none.
+    /// </summary>
+    ValueTask<IReadOnlyList<SealedHour>> SealedHoursAsync(long afterSeal, int count, CancellationToken cancellationToken);
 }

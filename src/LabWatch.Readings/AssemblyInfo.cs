@@ -1,0 +1,4 @@
+using System.Runtime.CompilerServices;
+
+[assembly: InternalsVisibleTo("LabWatch.Tests")]
+[assembly: InternalsVisibleTo("LabWatch.Benchmarks")]

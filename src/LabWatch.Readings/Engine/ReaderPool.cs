@@ -1,0 +1,46 @@
+using System.Collections.Concurrent;
+
+namespace LabWatch.Readings.Engine;
+
+/// <summary>Connections that read, kept for the next reader.</summary>
+internal sealed class ReaderPool(StoreDialect dialect) : IDisposable
+{
+    private readonly ConcurrentBag<StoreConnection> _idle = [];
+    private volatile bool _closed;
+
+    /// <summary>Runs a read on a connection of its own; a connection that failed is not used again.</summary>
+    public T Use<T>(Func<StoreConnection, T> read)
+    {
+        ObjectDisposedException.ThrowIf(_closed, this);
+        StoreConnection connection = _idle.TryTake(out StoreConnection? known) ? known : new StoreConnection(dialect.OpenReader());
+        try
+        {
+            T result = read(connection);
+            _idle.Add(connection);
+            connection = null!;
+            return result;
+        }
+        finally
+        {
+            connection?.Dispose();
+            if (_closed)
+            {
+                Clear();
+            }
+        }
+    }
+
+    public void Dispose()
+    {
+        _closed = true;
+        Clear();
+    }
+
+    private void Clear()
+    {
+        while (_idle.TryTake(out StoreConnection? connection))
+        {
+            connection.Dispose();
+        }
+    }
+}

@@ -1,0 +1,99 @@
+using System.Data.Common;
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Time;
+using LabWatch.Readings.Blocks;
+using LabWatch.Readings.Head;
+using LabWatch.Readings.Summaries;
+
+namespace LabWatch.Readings.Engine;
+
+/// <summary>Reduces a channel: whole sealed hours from their summaries where these are fine enough, everything else from the raw readings.</summary>
+internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents incidents, WindowReader windows)
+{
+    public IReadOnlyList<ReadingSummary> Reduce(ChannelKey channel, TimeWindow window, TimeSpan bucket, CancellationToken cancellationToken)
+    {
+        long step = bucket.Ticks / TimeSpan.TicksPerMicrosecond;
+        ArgumentOutOfRangeException.ThrowIfNegativeOrZero(step, nameof(bucket));
+        if (window.End <= window.Start)
+        {
+            return [];
+        }
+
+        SortedDictionary<long, ChannelSummary?> ready = step % SummaryCodec.Minute == 0 ? Ready(channel, window, step) : [];
+        List<ReadingSummary> rows = [];
+        Instant raw = window.Start;
+        foreach ((long hour, ChannelSummary? summary) in ready)
+        {
+            AddRaw(rows, channel, new TimeWindow(raw, new Instant(hour)), step, cancellationToken);
+            rows.AddRange(summary?.Rows ?? []);
+            raw = new Instant(hour + Instant.MicrosecondsPerHour);
+        }
+
+        AddRaw(rows, channel, new TimeWindow(raw, window.End), step, cancellationToken);
+        return SummaryFold.Coarsen(rows, step);
+    }
+
+    private void AddRaw(List<ReadingSummary> rows, ChannelKey channel, TimeWindow window, long step, CancellationToken cancellationToken)
+    {
+        if (window.End <= window.Start)
+        {
+            return;
+        }
+
+        long fine = step % SummaryCodec.Minute == 0 ? SummaryCodec.Minute : step;
+        if (windows.Read(channel.Source, [channel.Channel], window, cancellationToken).Find(channel.Channel) is { } series)
+        {
+            rows.AddRange(SummaryFold.Fold(series.TimeMicroseconds.Span, series.Values.Span, fine));
+        }
+    }
+
+    /// <summary>Summaries of the hours that lie wholly in the window, have one sealed part and nothing in memory.</summary>
+    private SortedDictionary<long, ChannelSummary?> Ready(ChannelKey channel, TimeWindow window, long step)
+    {
+        SortedDictionary<long, ChannelSummary?> ready = [];
+        long from = new Instant(window.Start.Microseconds + Instant.MicrosecondsPerHour - 1).StartOfHour().Microseconds;
+        long to = window.End.StartOfHour().Microseconds;
+        HashSet<long> unready = [.. HeadCapture.Take(head, channel.Source, [], from, to, out HeadSource? source).Select(slice => slice.Hour)];
+        if (source is null || from >= to)
+        {
+            return ready;
+        }
+
+        readers.Use(connection =>
+        {
+            using DbDataReader reader = connection.Query(StoreDialect.SummariesInWindow, source.Id, from, to);
+            while (reader.Read())
+            {
+                long hour = reader.GetInt64(1);
+                if (reader.GetInt32(2) > 0 || unready.Contains(hour) || reader.IsDBNull(3) || incidents.IsBlockSetAside(reader.GetInt64(0))
+                    || !TryDecode(reader.GetInt64(0), reader.GetFieldValue<byte[]>(3), hour, out SealedSummary? summary)
+                    || step % summary!.StepMicroseconds != 0)
+                {
+                    ready.Remove(hour);
+                    unready.Add(hour);
+                    continue;
+                }
+
+                ready[hour] = summary.Channels.FirstOrDefault(one => string.Equals(one.Channel, channel.Channel, StringComparison.Ordinal));
+            }
+
+            return 0;
+        });
+        return ready;
+    }
+
+    private bool TryDecode(long id, byte[] bytes, long hour, out SealedSummary? summary)
+    {
+        summary = null;
+        try
+        {
+            summary = SummaryCodec.Decode(bytes, hour);
+        }
+        catch (DamagedDataException damage)
+        {
+            incidents.Report(StoreIncidents.SummaryKind, id, damage.Message);
+        }
+
+        return summary is not null;
+    }
+}

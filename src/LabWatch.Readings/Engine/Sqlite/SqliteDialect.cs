@@ -1,0 +1,111 @@
+using System.Data.Common;
+using System.Globalization;
+using Microsoft.Data.Sqlite;
+
+namespace LabWatch.Readings.Engine.Sqlite;
+
+/// <summary>The engine on a SQLite file: write-ahead log, every commit forced to the disk.</summary>
+internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWriterOpened = null) : StoreDialect
+{
+    private const int Corrupt = 11;
+    private const int NotADatabase = 26;
+
+    private const string Tables =
+        """
+        CREATE TABLE state(name TEXT PRIMARY KEY, value INTEGER NOT NULL) WITHOUT ROWID;
+        INSERT INTO state(name, value) VALUES ('journal_floor', 0);
+        CREATE TABLE source(id INTEGER PRIMARY KEY, site TEXT NOT NULL, source TEXT NOT NULL, UNIQUE(site, source));
+        CREATE TABLE channel(source_id INTEGER NOT NULL, number INTEGER NOT NULL, channel TEXT NOT NULL,
+          newest_time INTEGER, newest_bits INTEGER, newest_quality INTEGER,
+          PRIMARY KEY(source_id, number), UNIQUE(source_id, channel)) WITHOUT ROWID;
+        CREATE TABLE journal(seq INTEGER PRIMARY KEY, data BLOB NOT NULL);
+        CREATE TABLE block(id INTEGER PRIMARY KEY, source_id INTEGER NOT NULL, hour INTEGER NOT NULL, part INTEGER NOT NULL,
+          readings INTEGER NOT NULL, last_change INTEGER NOT NULL, sealed_at INTEGER NOT NULL, digest BLOB NOT NULL, data BLOB NOT NULL);
+        CREATE UNIQUE INDEX block_hour ON block(source_id, hour, part, readings, last_change);
+        CREATE INDEX block_change ON block(last_change, source_id, hour);
+        CREATE TABLE summary(block_id INTEGER PRIMARY KEY, data BLOB NOT NULL);
+        CREATE TABLE set_aside(id INTEGER PRIMARY KEY, kind TEXT NOT NULL, reference INTEGER NOT NULL, reason TEXT NOT NULL,
+          found_at INTEGER NOT NULL, data BLOB);
+        """;
+
+    public override string Location => path;
+
+    public override DbConnection OpenWriter()
+    {
+        SqliteConnection connection = Open(SqliteOpenMode.ReadWriteCreate);
+        try
+        {
+            Execute(connection, "PRAGMA page_size = 4096");
+            Execute(connection, "PRAGMA auto_vacuum = INCREMENTAL");
+            Execute(connection, "PRAGMA journal_mode = WAL");
+            Execute(connection, "PRAGMA synchronous = FULL");
+            Execute(connection, "PRAGMA wal_autocheckpoint = 2000");
+            Execute(connection, "PRAGMA journal_size_limit = 67108864");
+            Migrate(connection);
+            onWriterOpened?.Invoke(connection);
+            return connection;
+        }
+        catch
+        {
+            connection.Dispose();
+            throw;
+        }
+    }
+
+    public override DbConnection OpenReader() => Open(SqliteOpenMode.ReadOnly);
+
+    public override bool SaysDamaged(DbException error) => error is SqliteException { SqliteErrorCode: Corrupt or NotADatabase };
+
+    public override string SetWholeAside(string stamp)
+    {
+        string target = $"{path}.set-aside-{stamp}";
+        foreach (string suffix in (string[])["", "-wal", "-shm"])
+        {
+            if (File.Exists(path + suffix))
+            {
+                File.Move(path + suffix, target + suffix);
+            }
+        }
+
+        return target;
+    }
+
+    private static void Migrate(SqliteConnection connection)
+    {
+        using SqliteCommand version = connection.CreateCommand();
+        version.CommandText = "PRAGMA user_version";
+        long found = (long)version.ExecuteScalar()!;
+        if (found > SchemaVersion)
+        {
+            throw new StoreUnavailableException($"The readings are in version {found} of the format; this program knows {SchemaVersion}. Run the newer program.");
+        }
+
+        if (found == 0)
+        {
+            using SqliteTransaction transaction = connection.BeginTransaction(deferred: false);
+            Execute(connection, Tables);
+            Execute(connection, string.Create(CultureInfo.InvariantCulture, $"PRAGMA user_version = {SchemaVersion}"));
+            transaction.Commit();
+        }
+    }
+
+    private static void Execute(SqliteConnection connection, string sql)
+    {
+        using SqliteCommand command = connection.CreateCommand();
+        command.CommandText = sql;
+        command.ExecuteNonQuery();
+    }
+
+    private SqliteConnection Open(SqliteOpenMode mode)
+    {
+        SqliteConnection connection = new(new SqliteConnectionStringBuilder
+        {
+            DataSource = path,
+            Mode = mode,
+            Pooling = false,
+            DefaultTimeout = 1,
+        }.ToString());
+        connection.Open();
+        return connection;
+    }
+}

@@ -1,0 +1,158 @@
+using System.Data.Common;
+using LabWatch.Readings.Blocks;
+using LabWatch.Readings.Head;
+
+namespace LabWatch.Readings.Engine;
+
+/// <summary>All that changes the database, on its one writing connection. Throws what the database throws. Not thread-safe.</summary>
+internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connection, StoreIncidents incidents) : IHourLoader, IDisposable
+{
+    public StoreConnection Connection => connection;
+
+    /// <summary>Makes one commit durable.</summary>
+    public void Append(long change, byte[] row, CommitStage stage)
+    {
+        if (stage.NewChannels.Count == 0 && stage.NewSources.Count == 0)
+        {
+            connection.Execute(null, StoreDialect.AppendJournal, change, row);
+            return;
+        }
+
+        using DbTransaction transaction = connection.Begin();
+        foreach (HeadSource source in stage.NewSources)
+        {
+            connection.Execute(transaction, StoreDialect.AddSource, source.Id, source.Key.Site, source.Key.Source);
+        }
+
+        foreach ((HeadSource source, HeadChannel channel) in stage.NewChannels)
+        {
+            connection.Execute(transaction, StoreDialect.AddChannel, source.Id, channel.Number, channel.Name);
+        }
+
+        connection.Execute(transaction, StoreDialect.AppendJournal, change, row);
+        transaction.Commit();
+    }
+
+    /// <inheritdoc/>
+    public void Load(HeadHour hour)
+    {
+        int parts = (int)HourState(hour.Source.Id, hour.Hour).Parts;
+        List<(long Id, SealedBlock Block)> blocks = [];
+        foreach (long id in parts == 0 ? [] : BlockIds(hour))
+        {
+            if (!incidents.IsBlockSetAside(id) && OpenBlock(id) is { } block)
+            {
+                blocks.Add((id, block));
+            }
+        }
+
+        hour.Load(parts, blocks.Count == 0 ? null : new SealedIdentity(blocks, incidents.ReportBlock));
+    }
+
+    /// <summary>The last commit whose readings of an hour are sealed, and how many parts are.</summary>
+    public (long Change, long Parts) HourState(int source, long hour)
+    {
+        using DbDataReader reader = connection.Query(StoreDialect.HourState, source, hour);
+        return reader.Read() ? (reader.GetInt64(0), reader.GetInt64(1)) : (0, 0);
+    }
+
+    /// <summary>Digest of a sealed part; null where there is none.</summary>
+    public byte[]? Digest(int source, long hour, int part)
+    {
+        using DbDataReader reader = connection.Query(StoreDialect.PartDigest, source, hour, part);
+        return reader.Read() ? reader.GetFieldValue<byte[]>(0) : null;
+    }
+
+    /// <summary>Writes sealed parts, the newest reading of their channels, and the number below which the journal is no longer needed.</summary>
+    public void Seal(IReadOnlyList<SealedPart> parts, long floor, long sealedAt)
+    {
+        using DbTransaction transaction = connection.Begin();
+        long id = connection.Number(transaction, StoreDialect.LastSeal);
+        foreach (SealedPart part in parts)
+        {
+            if (connection.Number(transaction, StoreDialect.HasPart, part.Hour.Source.Id, part.Hour.Hour, part.Part.Part) > 0)
+            {
+                // An earlier attempt became durable although its commit reported a failure.
+                continue;
+            }
+
+            connection.Execute(
+                transaction, StoreDialect.AddBlock, ++id, part.Hour.Source.Id, part.Hour.Hour, part.Part.Part, part.Part.Readings,
+                part.Part.LastChange, sealedAt, part.Digest, part.Block);
+            connection.Execute(transaction, StoreDialect.AddSummary, id, part.Summary);
+            SetNewest(transaction, part.Hour.Source);
+        }
+
+        DropJournal(transaction, floor);
+        transaction.Commit();
+    }
+
+    /// <summary>Drops journal rows that are no longer needed, a bounded number at a time; true while there are more.</summary>
+    public bool DropJournal(long floor)
+    {
+        using DbTransaction transaction = connection.Begin();
+        bool more = DropJournal(transaction, floor);
+        transaction.Commit();
+        return more;
+    }
+
+    public void Dispose() => connection.Dispose();
+
+    private bool DropJournal(DbTransaction transaction, long floor)
+    {
+        const int RowsAtOnce = 2000;
+        long from = connection.Number(transaction, StoreDialect.Floor);
+        long to = Math.Min(floor, from + RowsAtOnce);
+        if (to > from)
+        {
+            connection.Execute(transaction, StoreDialect.DropJournal, to);
+            connection.Execute(transaction, StoreDialect.SetFloor, to);
+        }
+
+        return to < floor;
+    }
+
+    private void SetNewest(DbTransaction transaction, HeadSource source)
+    {
+        foreach (HeadChannel channel in source.Channels)
+        {
+            if (channel.Newest is { } newest)
+            {
+                connection.Execute(
+                    transaction, StoreDialect.SetNewest, newest.Time.Microseconds, BitConverter.DoubleToInt64Bits(newest.Value),
+                    (int)newest.Quality, source.Id, channel.Number);
+            }
+        }
+    }
+
+    private List<long> BlockIds(HeadHour hour)
+    {
+        List<long> ids = [];
+        using DbDataReader reader = connection.Query(StoreDialect.HourBlocks, hour.Source.Id, hour.Hour);
+        while (reader.Read())
+        {
+            ids.Add(reader.GetInt64(0));
+        }
+
+        return ids;
+    }
+
+    private SealedBlock? OpenBlock(long id)
+    {
+        try
+        {
+            using DbDataReader reader = connection.Query(StoreDialect.Block, id);
+            return reader.Read() ? SealedBlock.Open(reader.GetFieldValue<byte[]>(0)) : null;
+        }
+        catch (DamagedDataException damage)
+        {
+            incidents.ReportBlock(id, damage);
+        }
+        catch (DbException error) when (dialect.SaysDamaged(error))
+        {
+            incidents.ReportBlock(id, error);
+        }
+
+        return null;
+    }
+}

@@ -1,0 +1,58 @@
+using LabWatch.Lab.Findings;
+
+namespace LabWatch.Readings;
+
+/// <summary>Where and how readings are kept.</summary>
+public sealed record ReadingsOptions
+{
+    /// <summary>Folder of the readings and the quarantine; made where it is missing. On a local disk: a network share cannot promise what a commit needs.</summary>
+    public required string DataDirectory { get; init; }
+
+    /// <summary>How long an hour that is over takes no reading before it is sealed. 1 s to 1 d; 2 min unless stated.</summary>
+    public TimeSpan QuietPeriod { get; init; } = TimeSpan.FromMinutes(2);
+
+    /// <summary>
+    /// How many readings may lie unsealed in memory (about 25 bytes each) before the quietest hours are sealed early.
+    /// 10,000 to 8,000,000; 4,000,000 unless stated.
+    /// </summary>
+    public int UnsealedReadingsLimit { get; init; } = 4_000_000;
+
+    /// <summary>How large the journal may grow, in bytes, before what it holds is sealed early. 1 MiB to 16 GiB; 128 MiB unless stated.</summary>
+    public long JournalBytesLimit { get; init; } = 128L << 20;
+
+    /// <summary>How many refused messages are kept. 1 to 1,000,000; 10,000 unless stated.</summary>
+    public int QuarantineCountLimit { get; init; } = 10_000;
+
+    /// <summary>How many bytes of refused payloads are kept. 1 KiB to 1 GiB; 16 MiB unless stated.</summary>
+    public long QuarantineBytesLimit { get; init; } = 16L << 20;
+
+    /// <summary>Everything wrong with the options; empty where they can be used.</summary>
+    public IReadOnlyList<Finding> Validate()
+    {
+        List<Finding> findings = [];
+        if (string.IsNullOrWhiteSpace(DataDirectory))
+        {
+            findings.Add(new Finding("missing", nameof(DataDirectory), "The folder for readings is not stated.", null, "State a folder on a local disk."));
+        }
+
+        Check(findings, nameof(QuietPeriod), QuietPeriod.TotalSeconds, 1, 86_400, "seconds");
+        Check(findings, nameof(UnsealedReadingsLimit), UnsealedReadingsLimit, 10_000, 8_000_000, "readings");
+        Check(findings, nameof(JournalBytesLimit), JournalBytesLimit, 1L << 20, 16L << 30, "bytes");
+        Check(findings, nameof(QuarantineCountLimit), QuarantineCountLimit, 1, 1_000_000, "messages");
+        Check(findings, nameof(QuarantineBytesLimit), QuarantineBytesLimit, 1L << 10, 1L << 30, "bytes");
+        return findings;
+    }
+
+    private static void Check(List<Finding> findings, string name, double value, double least, double most, string unit)
+    {
+        if (!(value >= least && value <= most))
+        {
+            findings.Add(new Finding(
+                "out-of-range",
+                name,
+                "The value is outside its range.",
+                FormattableString.Invariant($"{value}"),
+                FormattableString.Invariant($"Choose {least} to {most} {unit}.")));
+        }
+    }
+}
