@@ -80,6 +80,11 @@ internal sealed class Recovery(StoreDialect dialect, StoreWriter writer, HeadSta
         long before = from;
         foreach (long change in RowNumbers(from))
         {
+            while (incidents.Has(StoreIncidents.JournalKind, before + 1))
+            {
+                before++;
+            }
+
             if (change > before + 1)
             {
                 ReportMissing(before + 1, change - 1);

@@ -12,14 +12,27 @@ internal sealed class CommitMark : IDisposable
 {
     private const int Bytes = 12;
 
+    private readonly SafeFileHandle _lock;
     private readonly SafeFileHandle _file;
     private readonly byte[] _buffer = new byte[Bytes];
 
-    /// <summary>Opens or makes the file and takes it for this process alone. Throws <see cref="IOException"/> where another process has it.</summary>
+    /// <summary>
+    /// Opens or makes the file, and takes the lock file beside it for this process alone. Throws <see cref="IOException"/> where another
+    /// process has it.
+    /// </summary>
     public CommitMark(string path)
     {
-        _file = File.OpenHandle(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None);
-        Last = Read();
+        _lock = File.OpenHandle(Path.ChangeExtension(path, ".lock"), FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None);
+        try
+        {
+            _file = File.OpenHandle(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.ReadWrite | FileShare.Delete);
+            Last = Read();
+        }
+        catch
+        {
+            _lock.Dispose();
+            throw;
+        }
     }
 
     /// <summary>The number found at opening or written since; 0 where there was none.</summary>
@@ -33,7 +46,11 @@ internal sealed class CommitMark : IDisposable
         Last = change;
     }
 
-    public void Dispose() => _file.Dispose();
+    public void Dispose()
+    {
+        _file.Dispose();
+        _lock.Dispose();
+    }
 
     private long Read()
     {
