@@ -1,3 +1,4 @@
+using LabWatch.Metrology.Numerics;
 using MathNet.Numerics;
 
 namespace LabWatch.Metrology.Uncertainty;
@@ -15,7 +16,7 @@ public static class StudentDistribution
     public static double Density(double t, double degreesOfFreedom) =>
         double.IsPositiveInfinity(degreesOfFreedom)
             ? NormalDistribution.Density(t)
-            : Math.Exp(LogGammaRatio(degreesOfFreedom / 2) - (0.5 * (degreesOfFreedom + 1) * double.LogP1(t * t / degreesOfFreedom)))
+            : Math.Exp(LogGammaRatio(degreesOfFreedom / 2) - (0.5 * (degreesOfFreedom + 1) * Elementary.LogOnePlus(t * t / degreesOfFreedom)))
                 / Math.Sqrt(Math.PI * degreesOfFreedom);
 
     /// <summary>Probability of a value up to t; degrees of freedom positive, else NaN.</summary>
@@ -119,7 +120,7 @@ public static class StudentDistribution
         }
 
         // x^a (1-x)^b / B(a, b), with B(a, 1/2) = sqrt(pi) Gamma(a) / Gamma(a + 1/2).
-        double front = Math.Exp((-a * double.LogP1(tSquare / nu)) + LogGammaRatio(a)) * Math.Sqrt(rest / Math.PI);
+        double front = Math.Exp((-a * Elementary.LogOnePlus(tSquare / nu)) + LogGammaRatio(a)) * Math.Sqrt(rest / Math.PI);
         return x < (a + 1) / (a + b + 2)
             ? front * ContinuedFraction(x, a, b) / a
             : 1 - (front * ContinuedFraction(rest, b, a) / b);

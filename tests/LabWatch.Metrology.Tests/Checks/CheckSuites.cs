@@ -6,6 +6,7 @@ internal static class CheckSuites
     public static IReadOnlyList<CheckSuite> All { get; } =
     [
         new Thermometry.Iec60751Suite(),
+        new Radiometry.PlanckSuite(),
         new Uncertainty.ConformitySuite(),
     ];
 
