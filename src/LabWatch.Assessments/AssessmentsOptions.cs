@@ -1,0 +1,57 @@
+using System.Reflection;
+using LabWatch.Assessments.Criteria;
+using LabWatch.Lab.Findings;
+
+namespace LabWatch.Assessments;
+
+/// <summary>How assessments are planned.</summary>
+public sealed record AssessmentsOptions
+{
+    /// <summary>How often the planner looks for due windows, 1 s to 10 min. A wake-up that finds none costs next to nothing.</summary>
+    public TimeSpan WakeInterval { get; init; } = TimeSpan.FromSeconds(5);
+
+    /// <summary>
+    /// How long an hour must have been without new readings before late or back-filled readings in it are taken up, 1 s to 1 h: short enough
+    /// to be prompt, long enough that a back-fill under way makes no superseded revisions.
+    /// </summary>
+    public TimeSpan HourQuiet { get; init; } = TimeSpan.FromSeconds(60);
+
+    /// <summary>How many sources are assessed at the same time, 1 to 64.</summary>
+    public int Concurrency { get; init; } = 2;
+
+    /// <summary>Windows of the criterion <c>stability</c>.</summary>
+    public CriterionSchedule Stability { get; init; } = StabilityCriterion.DefaultSchedule;
+
+    /// <summary>Version that provenance names.</summary>
+    public string ProgramVersion { get; init; } =
+        typeof(AssessmentsOptions).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
+
+    /// <summary>Everything that is wrong with the options; empty where they can be used.</summary>
+    public IReadOnlyList<Finding> Validate()
+    {
+        List<Finding> findings = [];
+        Check(findings, nameof(WakeInterval), WakeInterval, TimeSpan.FromSeconds(1), TimeSpan.FromMinutes(10));
+        Check(findings, nameof(HourQuiet), HourQuiet, TimeSpan.FromSeconds(1), TimeSpan.FromHours(1));
+        Check(findings, "Stability:Window", Stability.Window, TimeSpan.FromMinutes(1), TimeSpan.FromHours(24));
+        Check(findings, "Stability:Every", Stability.Every, TimeSpan.FromMinutes(1), Stability.Window);
+        Check(findings, "Stability:LeadIn", Stability.LeadIn, TimeSpan.FromMinutes(1), TimeSpan.FromHours(24));
+        Check(findings, "Stability:Grace", Stability.Grace, TimeSpan.Zero, TimeSpan.FromMinutes(10));
+        if (Concurrency is < 1 or > 64)
+        {
+            findings.Add(new Finding(
+                "out-of-range", "Assessments:Concurrency", "The number of sources at the same time must be 1 to 64.",
+                Concurrency.ToString(System.Globalization.CultureInfo.InvariantCulture), "Use the number of processor cores."));
+        }
+
+        return findings;
+    }
+
+    private static void Check(List<Finding> findings, string name, TimeSpan value, TimeSpan least, TimeSpan most)
+    {
+        if (value < least || value > most)
+        {
+            findings.Add(new Finding(
+                "out-of-range", $"Assessments:{name}", $"The duration must be between {least:c} and {most:c}.", value.ToString("c"), "Leave it out to use the default."));
+        }
+    }
+}

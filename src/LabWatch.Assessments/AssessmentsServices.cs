@@ -1,0 +1,41 @@
+using LabWatch.Assessments.Clock;
+using LabWatch.Assessments.Criteria;
+using LabWatch.Assessments.Planning;
+using LabWatch.Lab.Findings;
+using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.DependencyInjection.Extensions;
+using Microsoft.Extensions.Hosting;
+
+namespace LabWatch.Assessments;
+
+/// <summary>Registers the assessments.</summary>
+public static class AssessmentsServices
+{
+    /// <summary>
+    /// Adds the criteria, the planner and the clock watchdog. Needs a reading store, the records and an <see cref="Lab.ILabSnapshotSource"/>
+    /// in the same collection. Calling it again changes nothing. Throws <see cref="ArgumentException"/> where the options have findings.
+    /// </summary>
+    public static IServiceCollection AddLabWatchAssessments(this IServiceCollection services, AssessmentsOptions options)
+    {
+        ArgumentNullException.ThrowIfNull(services);
+        ArgumentNullException.ThrowIfNull(options);
+        IReadOnlyList<Finding> findings = options.Validate();
+        if (findings.Count > 0)
+        {
+            throw new ArgumentException(string.Join(Environment.NewLine, findings), nameof(options));
+        }
+
+        services.AddLogging();
+        services.TryAddSingleton(TimeProvider.System);
+        services.TryAddSingleton(options);
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, StabilityCriterion>(_ => new StabilityCriterion(options.Stability)));
+        services.TryAddSingleton<PlannerState>();
+        services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
+        services.TryAddSingleton<Planner>();
+        services.TryAddSingleton<ClockStepWatchdog>();
+        services.TryAddSingleton<IClockStepSource>(provider => provider.GetRequiredService<ClockStepWatchdog>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, ClockStepWatchdog>(provider => provider.GetRequiredService<ClockStepWatchdog>()));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, PlannerService>());
+        return services;
+    }
+}

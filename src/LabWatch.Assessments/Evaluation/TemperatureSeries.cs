@@ -1,0 +1,110 @@
+using LabWatch.Lab.Instruments;
+using LabWatch.Lab.Readings;
+using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
+using LabWatch.Metrology.Thermometry;
+using LabWatch.Readings;
+
+namespace LabWatch.Assessments.Evaluation;
+
+/// <summary>
+/// A thermometer channel as t90, each reading through the certificate in force at its time. A reading that has no value, or one that the
+/// sensor cannot give, is left out and counted; one outside the certificate's range stays and is counted.
+/// </summary>
+/// <param name="TimeMicroseconds">Device times, rising.</param>
+/// <param name="Celsius">t90 in degree Celsius, one a time; all finite.</param>
+/// <param name="LeftOut">Readings left out for their quality.</param>
+/// <param name="WithoutCertificate">Readings left out because no certificate in force gives their temperature.</param>
+/// <param name="OutsideCertificate">Readings that stand although they are outside the range of the certificate.</param>
+/// <param name="StandardUncertainty">Largest standard uncertainty that a certificate states for one of them, kelvin; NaN where none does.</param>
+public sealed record TemperatureSeries(
+    ReadOnlyMemory<long> TimeMicroseconds,
+    ReadOnlyMemory<double> Celsius,
+    int LeftOut,
+    int WithoutCertificate,
+    int OutsideCertificate,
+    double StandardUncertainty)
+{
+    private const ReadingQuality Unusable = ReadingQuality.NoValue | ReadingQuality.OutsideSensorRange;
+
+    /// <summary>No readings.</summary>
+    public static TemperatureSeries Empty { get; } = new(default, default, 0, 0, 0, double.NaN);
+
+    /// <summary>Number of temperatures.</summary>
+    public int Count => Celsius.Length;
+
+    /// <summary>Arithmetic mean of the temperatures, degree Celsius; NaN where there is none.</summary>
+    public double MeanCelsius
+    {
+        get
+        {
+            double sum = 0;
+            foreach (double celsius in Celsius.Span)
+            {
+                sum += celsius;
+            }
+
+            return Count > 0 ? sum / Count : double.NaN;
+        }
+    }
+
+    /// <summary>Evaluates the raw readings of a channel.</summary>
+    public static TemperatureSeries Of(ReadingSeries? series, Channel channel, CertificateTimeline certificates)
+    {
+        ArgumentNullException.ThrowIfNull(channel);
+        ArgumentNullException.ThrowIfNull(certificates);
+        if (series is null)
+        {
+            return Empty;
+        }
+
+        long[] times = new long[series.Count];
+        double[] celsius = new double[series.Count];
+        int kept = 0, leftOut = 0, without = 0, outside = 0;
+        double uncertainty = double.NaN;
+        foreach (CertificateStretch stretch in certificates.Stretches)
+        {
+            ReadingSeries part = series.Slice(stretch.Span);
+            for (int i = 0; i < part.Count; i++)
+            {
+                if ((part.Qualities.Span[i] & Unusable) != 0)
+                {
+                    leftOut++;
+                    continue;
+                }
+
+                TemperatureEvaluation evaluation = stretch.Certificate is { } certificate
+                    ? CertificateEvaluation.Evaluate(certificate, part.Values.Span[i], channel.Unit)
+                    : TemperatureEvaluation.None;
+                if (!evaluation.HasValue)
+                {
+                    without++;
+                    continue;
+                }
+
+                (times[kept], celsius[kept]) = (part.TimeMicroseconds.Span[i], evaluation.Celsius.Value);
+                outside += evaluation.InRange ? 0 : 1;
+                uncertainty = evaluation.InRange && !(evaluation.Celsius.StandardUncertainty <= uncertainty)
+                    ? evaluation.Celsius.StandardUncertainty
+                    : uncertainty;
+                kept++;
+            }
+        }
+
+        return new(times.AsMemory(0, kept), celsius.AsMemory(0, kept), leftOut, without, outside, uncertainty);
+    }
+
+    /// <summary>The temperatures in a window; the counts stay those of the whole.</summary>
+    public TemperatureSeries Slice(TimeWindow window)
+    {
+        int from = FirstNotBefore(window.Start);
+        int length = FirstNotBefore(window.End) - from;
+        return this with { TimeMicroseconds = TimeMicroseconds.Slice(from, length), Celsius = Celsius.Slice(from, length) };
+    }
+
+    private int FirstNotBefore(Instant instant)
+    {
+        int index = TimeMicroseconds.Span.BinarySearch(instant.Microseconds);
+        return index < 0 ? ~index : index;
+    }
+}

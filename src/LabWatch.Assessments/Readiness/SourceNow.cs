@@ -1,0 +1,63 @@
+using LabWatch.Lab.Instruments;
+using LabWatch.Lab.Readings;
+using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
+
+namespace LabWatch.Assessments.Readiness;
+
+/// <summary>What a source's newest readings say.</summary>
+/// <param name="Reference">The channel that the source's temperature is taken from; null where it has none.</param>
+/// <param name="LastReading">Newest reading of that channel; null where there is none.</param>
+/// <param name="Celsius">Its temperature, degree Celsius; NaN where unknown.</param>
+/// <param name="SetPointCelsius">Set point, degree Celsius; NaN where unknown.</param>
+/// <param name="HeaterIsOff">Whether a heater channel says that nothing is put in; null where none tells.</param>
+internal sealed record SourceNow(Channel? Reference, Instant? LastReading, double Celsius, double SetPointCelsius, bool? HeaterIsOff)
+{
+    /// <summary>Heater power below this counts as none, watt. Idle controllers draw a little.</summary>
+    private const double NoPowerWatt = 1;
+
+    /// <summary>Heater duty or current below this counts as none.</summary>
+    private const double NoDrive = 0.002;
+
+    public static SourceNow Of(ReadinessInput input)
+    {
+        Channel? reference = input.Source.ReferenceChannel
+            ?? input.Source.Channels.FirstOrDefault(channel => channel.Quantity is ChannelQuantity.ComparatorTemperature);
+        Reading? last = reference is null ? null : Find(input, reference);
+        double setPoint = Value(input, ChannelQuantity.SetPoint);
+        return new(reference, last?.Time, Temperature(input, reference, last), setPoint, HeaterOff(input));
+    }
+
+    private static double Temperature(ReadinessInput input, Channel? channel, Reading? reading) =>
+        channel is null || reading is not { } last ? double.NaN
+        : input.Snapshot.CertificateInForce(channel.Key, last.Time) is { } certificate ? CertificateEvaluation.Evaluate(certificate, last.Value, channel.Unit).Celsius.Value
+        : string.Equals(channel.Unit, "Cel", StringComparison.Ordinal) ? last.Value
+        : double.NaN;
+
+    private static bool? HeaterOff(ReadinessInput input)
+    {
+        double power = Value(input, ChannelQuantity.HeaterPower);
+        double drive = Value(input, ChannelQuantity.HeaterDuty) is var duty && double.IsNaN(duty) ? Value(input, ChannelQuantity.HeaterCurrent) : duty;
+        return !double.IsNaN(power) ? power < NoPowerWatt
+            : !double.IsNaN(drive) ? drive < NoDrive
+            : null;
+    }
+
+    private static double Value(ReadinessInput input, ChannelQuantity quantity) =>
+        input.Source.Channels.FirstOrDefault(channel => channel.Quantity == quantity) is { } channel && Find(input, channel) is { } reading
+            ? reading.Value
+            : double.NaN;
+
+    private static Reading? Find(ReadinessInput input, Channel channel)
+    {
+        foreach (Reading reading in input.Newest)
+        {
+            if (string.Equals(reading.Channel, channel.Id, StringComparison.Ordinal))
+            {
+                return reading;
+            }
+        }
+
+        return null;
+    }
+}
