@@ -1,0 +1,99 @@
+using System.Globalization;
+using LabWatch.Lab.Findings;
+
+namespace LabWatch.Alerts;
+
+/// <summary>Settings of hazard watch, alerts and notifiers. Every duration is positive unless said otherwise.</summary>
+public sealed record AlertsOptions
+{
+    /// <summary>Folder of the service's own data; the alert journal and the list of last-heard hazard channels lie in it.</summary>
+    public required string DataDirectory { get; init; }
+
+    /// <summary>Folder with one file a secret, the file named like the secret; null for none. Environment variables are looked at besides.</summary>
+    public string? SecretsDirectory { get; init; }
+
+    /// <summary>How far a surface must fall below its limit before the alert can return, kelvin, 0 or more. Default 2.</summary>
+    public double HotSurfaceDeadBandKelvin { get; init; } = 2;
+
+    /// <summary>How long a surface must read at or above its limit before the alert is raised. Default 0: the first valid reading raises.</summary>
+    public TimeSpan HotSurfaceOnDelay { get; init; } = TimeSpan.Zero;
+
+    /// <summary>How long a surface must read below its limit less the dead-band before the alert returns; 0 or more. Default 30 s.</summary>
+    public TimeSpan HotSurfaceOffDelay { get; init; } = TimeSpan.FromSeconds(30);
+
+    /// <summary>A hazard channel is silent when it has sent nothing valid for this many of its intervals. Default 5, at least 2.</summary>
+    public double SilenceIntervals { get; init; } = 5;
+
+    /// <summary>The shortest silence that is called one. Default 10 s.</summary>
+    public TimeSpan SilenceMinimum { get; init; } = TimeSpan.FromSeconds(10);
+
+    /// <summary>
+    /// How long after a start no silence is raised, so that devices can connect; the silence itself is counted from the last reading before
+    /// the stop. Default 15 s; 0 or more.
+    /// </summary>
+    public TimeSpan StartGrace { get; init; } = TimeSpan.FromSeconds(15);
+
+    /// <summary>Readings older than this by device time say nothing about the present: they only end a silence. Default 60 s.</summary>
+    public TimeSpan OldestReading { get; init; } = TimeSpan.FromSeconds(60);
+
+    /// <summary>How long a step may wait for the local disk before it is handed to the notifiers all the same. Default 250 ms.</summary>
+    public TimeSpan JournalPatience { get; init; } = TimeSpan.FromMilliseconds(250);
+
+    /// <summary>How often new assessments are looked for. Default 2 s.</summary>
+    public TimeSpan AssessmentPoll { get; init; } = TimeSpan.FromSeconds(2);
+
+    /// <summary>How many lengths of its window an assessment may lie back and still raise an alert. Default 2.</summary>
+    public double OldestAssessmentWindows { get; init; } = 2;
+
+    /// <summary>Time allowed for one attempt of a webhook, answer included. Default 10 s.</summary>
+    public TimeSpan WebhookTimeout { get; init; } = TimeSpan.FromSeconds(10);
+
+    /// <summary>Wait before the second attempt; doubled for each further one. Default 2 s.</summary>
+    public TimeSpan RetryFirst { get; init; } = TimeSpan.FromSeconds(2);
+
+    /// <summary>Longest wait between attempts, a receiver's Retry-After included. Default 5 min.</summary>
+    public TimeSpan RetryLongest { get; init; } = TimeSpan.FromMinutes(5);
+
+    /// <summary>A message that could not be delivered for this long is given up, and that is said. Default 24 h.</summary>
+    public TimeSpan GiveUpAfter { get; init; } = TimeSpan.FromHours(24);
+
+    /// <summary>Attempts under way at the same time to one notifier. Default 4, 1 to 64.</summary>
+    public int ParallelAttempts { get; init; } = 4;
+
+    /// <summary>Everything wrong with these settings.</summary>
+    public IReadOnlyList<Finding> Validate()
+    {
+        List<Finding> findings = [];
+        if (string.IsNullOrWhiteSpace(DataDirectory))
+        {
+            findings.Add(new Finding("missing", nameof(DataDirectory), "No folder is given for the alert journal.", null, "Name a folder on a local disk."));
+        }
+
+        Check(findings, nameof(HotSurfaceDeadBandKelvin), HotSurfaceDeadBandKelvin, 0, 50, "K");
+        Check(findings, nameof(HotSurfaceOnDelay), HotSurfaceOnDelay.TotalSeconds, 0, 60, "s");
+        Check(findings, nameof(HotSurfaceOffDelay), HotSurfaceOffDelay.TotalSeconds, 0, 3600, "s");
+        Check(findings, nameof(SilenceIntervals), SilenceIntervals, 2, 100, "intervals");
+        Check(findings, nameof(SilenceMinimum), SilenceMinimum.TotalSeconds, 0.1, 600, "s");
+        Check(findings, nameof(StartGrace), StartGrace.TotalSeconds, 0, 600, "s");
+        Check(findings, nameof(OldestReading), OldestReading.TotalSeconds, 5, 600, "s");
+        Check(findings, nameof(JournalPatience), JournalPatience.TotalSeconds, 0.001, 10, "s");
+        Check(findings, nameof(AssessmentPoll), AssessmentPoll.TotalSeconds, 0.05, 600, "s");
+        Check(findings, nameof(OldestAssessmentWindows), OldestAssessmentWindows, 1, 100, "windows");
+        Check(findings, nameof(WebhookTimeout), WebhookTimeout.TotalSeconds, 0.1, 120, "s");
+        Check(findings, nameof(RetryFirst), RetryFirst.TotalSeconds, 0.01, 600, "s");
+        Check(findings, nameof(RetryLongest), RetryLongest.TotalSeconds, RetryFirst.TotalSeconds, 3600, "s");
+        Check(findings, nameof(GiveUpAfter), GiveUpAfter.TotalSeconds, 60, 30 * 86_400d, "s");
+        Check(findings, nameof(ParallelAttempts), ParallelAttempts, 1, 64, "attempts");
+        return findings;
+    }
+
+    private static void Check(List<Finding> findings, string name, double value, double lowest, double highest, string unit)
+    {
+        if (!(value >= lowest && value <= highest))
+        {
+            findings.Add(new Finding(
+                "out-of-range", name, "The value is outside its range.", value.ToString(CultureInfo.InvariantCulture),
+                string.Create(CultureInfo.InvariantCulture, $"Use {lowest} to {highest} {unit}.")));
+        }
+    }
+}

@@ -1,0 +1,119 @@
+using LabWatch.Alerts.Desk;
+using LabWatch.Alerts.Journal;
+using LabWatch.Alerts.LifeCycle;
+using LabWatch.Alerts.Messages;
+using LabWatch.Lab;
+using LabWatch.Lab.Assessments;
+using LabWatch.Lab.Identity;
+using LabWatch.Lab.Time;
+using LabWatch.Records.Alerts;
+using LabWatch.Records.Assessments;
+using Microsoft.Extensions.Logging;
+
+namespace LabWatch.Alerts.Assessments;
+
+/// <summary>
+/// Follows the assessments by position and hands what they mean to the desk. Position and newest windows go into the journal together with the
+/// alerts, so that a crash repeats nothing; the position also goes into the ledger, for the day the journal is lost.
+/// </summary>
+internal sealed class AssessmentFollower(
+    IAssessmentLedger assessments, IAlertLedger ledger, ILabSnapshotSource lab, DeskQueue desk, AlertsOptions options, TimeProvider clock, ILogger<AssessmentFollower> logger)
+{
+    /// <summary>Name under which the ledger keeps the position.</summary>
+    public const string Reader = "alerts";
+
+    private const int BatchSize = 500;
+    private static readonly TimeSpan LongestWait = TimeSpan.FromSeconds(60);
+    private static readonly TimeSpan CallTime = TimeSpan.FromSeconds(30);
+
+    private readonly Dictionary<(SourceKey, string, string), DecidedWindow> _decided = [];
+    private long _position;
+    private bool _positioned;
+
+    /// <summary>Takes over what the journal holds.</summary>
+    public void Restore(JournalState state)
+    {
+        _position = state.FollowedSequence;
+        foreach (DecidedWindow window in state.Decided)
+        {
+            _decided[Key(window)] = window;
+        }
+    }
+
+    /// <summary>Follows until the token is cancelled.</summary>
+    public async Task RunAsync(CancellationToken stopping)
+    {
+        TimeSpan wait = options.AssessmentPoll;
+        while (true)
+        {
+            try
+            {
+                bool more = await StepAsync(stopping);
+                wait = more ? TimeSpan.Zero : options.AssessmentPoll;
+            }
+            catch (Exception exception) when (!stopping.IsCancellationRequested)
+            {
+                // Nothing is lost: the position has not moved. Hazards do not come this way.
+                wait = TimeSpan.FromSeconds(Math.Clamp(wait.TotalSeconds * 2, 1, LongestWait.TotalSeconds));
+                Log.FollowFailed(logger, wait, exception);
+            }
+
+            await Task.Delay(wait, clock, stopping);
+        }
+    }
+
+    /// <summary>Looks at one batch; whether there may be more.</summary>
+    public async Task<bool> StepAsync(CancellationToken stopping)
+    {
+        using CancellationTokenSource timeout = new(CallTime, clock);
+        using CancellationTokenSource both = CancellationTokenSource.CreateLinkedTokenSource(timeout.Token, stopping);
+        if (!_positioned)
+        {
+            _position = Math.Max(_position, await ledger.PositionAsync(Reader, both.Token));
+            _positioned = true;
+        }
+
+        IReadOnlyList<(long Sequence, Assessment Assessment)> batch = await assessments.QueuedAsync(_position, BatchSize, both.Token);
+        if (batch.Count == 0)
+        {
+            return false;
+        }
+
+        _position = batch[^1].Sequence;
+        Hand(batch);
+        await DoneAsync(both.Token);
+        await ledger.SetPositionAsync(Reader, _position, both.Token);
+        return batch.Count == BatchSize;
+    }
+
+    private void Hand(IReadOnlyList<(long Sequence, Assessment Assessment)> batch)
+    {
+        Instant now = Instant.Now(clock);
+        LabSnapshot snapshot = lab.Current;
+        ToleranceTexts texts = new(new SiteTime(snapshot.Site));
+        List<AlertCondition> found = [];
+        List<DecidedWindow> changed = [];
+        foreach (Assessment assessment in AssessmentVerdict.Newest(batch.Select(item => item.Assessment), window => _decided.GetValueOrDefault(Key(window))))
+        {
+            DecidedWindow window = DecidedWindow.Of(assessment);
+            _decided[Key(window)] = window;
+            changed.Add(window);
+            if (AssessmentVerdict.Present(assessment, now, options.OldestAssessmentWindows) is { } present)
+            {
+                found.Add(texts.Describe(assessment, snapshot.FindSource(assessment.Source)?.Name ?? assessment.Source.Source, present, now));
+            }
+        }
+
+        desk.Post(new DeskWork.Follow(found, new FollowedPosition(_position, changed)));
+    }
+
+    // The position in the ledger must not run ahead of the journal.
+    private async Task DoneAsync(CancellationToken cancellationToken)
+    {
+        TaskCompletionSource answer = new(TaskCreationOptions.RunContinuationsAsynchronously);
+        desk.Post(new DeskWork.Barrier(answer));
+        await answer.Task.WaitAsync(cancellationToken);
+    }
+
+    private static (SourceKey, string, string) Key(DecidedWindow window) => (window.Source, window.Criterion, window.Scope);
+}

@@ -1,0 +1,41 @@
+using LabWatch.Lab.Findings;
+using LabWatch.Records.Alerts;
+
+namespace LabWatch.Alerts;
+
+/// <summary>
+/// The alerts that are open now, hazards included, from memory: it answers whether the records database does or not. Thread-safe.
+/// </summary>
+public interface IAlertBoard
+{
+    /// <summary>
+    /// Raised for each step of each alert, in order, from one thread. Handlers return at once and do not throw. To follow without a gap:
+    /// subscribe, then take <see cref="View"/>, then leave out changes whose number is not above the view's.
+    /// </summary>
+    event EventHandler<AlertBoardChange>? Changed;
+
+    /// <summary>What keeps hazards from being watched as somebody may expect, under the present lab file.</summary>
+    IReadOnlyList<Finding> Findings { get; }
+
+    /// <summary>Steps that wait to be recorded in the database; more than a few for long means that it does not answer.</summary>
+    int WaitingForLedger { get; }
+
+    /// <summary>Whether the last write of the local alert journal failed, so that steps are in memory only.</summary>
+    bool JournalFailing { get; }
+
+    /// <summary>The open alerts; a standing hot surface shows the latest value of its sensor.</summary>
+    AlertBoardView View();
+
+    /// <summary>
+    /// Acknowledges an alert; works without the records database, and is recorded there later. Acknowledging again changes nothing and gives
+    /// the alert as it is. Completes when the step is durable.
+    /// </summary>
+    /// <param name="id">Id of the alert.</param>
+    /// <param name="by">Who acknowledges, 1 to 100 characters.</param>
+    /// <param name="note">What that person has to say, at most 2000 characters; null for nothing.</param>
+    /// <param name="cancellationToken">Stops waiting; the acknowledgement may still happen.</param>
+    ValueTask<AcknowledgeResult> AcknowledgeAsync(Guid id, string by, string? note, CancellationToken cancellationToken);
+
+    /// <summary>The messages still to be sent, with attempts made and the last error.</summary>
+    IReadOnlyList<OutboxMessage> PendingMessages();
+}
