@@ -22,6 +22,9 @@ internal static partial class ReadingsLog
     [LoggerMessage(2006, LogLevel.Warning, "The store of readings reopened after a failure and found {Rows} commits that had become durable after all.")]
     public static partial void FoundDurable(ILogger log, int rows);
 
+    [LoggerMessage(2008, LogLevel.Warning, "The commit mark beside the readings could not be written; lost commits would be noticed later.")]
+    public static partial void MarkFailed(ILogger log, Exception error);
+
     [LoggerMessage(2007, LogLevel.Critical, "The readings could not be opened and were moved to {Target}; a new store takes what comes now.")]
     public static partial void WholeSetAside(ILogger log, string target, Exception error);
 }

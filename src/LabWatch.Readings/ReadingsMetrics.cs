@@ -15,6 +15,9 @@ public static class ReadingsMetrics
     private static readonly Histogram<double> _commit = _meter.CreateHistogram<double>("labwatch.readings.commit.duration", "s", "Time of a durable commit.");
     private static readonly Counter<long> _sealed = _meter.CreateCounter<long>("labwatch.readings.sealed_parts", "{part}", "Parts of source-hours sealed.");
     private static readonly UpDownCounter<long> _unsealed = _meter.CreateUpDownCounter<long>("labwatch.readings.unsealed", "{reading}", "Readings in memory that are not sealed yet.");
+    private static readonly UpDownCounter<long> _journal = _meter.CreateUpDownCounter<long>("labwatch.readings.journal.size", "By", "Bytes of the journal rows.");
+
+    internal static void OnJournal(long change) => _journal.Add(change);
 
     internal static void OnAppended(int accepted, int duplicates, int conflicts, TimeSpan duration)
     {

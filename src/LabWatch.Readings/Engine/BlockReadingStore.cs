@@ -117,10 +117,10 @@ internal sealed class BlockReadingStore : IAsyncDisposable
             return;
         }
 
+        await _sealer.DisposeAsync();
         await _writing.WaitAsync();
         _readers.Dispose();
         _session.Dispose();
-        _sealer.Dispose();
         _writing.Dispose();
     }
 

@@ -5,6 +5,8 @@ namespace LabWatch.Readings.Engine;
 /// <summary>Connections that read, kept for the next reader.</summary>
 internal sealed class ReaderPool(StoreDialect dialect) : IDisposable
 {
+    private const int IdleKept = 4;
+
     private readonly ConcurrentBag<StoreConnection> _idle = [];
     private volatile bool _closed;
 
@@ -16,8 +18,12 @@ internal sealed class ReaderPool(StoreDialect dialect) : IDisposable
         try
         {
             T result = read(connection);
-            _idle.Add(connection);
-            connection = null!;
+            if (_idle.Count < IdleKept)
+            {
+                _idle.Add(connection);
+                connection = null!;
+            }
+
             return result;
         }
         finally

@@ -57,7 +57,8 @@ internal sealed class Recovery(StoreDialect dialect, StoreWriter writer, HeadSta
             while (sources.Read())
             {
                 SourceKey key = new(sources.GetString(1), sources.GetString(2));
-                _ = head.Find(key) ?? head.AddSource(key);
+                HeadSource source = head.Find(key) ?? head.AddSource(key);
+                Require(source.Id == sources.GetInt64(0));
             }
         }
 
@@ -66,12 +67,21 @@ internal sealed class Recovery(StoreDialect dialect, StoreWriter writer, HeadSta
         {
             HeadSource source = head.Find(channels.GetInt64(0)) ?? throw new DamagedDataException("A channel belongs to no source.");
             string name = channels.GetString(2);
-            HeadChannel channel = source.Find(name) ?? head.AddChannel(source, channels.GetInt32(1), name);
+            HeadChannel channel = source.Find(name) ?? head.AddChannel(source, source.Channels.Count, name);
+            Require(channel.Number == channels.GetInt64(1));
             if (!channels.IsDBNull(3))
             {
                 channel.OfferNewest(
                     channels.GetInt64(3), BitConverter.Int64BitsToDouble(channels.GetInt64(4)), (ReadingQuality)(byte)channels.GetInt32(5));
             }
+        }
+    }
+
+    private static void Require(bool consistent)
+    {
+        if (!consistent)
+        {
+            throw new DamagedDataException("The catalogue of sources and channels has gaps; restore it from a backup.");
         }
     }
 

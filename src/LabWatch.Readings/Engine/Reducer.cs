@@ -66,7 +66,7 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
             {
                 long hour = reader.GetInt64(1);
                 if (reader.GetInt32(2) > 0 || unready.Contains(hour) || reader.IsDBNull(3) || incidents.IsBlockSetAside(reader.GetInt64(0))
-                    || !TryDecode(reader.GetInt64(0), reader.GetFieldValue<byte[]>(3), hour, out SealedSummary? summary)
+                    || !TryDecode(reader.GetInt64(0), reader.GetFieldValue<byte[]>(3), hour, channel.Channel, out SealedSummary? summary)
                     || step % summary!.StepMicroseconds != 0)
                 {
                     ready.Remove(hour);
@@ -74,7 +74,7 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
                     continue;
                 }
 
-                ready[hour] = summary.Channels.FirstOrDefault(one => string.Equals(one.Channel, channel.Channel, StringComparison.Ordinal));
+                ready[hour] = summary.Channels.Count > 0 ? summary.Channels[0] : null;
             }
 
             return 0;
@@ -82,12 +82,12 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
         return ready;
     }
 
-    private bool TryDecode(long id, byte[] bytes, long hour, out SealedSummary? summary)
+    private bool TryDecode(long id, byte[] bytes, long hour, string channel, out SealedSummary? summary)
     {
         summary = null;
         try
         {
-            summary = SummaryCodec.Decode(bytes, hour);
+            summary = SummaryCodec.Decode(bytes, hour, channel);
         }
         catch (DamagedDataException damage)
         {

@@ -11,7 +11,7 @@ namespace LabWatch.Readings.Engine;
 /// </summary>
 internal sealed class Sealer(
     StoreSession session, SemaphoreSlim writing, HeadState head, StoreIncidents incidents, ReadingsOptions options, TimeProvider clock, ILogger log)
-    : IDisposable
+    : IAsyncDisposable
 {
     private const int BatchBytes = 1 << 20;
 
@@ -55,7 +55,11 @@ internal sealed class Sealer(
         }
     }
 
-    public void Dispose() => _passing.Dispose();
+    public async ValueTask DisposeAsync()
+    {
+        await _passing.WaitAsync();
+        _passing.Dispose();
+    }
 
     private async Task<T> WriteAsync<T>(Func<StoreWriter, T> action, CancellationToken cancellationToken)
     {

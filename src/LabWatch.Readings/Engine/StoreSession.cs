@@ -1,4 +1,5 @@
 using System.Data.Common;
+using LabWatch.Readings.Blocks;
 using LabWatch.Readings.Head;
 using LabWatch.Readings.Journal;
 using Microsoft.Extensions.Logging;
@@ -30,7 +31,7 @@ internal sealed class StoreSession(
         {
             return action(_writer ??= Open());
         }
-        catch (Exception error) when (error is DbException or IOException or UnauthorizedAccessException)
+        catch (Exception error) when (error is DbException or IOException or UnauthorizedAccessException or DamagedDataException)
         {
             Close();
             if (error is StoreUnavailableException)
@@ -46,12 +47,20 @@ internal sealed class StoreSession(
     /// <summary>Notes that a commit is durable.</summary>
     public void OnCommitted(long change, int bytes)
     {
-        JournalBytes += bytes;
-        _mark?.Write(change);
+        SetJournalBytes(JournalBytes + bytes);
+        try
+        {
+            _mark?.Write(change);
+        }
+        catch (IOException error)
+        {
+            // The commit itself is durable; an old mark only notices less.
+            ReadingsLog.MarkFailed(log, error);
+        }
     }
 
     /// <summary>Measures the journal again after rows were dropped.</summary>
-    public void MeasureJournal(StoreWriter writer) => JournalBytes = writer.Connection.Number(null, StoreDialect.JournalBytes);
+    public void MeasureJournal(StoreWriter writer) => SetJournalBytes(writer.Connection.Number(null, StoreDialect.JournalBytes));
 
     public void Dispose()
     {
@@ -66,15 +75,34 @@ internal sealed class StoreSession(
         _writer = null;
     }
 
+    private void SetJournalBytes(long bytes)
+    {
+        ReadingsMetrics.OnJournal(bytes - JournalBytes);
+        JournalBytes = bytes;
+    }
+
     private StoreWriter Open()
     {
         _mark ??= TakeMark();
-        StoreWriter writer = OpenWriter();
+        try
+        {
+            return OpenAndRecover(_mark);
+        }
+        catch (Exception error) when (!IsReady && (error is DamagedDataException || (error is DbException database && dialect.SaysDamaged(database))))
+        {
+            SetWholeAside(error);
+            return OpenAndRecover(_mark);
+        }
+    }
+
+    private StoreWriter OpenAndRecover(CommitMark mark)
+    {
+        StoreWriter writer = new(dialect, new StoreConnection(dialect.OpenWriter()), incidents);
         try
         {
             long started = clock.GetTimestamp();
             Recovery recovery = new(dialect, writer, head, incidents, clock);
-            recovery.Run(head.Change, _mark.Last);
+            recovery.Run(head.Change, mark.Last);
             Report(recovery, clock.GetElapsedTime(started));
             lock (head.Sync)
             {
@@ -93,6 +121,15 @@ internal sealed class StoreSession(
             writer.Dispose();
             throw;
         }
+    }
+
+    private void SetWholeAside(Exception error)
+    {
+        string stamp = clock.GetUtcNow().ToString("yyyyMMdd'T'HHmmss'Z'", System.Globalization.CultureInfo.InvariantCulture);
+        string target = dialect.SetWholeAside(stamp);
+        head.Clear();
+        ReadingsLog.WholeSetAside(log, target, error);
+        incidents.Report(StoreIncidents.FileKind, clock.GetUtcNow().ToUnixTimeSeconds(), $"The store could not be opened ({error.Message}) and was moved to {target}.");
     }
 
     private void Report(Recovery recovery, TimeSpan elapsed)
@@ -119,22 +156,6 @@ internal sealed class StoreSession(
             throw new StoreUnavailableException(
                 $"The readings are in use by another process, or {markPath} cannot be written: {error.Message} Stop the other process or choose another data directory.",
                 error);
-        }
-    }
-
-    private StoreWriter OpenWriter()
-    {
-        try
-        {
-            return new StoreWriter(dialect, new StoreConnection(dialect.OpenWriter()), incidents);
-        }
-        catch (DbException error) when (dialect.SaysDamaged(error) && !IsReady)
-        {
-            string stamp = clock.GetUtcNow().ToString("yyyyMMdd'T'HHmmss'Z'", System.Globalization.CultureInfo.InvariantCulture);
-            string target = dialect.SetWholeAside(stamp);
-            ReadingsLog.WholeSetAside(log, target, error);
-            incidents.Report(StoreIncidents.FileKind, clock.GetUtcNow().ToUnixTimeSeconds(), $"The store could not be opened ({error.Message}) and was moved to {target}.");
-            return new StoreWriter(dialect, new StoreConnection(dialect.OpenWriter()), incidents);
         }
     }
 }

@@ -26,6 +26,19 @@ internal sealed class HeadState
     /// <summary>The source with an id; ids count from 1.</summary>
     public HeadSource? Find(long id) => id >= 1 && id <= _byId.Count ? _byId[(int)id - 1] : null;
 
+    /// <summary>Forgets everything.</summary>
+    public void Clear()
+    {
+        lock (Sync)
+        {
+            _sources.Clear();
+            _byId.Clear();
+            _idle.Clear();
+            Change = 0;
+            Unsealed = 0;
+        }
+    }
+
     public HeadSource AddSource(SourceKey key)
     {
         lock (Sync)

@@ -27,9 +27,14 @@ internal static class SummaryCodec
         int step = readings >= minutes * ReadingsAMinute ? 1 : MinutesAnHour;
         ByteWriter raw = new();
         raw.WriteVarint(series.Count);
+        ByteWriter columns = new();
         foreach (ReadingSeries one in series)
         {
-            SummaryColumns.Write(raw, one, hour, step * Minute);
+            columns.Clear();
+            SummaryColumns.Write(columns, one, hour, step * Minute);
+            raw.WriteText(one.Channel);
+            raw.WriteVarint(columns.Length);
+            raw.WriteBytes(columns.Written);
         }
 
         ByteWriter summary = new(raw.Length + 64);
@@ -46,7 +51,10 @@ internal static class SummaryCodec
     }
 
     /// <summary>Reads a summary. Throws <see cref="DamagedDataException"/> where it does not have its form.</summary>
-    public static SealedSummary Decode(ReadOnlySpan<byte> bytes, long hour)
+    /// <param name="bytes">The bytes.</param>
+    /// <param name="hour">Start of the hour.</param>
+    /// <param name="only">The one channel to unfold; null for all.</param>
+    public static SealedSummary Decode(ReadOnlySpan<byte> bytes, long hour, string? only = null)
     {
         ByteReader reader = new(bytes);
         if (reader.ReadUInt32() != Crc32.HashToUInt32(bytes[reader.Position..]) || reader.ReadByte() != Version)
@@ -62,10 +70,15 @@ internal static class SummaryCodec
         }
 
         ByteReader rows = new(raw);
-        ChannelSummary[] channels = new ChannelSummary[rows.ReadCount(Math.Min(BlockFormat.MaximumChannels, rows.Remaining))];
-        for (int i = 0; i < channels.Length; i++)
+        List<ChannelSummary> channels = [];
+        for (int left = rows.ReadCount(BlockFormat.MaximumChannels); left > 0; left--)
         {
-            channels[i] = SummaryColumns.Read(ref rows, hour, step * Minute);
+            string channel = rows.ReadText();
+            ByteReader columns = new(rows.Take(rows.ReadCount(rows.Remaining)));
+            if (only is null || string.Equals(only, channel, StringComparison.Ordinal))
+            {
+                channels.Add(SummaryColumns.Read(ref columns, channel, hour, step * Minute));
+            }
         }
 
         return new SealedSummary(step * Minute, channels);

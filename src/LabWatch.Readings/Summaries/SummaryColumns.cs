@@ -20,7 +20,6 @@ internal static class SummaryColumns
     public static void Write(ByteWriter writer, ReadingSeries series, long hour, long step)
     {
         List<ReadingSummary> rows = SummaryFold.Fold(series.TimeMicroseconds.Span, series.Values.Span, step);
-        writer.WriteText(series.Channel);
         writer.WriteVarint(rows.Count);
         foreach (ReadingSummary row in rows)
         {
@@ -47,9 +46,8 @@ internal static class SummaryColumns
         }
     }
 
-    public static ChannelSummary Read(ref ByteReader reader, long hour, long step)
+    public static ChannelSummary Read(ref ByteReader reader, string channel, long hour, long step)
     {
-        string channel = reader.ReadText();
         int count = reader.ReadCount(MaximumRows);
         ReadOnlySpan<byte> starts = reader.Take(count);
         double[][] columns = new double[7][];

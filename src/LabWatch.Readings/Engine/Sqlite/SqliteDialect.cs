@@ -35,7 +35,8 @@ internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWri
         SqliteConnection connection = Open(SqliteOpenMode.ReadWriteCreate);
         try
         {
-            Execute(connection, "PRAGMA page_size = 4096");
+            // Measured: 4096 costs a quarter more on the small blocks of slow sources, 1024 and 8192 are larger for every source.
+            Execute(connection, "PRAGMA page_size = 2048");
             Execute(connection, "PRAGMA auto_vacuum = INCREMENTAL");
             Execute(connection, "PRAGMA journal_mode = WAL");
             Execute(connection, "PRAGMA synchronous = FULL");
