@@ -49,8 +49,8 @@ internal sealed class SourcePlanner(
             return false;
         }
 
-        // After a step back of the clock windows come due that the watermark has passed: they are looked up again, found, and left alone.
-        cursor = cursor > last ? last : cursor;
+        // After a step back of the clock windows come due that the watermark has passed. They are looked up again, and left alone where they stand.
+        cursor = cursor > last ? last - Schedule.Every : cursor;
         foreach (TimeWindow[] chunk in Schedule.Ending(cursor, last).Take(ChunkLength * ChunksInOneRun).Chunk(ChunkLength))
         {
             await AssessAsync(chunk, now, cancellationToken);
