@@ -35,11 +35,12 @@ internal static class AlertViews
     public static AlertTransitionView Of(AlertTransition step) =>
         new(step.Sequence, step.At, step.Event, step.By, step.Note, Names.Of(step.Alert.State));
 
-    /// <summary>Alerts as a page lists them: hazards first, then by priority, newest first.</summary>
+    /// <summary>Alerts as a page lists them: hazards first, then what nobody has acknowledged, then by priority, newest first.</summary>
     public static IReadOnlyList<AlertView> Sorted(LabSnapshot lab, IEnumerable<Alert> alerts) =>
     [
         .. alerts
             .OrderByDescending(alert => alert.IsHazard)
+            .ThenByDescending(alert => alert.AcknowledgedAt is null)
             .ThenByDescending(alert => alert.Priority)
             .ThenByDescending(alert => alert.RaisedAt)
             .ThenBy(alert => alert.Id)

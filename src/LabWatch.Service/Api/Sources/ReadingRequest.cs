@@ -21,6 +21,8 @@ internal sealed record ReadingRequest(Channel Channel, TimeWindow Window, TimeSp
     /// <summary>Most buckets that one answer may hold.</summary>
     public const int MaximumBuckets = 100_000;
 
+    private const int LongestBucketSeconds = 31 * 86_400;
+
     private static readonly TimeSpan ByDefault = TimeSpan.FromHours(1);
     private static readonly int[] LadderSeconds =
         [1, 2, 5, 10, 15, 30, 60, 120, 300, 600, 900, 1_800, 3_600, 7_200, 10_800, 21_600, 43_200, 86_400];
@@ -32,7 +34,9 @@ internal sealed record ReadingRequest(Channel Channel, TimeWindow Window, TimeSp
         Channel? channel = ChannelOf(query, source);
         TimeWindow? window = WindowOf(query, now);
         bool isCsv = IsCsvAsked(query, accept);
-        TimeSpan? bucket = channel is not null && window is { } known ? BucketOf(query, channel, known) : null;
+        string bucketText = query.Text("bucket") ?? "auto";
+        int? seconds = SecondsOf(query, bucketText);
+        TimeSpan? bucket = channel is not null && window is { } known ? BucketOf(query, bucketText, seconds, channel, known) : null;
         return channel is null || window is null || query.Findings.Count > 0 ? null : new ReadingRequest(channel, window.Value, bucket, isCsv);
     }
 
@@ -86,38 +90,33 @@ internal sealed record ReadingRequest(Channel Channel, TimeWindow Window, TimeSp
         return format == "csv" || (format is null && accept?.Contains("text/csv", StringComparison.OrdinalIgnoreCase) == true);
     }
 
-    private static TimeSpan? BucketOf(QueryReader query, Channel channel, TimeWindow window)
+    /// <summary>The length of a bucket as asked for: null for raw readings and for the automatic choice.</summary>
+    private static int? SecondsOf(QueryReader query, string text)
     {
-        string text = query.Text("bucket") ?? "auto";
-        if (text == "auto")
+        if (text is "auto" or "raw")
         {
-            return Automatic(window, channel.Interval);
-        }
-
-        if (text == "raw")
-        {
-            double rows = window.Duration / channel.Interval;
-            if (rows > MaximumRawRows)
-            {
-                query.Add("too-many-rows", "bucket", Rows(rows, MaximumRawRows), text, "Ask for a shorter window, or for buckets.");
-            }
-
             return null;
         }
 
-        if (!int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out int seconds) || seconds < 1 || seconds > 31 * 86_400)
+        if (int.TryParse(text, NumberStyles.None, CultureInfo.InvariantCulture, out int seconds) && seconds is >= 1 and <= LongestBucketSeconds)
         {
-            query.Add("not-a-bucket", "bucket", "This is no length of a bucket.", text, "Give auto, raw, or whole seconds from 1 to 2678400.");
-            return null;
+            return seconds;
         }
 
-        double buckets = window.Duration.TotalSeconds / seconds;
-        if (buckets > MaximumBuckets)
+        query.Add("not-a-bucket", "bucket", "This is no length of a bucket.", text, "Give auto, raw, or whole seconds from 1 to 2678400.");
+        return null;
+    }
+
+    private static TimeSpan? BucketOf(QueryReader query, string text, int? seconds, Channel channel, TimeWindow window)
+    {
+        double rows = window.Duration / (seconds is { } given ? TimeSpan.FromSeconds(given) : channel.Interval);
+        int most = seconds is null ? MaximumRawRows : MaximumBuckets;
+        if (text != "auto" && rows > most)
         {
-            query.Add("too-many-rows", "bucket", Rows(buckets, MaximumBuckets), text, "Ask for a shorter window, or for longer buckets.");
+            query.Add("too-many-rows", "bucket", Rows(rows, most), text, "Ask for a shorter window, or for longer buckets.");
         }
 
-        return TimeSpan.FromSeconds(seconds);
+        return text == "auto" ? Automatic(window, channel.Interval) : seconds is { } length ? TimeSpan.FromSeconds(length) : null;
     }
 
     private static string Rows(double rows, int maximum) =>

@@ -17,8 +17,8 @@ internal static class StreamEndpoints
             .WithName("Listen")
             .WithSummary("Changes as server-sent events: a snapshot, then every change")
             .WithDescription(
-                "The first event, on every connection (with Last-Event-ID too), is `snapshot`; then `source` (status of a source), `alert`, `assessment` and `progress`. "
-                + "Each replaces what was known of the same id. Comments are signs of life. A client that does not keep up is cut and starts again with a snapshot.")
+                "The first event, on every connection (with Last-Event-ID too), is `snapshot`; then `source` (status of a source), `alert`, `assessment`, `progress` and, where nothing else happens, `clock`. "
+                + "Each replaces what was known of the same id. A client that does not keep up is cut and starts again with a snapshot.")
             .Produces<SnapshotView>(StatusCodes.Status200OK, "text/event-stream")
             .ProducesProblem(StatusCodes.Status503ServiceUnavailable);
 
@@ -66,8 +66,9 @@ internal static class StreamEndpoints
             Task<bool> next = client.Waiting.WaitToReadAsync(cancellationToken).AsTask();
             while (!await HeardAsync(next, options))
             {
-                await body.WriteAsync(": still here\n\n"u8.ToArray(), cancellationToken);
-                await body.FlushAsync(cancellationToken);
+                // A comment for whatever sits between, and the service's clock for the page, which cannot see comments.
+                await body.WriteAsync(": still here\n"u8.ToArray(), cancellationToken);
+                await WriteAsync(body, new StreamMessage(hub.LastId, "clock", hub.Write(new ClockEvent(board.Site().Now))), cancellationToken);
             }
 
             if (!await next)

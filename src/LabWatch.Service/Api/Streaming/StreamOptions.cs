@@ -10,7 +10,7 @@ internal sealed record StreamOptions
     public TimeSpan LookEvery { get; init; } = TimeSpan.FromSeconds(1);
 
     /// <summary>Time between two signs of life where nothing changes.</summary>
-    public TimeSpan Heartbeat { get; init; } = TimeSpan.FromSeconds(10);
+    public TimeSpan Heartbeat { get; init; } = TimeSpan.FromSeconds(5);
 
     /// <summary>Sources whose status is sent at every look; with more, each is sent less often, so that the stream stays small.</summary>
     public int SourcesAtOnce { get; init; } = 20;

@@ -1,0 +1,182 @@
+import type { Assessment, ReadinessState, Source } from "../api/types";
+import { CavitySection } from "../cavity/CavitySection";
+import { celsius, decimalsFor, fixed, kelvin, significant } from "../format/numbers";
+import { clockTime, span } from "../format/time";
+import { unitText } from "../format/units";
+import { decisionWord, figureWord, kindWord, readinessMeaning, readinessWord, words } from "../format/words";
+import { assessments, now, site } from "../state";
+import { ageOf, isCurrent } from "./freshness";
+import { Icon, type IconName } from "./Icon";
+
+const icons: Record<ReadinessState, IconName> = {
+  ready: "ready",
+  heating: "waiting",
+  cooling: "waiting",
+  settling: "waiting",
+  off: "off",
+  "not-fit": "stop",
+  unknown: "unknown",
+};
+
+/** One source: may it be calibrated with now, at what temperature, and what stands against it. */
+export function SourcePanel({ source, onShow }: { source: Source; onShow: (source: Source) => void }) {
+  const { status } = source;
+  const fresh = isCurrent(source);
+  const state: ReadinessState = fresh ? status.readiness.state : "unknown";
+  const hazards = status.openAlerts.filter((alert) => alert.isHazard);
+  const others = status.openAlerts.length - hazards.length;
+  const heading = `source-${source.source}`;
+  return (
+    <article class="panel source" aria-labelledby={heading}>
+      <header>
+        <h3 id={heading}>{source.name}</h3>
+        <p class="quiet">
+          {kindWord[source.kind] ?? words(source.kind)}, {fixed(source.minimumCelsius, 0)} to {celsius(source.maximumCelsius, 0)}
+        </p>
+      </header>
+      <p class={`readiness ${state}`} title={readinessMeaning[state]}>
+        <Icon name={icons[state]} size={26} />
+        <strong>{readinessWord[state]}</strong>
+        {fresh && status.readiness.readyAt !== null && (
+          <span class="quiet">expected ready {clockTime(status.readiness.readyAt, zone(), now.value)}</span>
+        )}
+      </p>
+      {hazards.length > 0 && (
+        <p class="mark hazard">
+          <Icon name="hazard" />
+          <a href="#hazards">
+            {hazards.length} open hazard{hazards.length === 1 ? "" : "s"}
+          </a>
+        </p>
+      )}
+      {others > 0 && (
+        <p class="mark deviation">
+          <Icon name="deviation" />
+          <a href="#alerts">
+            {others} other open alert{others === 1 ? "" : "s"}
+          </a>
+        </p>
+      )}
+      <Measured source={source} fresh={fresh} />
+      <CavitySection source={source} isCurrent={fresh} />
+      <Reasons source={source} fresh={fresh} />
+      <Stability assessment={latestStability(source)} />
+      <footer>
+        <button type="button" onClick={() => onShow(source)}>
+          Show in chart<span class="hidden"> {source.name}</span>
+        </button>
+      </footer>
+    </article>
+  );
+}
+
+const zone = (): string => site.value?.timeZone ?? "UTC";
+
+const latestStability = (source: Source): Assessment | undefined =>
+  assessments.value.find((assessment) => assessment.source === source.id && assessment.criterion === "stability");
+
+function Measured({ source, fresh }: { source: Source; fresh: boolean }) {
+  const { temperature, setPointCelsius, newestReadingAt } = source.status;
+  const decimals = decimalsFor(temperature?.expandedUncertaintyKelvin ?? null);
+  const age = newestReadingAt === null ? null : ageOf(newestReadingAt);
+  if (temperature === null) {
+    return <p class="measured">{age === null ? "No reading yet." : `No temperature; newest reading ${span(age)} ago.`}</p>;
+  }
+  return (
+    <div class={fresh ? "measured" : "measured old"}>
+      <p class="value">
+        {!fresh && <span class="was">was </span>}
+        <span class="number">{fixed(temperature.celsius, decimals)}</span> °C
+        {fresh && temperature.expandedUncertaintyKelvin !== null && (
+          <span class="quiet" title="Expanded uncertainty that the thermometer's certificate states">
+            {" "}
+            U = {kelvin(temperature.expandedUncertaintyKelvin)}, k = {fixed(temperature.coverageFactor, 0)}
+          </span>
+        )}
+      </p>
+      <dl class="facts">
+        <div>
+          <dt>Set point</dt>
+          <dd>{setPointCelsius === null ? "not reported" : celsius(setPointCelsius)}</dd>
+        </div>
+        <div>
+          <dt>Off by</dt>
+          <dd>{setPointCelsius === null || !fresh ? "–" : kelvin(temperature.celsius - setPointCelsius)}</dd>
+        </div>
+        <div>
+          <dt>Newest</dt>
+          <dd class={fresh ? "" : "abnormal"}>{age === null ? "never" : `${span(age)} ago`}</dd>
+        </div>
+      </dl>
+      {!temperature.insideCertificateRange && (
+        <p class="mark deviation">
+          <Icon name="deviation" />
+          {temperature.certificate === null ? "No certificate in force: not traceable." : "Outside the certificate's range: not traceable."}
+        </p>
+      )}
+    </div>
+  );
+}
+
+function Reasons({ source, fresh }: { source: Source; fresh: boolean }) {
+  if (!fresh) {
+    return <p class="reasons">Nothing can be said about the present: {source.status.newestReadingAt === null ? "there is no reading yet." : "the readings are old."}</p>;
+  }
+  const { reasons, state } = source.status.readiness;
+  if (reasons.length === 0) {
+    return <p class="reasons quiet">{readinessMeaning[state]}</p>;
+  }
+  const list = (
+    <ul>
+      {reasons.map((reason) => (
+        <li key={reason.code + reason.text}>{reason.text}</li>
+      ))}
+    </ul>
+  );
+  return state === "ready" ? (
+    <details class="reasons">
+      <summary>Why ready</summary>
+      {list}
+    </details>
+  ) : (
+    <div class="reasons">{list}</div>
+  );
+}
+
+function Stability({ assessment }: { assessment: Assessment | undefined }) {
+  if (assessment === undefined) {
+    return <p class="stability quiet">Stability: not assessed yet.</p>;
+  }
+  const isOut = assessment.decision === "fail" || assessment.decision === "conditional-fail";
+  return (
+    <details class="stability">
+      <summary>
+        Stability: <span class={isOut ? "abnormal" : ""}>{isOut && <Icon name="deviation" size={15} />} {decisionWord[assessment.decision]}</span>
+        {assessment.value !== null && (
+          <>
+            , {significant(assessment.value)} {unitText(assessment.unit)}
+            {assessment.limit !== null && (
+              <span class="quiet">
+                {" "}
+                of {significant(assessment.limit)} {unitText(assessment.unit)}
+              </span>
+            )}
+          </>
+        )}
+      </summary>
+      <p>{assessment.explanation}</p>
+      <ul class="figures">
+        {assessment.figures.map((figure) => (
+          <li key={figure.name}>
+            {figureWord[figure.name] ?? words(figure.name)}: {significant(figure.value)} {unitText(figure.unit)}
+            {figure.standardUncertainty !== null && ` (u = ${significant(figure.standardUncertainty, 2)} ${unitText(figure.unit)})`}
+          </li>
+        ))}
+      </ul>
+      <p class="quiet">
+        {clockTime(assessment.windowStart, zone(), now.value)} to {clockTime(assessment.windowEnd, zone(), now.value)}
+        {assessment.revision > 1 && `, revision ${assessment.revision}: ${assessment.supersedeReason ?? ""}`}
+      </p>
+    </details>
+  );
+}

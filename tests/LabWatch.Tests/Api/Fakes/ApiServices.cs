@@ -1,0 +1,42 @@
+using LabWatch.Lab;
+using LabWatch.Readings;
+using LabWatch.Records.Alerts;
+using LabWatch.Records.Assessments;
+using LabWatch.Service.Api;
+using LabWatch.Service.Api.Ports;
+using Microsoft.Extensions.DependencyInjection;
+
+namespace LabWatch.Tests.Api.Fakes;
+
+/// <summary>The rooms behind the API, all in memory.</summary>
+internal sealed class ApiServices(TimeProvider clock)
+{
+    public SampleLab Lab { get; } = new();
+
+    public FakeReadingStore Store { get; } = new();
+
+    public FakeAlerts Alerts { get; } = new(clock);
+
+    public FakeAssessments Assessments { get; } = new();
+
+    public FakeReadiness Readiness { get; } = new();
+
+    public FakeDemo Demo { get; } = new(clock);
+
+    public void AddTo(IServiceCollection services, bool isDemo)
+    {
+        services.AddSingleton(clock);
+        services.AddSingleton<ILabSnapshotSource>(Lab);
+        services.AddSingleton<IReadingStore>(Store);
+        services.AddSingleton<IAlertPort>(Alerts);
+        services.AddSingleton<IAlertLedger>(Alerts);
+        services.AddSingleton<IAssessmentLedger>(Assessments);
+        services.AddSingleton<IReadinessPort>(Readiness);
+        if (isDemo)
+        {
+            services.AddSingleton<IDemoPort>(Demo);
+        }
+
+        services.AddLabWatchApi();
+    }
+}
