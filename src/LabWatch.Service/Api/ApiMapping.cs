@@ -3,10 +3,10 @@ using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Sources;
 using LabWatch.Service.Api.Streaming;
+using LabWatch.Simulator;
 
 namespace LabWatch.Service.Api;
 
@@ -26,7 +26,7 @@ internal static class ApiMapping
         AssessmentEndpoints.Map(api);
         AlertEndpoints.Map(api);
         StreamEndpoints.Map(api);
-        if (app.Services.GetService<IDemoPort>() is not null)
+        if (app.Services.GetService<ILabSimulation>() is not null)
         {
             FaultEndpoints.Map(api);
         }

@@ -45,6 +45,7 @@ internal static class ApiRegistration
         services.AddHostedService<ChangePump>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, ReadingStoreCheck>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, RecordsCheck>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, BrokerCheck>());
     }
 
     private static void AddHttp(IServiceCollection services)

@@ -1,7 +1,9 @@
+using LabWatch.Lab;
 using LabWatch.Lab.Findings;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
+using LabWatch.Simulator;
+using LabWatch.Simulator.Faults;
 using Microsoft.AspNetCore.Http.HttpResults;
 
 namespace LabWatch.Service.Api.Demo;
@@ -26,12 +28,18 @@ internal static class FaultEndpoints
             .ProducesProblem(StatusCodes.Status400BadRequest);
     }
 
-    private static Ok<FaultListView> List(IDemoPort demo) => TypedResults.Ok(demo.Faults());
+    private static Ok<FaultListView> List(ILabSimulation simulation, ILabSnapshotSource lab) =>
+        TypedResults.Ok(FaultViews.Of(simulation, lab.Current.Site.Id));
 
-    private static Results<Ok<FaultListView>, ProblemHttpResult> Inject(FaultRequest request, IDemoPort demo) => Answer(demo.Inject(request), demo);
+    private static Results<Ok<FaultListView>, ProblemHttpResult> Inject(FaultRequest request, ILabSimulation simulation, ILabSnapshotSource lab)
+    {
+        (FaultOrder? order, IReadOnlyList<Finding> findings) = FaultOrders.Read(request);
+        return Answer(order is null ? findings : simulation.Inject(order), simulation, lab);
+    }
 
-    private static Results<Ok<FaultListView>, ProblemHttpResult> Clear(string id, IDemoPort demo) => Answer(demo.Clear(id), demo);
+    private static Results<Ok<FaultListView>, ProblemHttpResult> Clear(string id, ILabSimulation simulation, ILabSnapshotSource lab) =>
+        Answer(simulation.Clear(id), simulation, lab);
 
-    private static Results<Ok<FaultListView>, ProblemHttpResult> Answer(IReadOnlyList<Finding> findings, IDemoPort demo) =>
-        findings.Count == 0 ? TypedResults.Ok(demo.Faults()) : Refusals.BadRequest(findings);
+    private static Results<Ok<FaultListView>, ProblemHttpResult> Answer(IReadOnlyList<Finding> findings, ILabSimulation simulation, ILabSnapshotSource lab) =>
+        findings.Count == 0 ? TypedResults.Ok(FaultViews.Of(simulation, lab.Current.Site.Id)) : Refusals.BadRequest(findings);
 }

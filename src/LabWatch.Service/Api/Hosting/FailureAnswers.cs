@@ -1,4 +1,5 @@
 using LabWatch.Readings;
+using LabWatch.Records;
 using LabWatch.Service.Api.Requests;
 using Microsoft.AspNetCore.Http.HttpResults;
 
@@ -28,12 +29,14 @@ internal static class FailureAnswers
         {
             ILogger log = context.RequestServices.GetRequiredService<ILoggerFactory>().CreateLogger("LabWatch.Service.Api");
             ApiLog.RequestFailed(log, failure, context.Request.Method, context.Request.Path);
-            context.Response.Headers.RetryAfter = failure is StoreUnavailableException ? "5" : default;
+            context.Response.Headers.RetryAfter = IsPassing(failure) ? "5" : default;
             await Of(failure).ExecuteAsync(context);
         }
     });
 
-    private static ProblemHttpResult Of(Exception failure) => failure is StoreUnavailableException
+    private static bool IsPassing(Exception failure) => failure is StoreUnavailableException or RecordsUnavailableException;
+
+    private static ProblemHttpResult Of(Exception failure) => IsPassing(failure)
         ? Refusals.Unavailable("store-unavailable", "The store does not answer now.", "Try again; if it lasts, look at /health/ready and at the log of the service.")
         : Refusals.Failed();
 }

@@ -4,14 +4,16 @@ using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Records.Assessments;
+using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Views;
+using LabWatch.Simulator.Demo;
 
 namespace LabWatch.Service.Api.Live;
 
 /// <summary>Everything that a page shows of the site now, put together from the rooms that know it.</summary>
 internal sealed class SiteBoard(
-    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertPort alerts, IAssessmentLedger assessments, TimeProvider clock, IDemoPort? demo = null)
+    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertPort alerts, IAssessmentLedger assessments, TimeProvider clock, IDemoProgress? demo = null)
 {
     /// <summary>The caution that goes with every hazard.</summary>
     public const string Caution =
@@ -26,7 +28,7 @@ internal sealed class SiteBoard(
     public LabSnapshot Lab => lab.Current;
 
     /// <summary>How far the demo's history is; null outside the demo or when it is there.</summary>
-    public DemoProgressView? DemoProgress => demo?.Progress;
+    public DemoProgressView? Progress => demo is null ? null : DemoProgress.Of(demo.Current);
 
     /// <summary>The site, and the service's clock.</summary>
     public SiteView Site()
@@ -66,6 +68,6 @@ internal sealed class SiteBoard(
         await SourcesAsync(cancellationToken).ConfigureAwait(false),
         AlertViews.Sorted(lab.Current, alerts.Open()),
         await AssessmentsAsync(cancellationToken).ConfigureAwait(false),
-        demo?.Progress,
+        Progress,
         Caution);
 }

@@ -60,7 +60,7 @@ internal sealed class ChangePump(StreamHub hub, SiteBoard board, IAlertLedger le
                 await SendAssessmentsAsync(cancellationToken).ConfigureAwait(false);
             }
 
-            if (board.DemoProgress is { } progress)
+            if (board.Progress is { } progress)
             {
                 Send("progress", "progress", progress);
             }

@@ -1,9 +1,12 @@
+using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
 using LabWatch.Readings;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Service.Api;
 using LabWatch.Service.Api.Ports;
+using LabWatch.Simulator;
+using LabWatch.Simulator.Demo;
 using Microsoft.Extensions.DependencyInjection;
 
 namespace LabWatch.Tests.Api.Fakes;
@@ -23,6 +26,8 @@ internal sealed class ApiServices(TimeProvider clock)
 
     public FakeDemo Demo { get; } = new(clock);
 
+    public FakeIntake Intake { get; } = new();
+
     public void AddTo(IServiceCollection services, bool isDemo)
     {
         services.AddSingleton(clock);
@@ -32,9 +37,11 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
         services.AddSingleton<IReadinessPort>(Readiness);
+        services.AddSingleton<IIntakeState>(Intake);
         if (isDemo)
         {
-            services.AddSingleton<IDemoPort>(Demo);
+            services.AddSingleton<ILabSimulation>(Demo);
+            services.AddSingleton<IDemoProgress>(Demo);
         }
 
         services.AddLabWatchApi();

@@ -1,33 +1,25 @@
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
-using LabWatch.Service.Api.Demo;
-using LabWatch.Service.Api.Ports;
-using LabWatch.Service.Api.Views;
+using LabWatch.Simulator;
+using LabWatch.Simulator.Demo;
+using LabWatch.Simulator.Faults;
 
 namespace LabWatch.Tests.Api.Fakes;
 
 /// <summary>A demo that only remembers what was asked of it.</summary>
-internal sealed class FakeDemo(TimeProvider clock) : IDemoPort
+internal sealed class FakeDemo(TimeProvider clock) : ILabSimulation, IDemoProgress
 {
-    private readonly List<ActiveFaultView> _active = [];
+    private readonly List<ActiveFault> _active = [];
 
-    public DemoProgressView? Progress { get; set; }
+    public Instant Now => Instant.Now(clock);
 
-    public FaultListView Faults() => new(
-        [
-            new FaultKindView("insulation-damage", "A thermal bridge leads from the hot part to the outer case.", "W/K", 0, 20, 2, false),
-            new FaultKindView("thermometer-drift", "A thermometer's error grows.", "K", -50, 50, 0.1, true),
-        ],
-        [.. _active]);
+    public IReadOnlyList<ActiveFault> ActiveFaults => [.. _active];
 
-    public IReadOnlyList<Finding> Inject(FaultRequest request)
+    public HistoryProgress Current { get; set; } = new(1, null, null, Done: true);
+
+    public IReadOnlyList<Finding> Inject(FaultOrder order)
     {
-        if (request.Kind is null)
-        {
-            return [new Finding("missing", "/kind", "The kind is missing.", null, "Name a kind.")];
-        }
-
-        _active.Add(new ActiveFaultView("f-1", request.Kind, request.Source ?? string.Empty, request.Channel, request.Size, Instant.Now(clock), null, false));
+        _active.Add(new ActiveFault("f-1", order, Now, null, Scheduled: false));
         return [];
     }
 
