@@ -37,6 +37,7 @@ internal static class ApiRegistration
     {
         services.TryAddSingleton<LiveReadings>();
         services.AddSingleton<IReadingTap>(provider => provider.GetRequiredService<LiveReadings>());
+        services.TryAddSingleton<LatestAssessments>();
         services.TryAddSingleton<SourceStatusMaker>();
         services.TryAddSingleton<SiteBoard>();
         services.TryAddSingleton<StreamOptions>();
@@ -46,6 +47,7 @@ internal static class ApiRegistration
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, ReadingStoreCheck>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, RecordsCheck>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, BrokerCheck>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, PlannerCheck>());
     }
 
     private static void AddHttp(IServiceCollection services)

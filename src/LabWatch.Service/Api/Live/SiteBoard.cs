@@ -3,7 +3,6 @@ using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
-using LabWatch.Records.Assessments;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Views;
@@ -13,7 +12,7 @@ namespace LabWatch.Service.Api.Live;
 
 /// <summary>Everything that a page shows of the site now, put together from the rooms that know it.</summary>
 internal sealed class SiteBoard(
-    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertPort alerts, IAssessmentLedger assessments, TimeProvider clock, IDemoProgress? demo = null)
+    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertPort alerts, LatestAssessments assessments, TimeProvider clock, IDemoProgress? demo = null)
 {
     /// <summary>The caution that goes with every hazard.</summary>
     public const string Caution =
@@ -60,7 +59,7 @@ internal sealed class SiteBoard(
 
     /// <summary>The newest assessment of each source, criterion and scope.</summary>
     public async ValueTask<IReadOnlyList<AssessmentView>> AssessmentsAsync(CancellationToken cancellationToken) =>
-        [.. (await assessments.LatestAsync(cancellationToken).ConfigureAwait(false)).Select(AssessmentViews.Of)];
+        [.. (await assessments.ReadAsync(cancellationToken).ConfigureAwait(false)).Select(AssessmentViews.Of)];
 
     /// <summary>Everything at once.</summary>
     public async ValueTask<SnapshotView> SnapshotAsync(CancellationToken cancellationToken) => new(

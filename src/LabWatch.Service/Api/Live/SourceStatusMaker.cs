@@ -1,23 +1,25 @@
+using LabWatch.Assessments.Readiness;
 using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Views;
 
 namespace LabWatch.Service.Api.Live;
 
 /// <summary>Puts together what is known about a source now.</summary>
-internal sealed class SourceStatusMaker(LiveReadings live, IReadinessPort readiness, TimeProvider clock)
+internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments assessments, TimeProvider clock)
 {
     /// <summary>The status of a source with the given open alerts (those of other sources are left out).</summary>
     public async ValueTask<SourceStatusView> MakeAsync(
         LabSnapshot lab, ReferenceSource source, IReadOnlyList<Alert> openAlerts, CancellationToken cancellationToken)
     {
         IReadOnlyDictionary<string, Reading> newest = await live.NewestAsync(source.Key, cancellationToken).ConfigureAwait(false);
-        ReadinessView state = await readiness.OfAsync(source, cancellationToken).ConfigureAwait(false);
+        IReadOnlyList<Assessment> latest = await assessments.ReadAsync(cancellationToken).ConfigureAwait(false);
         Instant now = Instant.Now(clock);
+        SourceReadiness readiness = ReadinessEvaluator.Evaluate(new ReadinessInput(lab, source, [.. newest.Values], latest, openAlerts, now));
         List<NewestReadingView> shown = [];
         foreach (Channel channel in source.Channels)
         {
@@ -29,7 +31,7 @@ internal sealed class SourceStatusMaker(LiveReadings live, IReadinessPort readin
 
         return new SourceStatusView(
             source.Key.ToString(),
-            state,
+            new ReadinessView(Names.Of(readiness.State), [.. readiness.Reasons.Select(reason => new ReadinessReasonView(reason.Code, reason.Text, reason.Blocks))]),
             Reference(lab, source, newest),
             SetPoint(source, newest),
             shown.Count == 0 ? null : shown.Max(reading => reading.Time),

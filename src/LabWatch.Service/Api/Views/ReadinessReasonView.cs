@@ -5,4 +5,5 @@ namespace LabWatch.Service.Api.Views;
 /// <summary>One reason for a readiness.</summary>
 internal sealed record ReadinessReasonView(
     [property: Description("Stable machine name.")] string Code,
-    [property: Description("The reason in plain words with numbers and units.")] string Text);
+    [property: Description("The reason in plain words with numbers and units.")] string Text,
+    [property: Description("Whether it stands against ready; the others inform.")] bool Blocks);
