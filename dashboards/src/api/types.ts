@@ -4,8 +4,8 @@ export type ReadinessState = "off" | "heating" | "cooling" | "settling" | "ready
 export type AlertState = "raised-unacknowledged" | "raised-acknowledged" | "returned-unacknowledged" | "normal";
 export type DecisionWord = "pass" | "conditional-pass" | "conditional-fail" | "fail" | "not-decided";
 
-export interface Reason { code: string; text: string }
-export interface Readiness { state: ReadinessState; reasons: Reason[]; readyAt: string | null }
+export interface Reason { code: string; text: string; blocks: boolean }
+export interface Readiness { state: ReadinessState; reasons: Reason[] }
 
 export interface Temperature {
   celsius: number;

@@ -37,9 +37,6 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
       <p class={`readiness ${state}`} title={readinessMeaning[state]}>
         <Icon name={icons[state]} size={26} />
         <strong>{readinessWord[state]}</strong>
-        {fresh && status.readiness.readyAt !== null && (
-          <span class="quiet">expected ready {clockTime(status.readiness.readyAt, zone(), now.value)}</span>
-        )}
       </p>
       {hazards.length > 0 && (
         <p class="mark hazard">
@@ -129,7 +126,9 @@ function Reasons({ source, fresh }: { source: Source; fresh: boolean }) {
   const list = (
     <ul>
       {reasons.map((reason) => (
-        <li key={reason.code + reason.text}>{reason.text}</li>
+        <li key={reason.code + reason.text} class={reason.blocks ? "" : "quiet"}>
+          {reason.text}
+        </li>
       ))}
     </ul>
   );

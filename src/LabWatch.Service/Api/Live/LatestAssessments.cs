@@ -8,7 +8,7 @@ namespace LabWatch.Service.Api.Live;
 /// The newest assessments, read again at most every two seconds however many pages ask. While the records do not answer the last known
 /// ones stay: each carries its window, so that nobody takes them for the present.
 /// </summary>
-internal sealed class LatestAssessments(IAssessmentLedger ledger, TimeProvider clock)
+internal sealed class LatestAssessments(IAssessmentLedger ledger, TimeProvider clock) : IDisposable
 {
     private static readonly TimeSpan KeepFor = TimeSpan.FromSeconds(2);
     private readonly SemaphoreSlim _gate = new(1, 1);
@@ -38,4 +38,7 @@ internal sealed class LatestAssessments(IAssessmentLedger ledger, TimeProvider c
 
         return _known;
     }
+
+    /// <inheritdoc/>
+    public void Dispose() => _gate.Dispose();
 }

@@ -1,3 +1,4 @@
+using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
 using LabWatch.Readings;
@@ -22,7 +23,7 @@ internal sealed class ApiServices(TimeProvider clock)
 
     public FakeAssessments Assessments { get; } = new();
 
-    public FakeReadiness Readiness { get; } = new();
+    public FakePlanner Planner { get; } = new();
 
     public FakeDemo Demo { get; } = new(clock);
 
@@ -36,7 +37,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IAlertPort>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
-        services.AddSingleton<IReadinessPort>(Readiness);
+        services.AddSingleton<IPlannerState>(Planner);
         services.AddSingleton<IIntakeState>(Intake);
         if (isDemo)
         {
