@@ -1,0 +1,81 @@
+using System.CommandLine;
+using System.Text;
+using LabWatch.Intake.Options;
+using LabWatch.Lab.Findings;
+using LabWatch.Lab.Time;
+using LabWatch.Service.Hosting;
+using LabWatch.Simulator;
+using LabWatch.Simulator.Demo;
+
+namespace LabWatch.Service.Commands;
+
+/// <summary><c>labwatch demo</c>: the whole service on an invented laboratory whose telemetry is simulated.</summary>
+internal static class DemoCommand
+{
+    private static readonly Option<double> Port = CommonOptions.Bounded("--mqtt-port", "Port of the embedded broker, on this machine alone.", 1883, 1, 65535);
+    private static readonly Option<double> Speed = CommonOptions.Bounded("--speed", "Seconds of the laboratory in one second.", 1, 0.1, 1000);
+    private static readonly Option<double> Days = CommonOptions.Bounded("--days", "Days of history made at the first start.", DemoOptions.DefaultDays, 0, 400);
+    private static readonly Option<double> Seed = CommonOptions.Bounded("--seed", "Number that the hidden truth, the weather and the faults are drawn from.", DemoOptions.DefaultSeed, 0, 1e9);
+
+    public static Command Create()
+    {
+        Command command = new("demo", "Watch an invented laboratory of four sources with simulated telemetry.")
+        {
+            CommonOptions.Data, CommonOptions.Urls, CommonOptions.Config, Port, Speed, Days, Seed,
+        };
+        command.SetAction(RunAsync);
+        return command;
+    }
+
+    private static async Task<int> RunAsync(ParseResult parsed, CancellationToken cancellationToken)
+    {
+        TextWriter error = parsed.InvocationConfiguration.Error;
+        double speed = parsed.GetValue(Speed);
+        (ServiceStart? prepared, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
+            parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch-demo"),
+            parsed.GetValue(CommonOptions.Config)?.FullName,
+            parsed.GetValue(CommonOptions.Urls)!,
+            data => DemoClock.Resume(data.Path, speed, TimeProvider.System),
+            LoadLab);
+        if (prepared is null)
+        {
+            FindingPrinter.Write(error, findings);
+            return ExitCode.BadInput;
+        }
+
+        EmbeddedBrokerOptions broker = (prepared.Settings.Intake.EmbeddedBroker ?? new EmbeddedBrokerOptions()) with { Address = "127.0.0.1", Port = (int)parsed.GetValue(Port) };
+        ServiceStart start = prepared with { Settings = prepared.Settings with { Intake = prepared.Settings.Intake with { EmbeddedBroker = broker, ExternalBroker = null } } };
+        DemoOptions demo = new((int)parsed.GetValue(Days), (long)parsed.GetValue(Seed), broker.Address, broker.Port, start.Data.Path) { TopicRoot = start.Settings.Intake.Root };
+        using (start.Data)
+        {
+            return await ServiceRun.RunAsync(
+                LabWatchHost.Build(start, services =>
+                {
+                    services.AddLabWatchDemo(demo);
+                    services.AddHostedService<DemoClockKeeper>();
+                }),
+                urls => Greet(parsed.InvocationConfiguration.Output, urls, start, speed),
+                error,
+                cancellationToken);
+        }
+    }
+
+    // The first start writes the lab file for its day; later starts go on with the one in force.
+    private static (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings) LoadLab(DataDirectory data, TimeProvider clock)
+    {
+        string cache = LabSnapshotSource.CachePath(data.Path);
+        return File.Exists(cache)
+            ? LabSnapshotSource.Load(null, data.Path)
+            : LabSnapshotSource.Adopt(Encoding.UTF8.GetBytes(DemoLab.LabFileFor(Instant.Now(clock))), cache);
+    }
+
+    private static void Greet(TextWriter output, IEnumerable<string> urls, ServiceStart start, double speed)
+    {
+        output.WriteLine();
+        output.WriteLine($"  {start.Lab.Current.Site.Name}: an invented laboratory, its telemetry simulated{(speed == 1 ? string.Empty : FormattableString.Invariant($", {speed} times faster than the clock"))}.");
+        output.WriteLine($"  Open  {string.Join("  or  ", urls)}");
+        output.WriteLine($"  Data  {start.Data.Path}  (a later start goes on from there)");
+        output.WriteLine("  LabWatch is not a protective device. Ctrl-C ends it.");
+        output.WriteLine();
+    }
+}

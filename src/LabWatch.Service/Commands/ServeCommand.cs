@@ -1,0 +1,41 @@
+using System.CommandLine;
+using LabWatch.Lab.Findings;
+using LabWatch.Service.Hosting;
+
+namespace LabWatch.Service.Commands;
+
+/// <summary><c>labwatch serve</c>: watches a laboratory, in a console, under systemd or as a Windows service.</summary>
+internal static class ServeCommand
+{
+    public static Command Create()
+    {
+        Option<FileInfo> lab = new("--lab") { Description = "Lab file. Left out, the one in force since the last start goes on.", HelpName = "FILE" };
+        Command command = new("serve", "Watch a laboratory.") { lab, CommonOptions.Data, CommonOptions.Urls, CommonOptions.Config };
+        command.SetAction(async (parsed, cancellationToken) =>
+        {
+            TextWriter output = parsed.InvocationConfiguration.Output;
+            TextWriter error = parsed.InvocationConfiguration.Error;
+            (ServiceStart? start, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
+                parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch"),
+                parsed.GetValue(CommonOptions.Config)?.FullName,
+                parsed.GetValue(CommonOptions.Urls)!,
+                _ => TimeProvider.System,
+                (data, _) => LabSnapshotSource.Load(parsed.GetValue(lab)?.FullName, data.Path));
+            if (start is null)
+            {
+                FindingPrinter.Write(error, findings);
+                return ExitCode.BadInput;
+            }
+
+            using (start.Data)
+            {
+                return await ServiceRun.RunAsync(
+                    LabWatchHost.Build(start),
+                    urls => output.WriteLine($"LabWatch watches {start.Lab.Current.Site.Name} at {string.Join(" and ", urls)}. It is not a protective device. Ctrl-C ends it."),
+                    error,
+                    cancellationToken);
+            }
+        });
+        return command;
+    }
+}

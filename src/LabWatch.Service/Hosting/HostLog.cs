@@ -1,0 +1,14 @@
+namespace LabWatch.Service.Hosting;
+
+/// <summary>Log messages of the host.</summary>
+internal static partial class HostLog
+{
+    [LoggerMessage(7001, LogLevel.Information, "Lab file of site {Site} in force: import {Sequence}, digest {Digest}")]
+    public static partial void LabInForce(ILogger logger, string site, int sequence, string digest);
+
+    [LoggerMessage(7002, LogLevel.Warning, "The lab file in force is not on the record yet; trying again: {Reason}")]
+    public static partial void LabNotRecorded(ILogger logger, string reason);
+
+    [LoggerMessage(7003, LogLevel.Information, "Data in {Directory}")]
+    public static partial void DataIn(ILogger logger, string directory);
+}
