@@ -58,6 +58,10 @@ public sealed class LabFileReaderTests
     }
 
     [Fact]
+    public void The_example_that_is_delivered_is_good() =>
+        Assert.Empty(LabFileReader.Read(File.ReadAllBytes(RepositoryFiles.PathOf("deploy", "lab.example.json"))).Findings);
+
+    [Fact]
     public void The_published_schema_accepts_the_good_file() => Assert.True(Schema.Evaluate(Element(Good())).IsValid);
 
     [Theory]

@@ -1,0 +1,57 @@
+using LabWatch.Lab.Time;
+
+namespace LabWatch.SystemTests.Service;
+
+public sealed class KillTests
+{
+    private static readonly int Rounds = TestLength.Of(shortForm: 3, longForm: 100);
+
+    [Fact]
+    public async Task No_acknowledged_reading_is_lost_or_doubled_when_the_service_is_killed_under_load()
+    {
+        CancellationToken token = TestContext.Current.CancellationToken;
+        Random random = new(20_261_201);
+        long first = (Instant.Now(TimeProvider.System) - TimeSpan.FromHours(2)).StartOfHour().Microseconds;
+        await using ServiceFixture fixture = new();
+        await fixture.StartAsync(token);
+        await using PersistentDevice device = new(fixture.BrokerPort, "lab/sample/fir", "well-1", first);
+        device.Start();
+
+        for (int round = 0; round < Rounds; round++)
+        {
+            int before = device.Acknowledged.Count;
+            await Poll.UntilAsync("readings are acknowledged", () => Task.FromResult(device.Acknowledged.Count > before + 50), TimeSpan.FromSeconds(30), token, () => fixture.Service.Output);
+            await Task.Delay(TimeSpan.FromMilliseconds(random.Next(500)), TimeProvider.System, token);
+            await fixture.Service.KillAsync();
+            await fixture.StartAsync(token);
+        }
+
+        await device.FinishAsync(TimeSpan.FromSeconds(30));
+        await AssertStored(fixture, device, first, token);
+
+        // Once more from the disk alone: what memory held must not have helped.
+        await fixture.Service.KillAsync();
+        await fixture.StartAsync(token);
+        await AssertStored(fixture, device, first, token);
+        TestContext.Current.SendDiagnosticMessage($"{device.Acknowledged.Count} readings acknowledged over {Rounds} kills");
+    }
+
+    [Fact]
+    public async Task The_service_ends_cleanly_when_it_is_asked_to()
+    {
+        CancellationToken token = TestContext.Current.CancellationToken;
+        await using ServiceFixture fixture = new();
+        await fixture.StartAsync(token);
+
+        Assert.Equal(0, await fixture.Service.StopAsync(token));
+    }
+
+    private static async Task AssertStored(ServiceFixture fixture, PersistentDevice device, long first, CancellationToken token)
+    {
+        long last = device.Acknowledged.Keys.Max();
+        IReadOnlyList<(long Time, double Value)> stored = await fixture.ReadAsync("well-1", first, last + 1, token);
+        Assert.Equal(stored.Count, stored.Select(reading => reading.Time).Distinct().Count());
+        Dictionary<long, double> byTime = stored.ToDictionary(reading => reading.Time, reading => reading.Value);
+        Assert.Empty(device.Acknowledged.Where(sent => !byTime.TryGetValue(sent.Key, out double value) || value != sent.Value));
+    }
+}
