@@ -1,5 +1,6 @@
 using System.CommandLine;
 using System.Globalization;
+using LabWatch.Service.Calc;
 using LabWatch.Service.Commands;
 
 CultureInfo.DefaultThreadCurrentCulture = CultureInfo.InvariantCulture;
@@ -10,5 +11,6 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     DemoCommand.Create(),
     ServeCommand.Create(),
     CheckConfigCommand.Create(),
+    CalcCommand.Create(),
 };
 return await root.Parse(args).InvokeAsync();
