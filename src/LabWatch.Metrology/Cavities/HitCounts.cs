@@ -10,11 +10,12 @@ public sealed class HitCounts
     private readonly double[][] _hits;
     private readonly double[][] _escapes;
     private readonly bool[] _isSecond;
+    private readonly long _rays;
 
-    internal HitCounts(HitTally tally, CavityMethod method, double diffuseFraction, double relativeError)
+    internal HitCounts(HitTally tally, CavityMethod method, double diffuseFraction, double relativeError, long rays = 0)
     {
         (Grid, Method, DiffuseFraction, RelativeError) = (tally.Grid, method, diffuseFraction, relativeError);
-        (_orders, _hits, _escapes, Second) = (tally.Orders, tally.MeanHits(), tally.Escapes, tally.Second);
+        (_orders, _hits, _escapes, Second, _rays) = (tally.Orders, tally.MeanHits(), tally.Escapes, tally.Second, rays);
         _isSecond = [.. Grid.Zones.Select(zone => tally.IsSecond(zone.Surface))];
         Depth = _orders[^1].Total + 1;
     }
@@ -67,27 +68,33 @@ public sealed class HitCounts
         for (int i = 0; i < weights.Length; i++) weights[i] *= _isSecond[i] ? second : first;
         double[] complements = [.. _escapes.Select(escapes => Complement(escapes, factors, tail, 1 - first, 1 - second))];
         Statistics.Summary summary = Statistics.Summary.Of(complements);
-        double error = complements.Length > 1 ? summary.StandardDeviation / Math.Sqrt(complements.Length) : 0;
+        double error = complements.Length > 1 ? Math.Max(summary.StandardDeviation / Math.Sqrt(complements.Length), Resolution(complements, summary.Mean)) : 0;
         return new ZoneWeights(this, first, second, weights, summary.Mean, error);
     }
 
     /// <summary>
-    /// The reflectance of each order, (1 - e1)^a (1 - e2)^b, and what all later orders add to the last in units of it: they fall in the ratio of the last two,
-    /// the slowest mode of the cavity.
+    /// The reflectance of each order, (1 - e1)^a (1 - e2)^b, and what all later orders add to the last in units of it: they fall by what is absorbed and leaves at
+    /// the last, the slowest mode of the cavity, so that weights and 1 - e_eff keep adding to one.
     /// </summary>
     private (double[] Factors, double Tail) Factors(double firstRho, double secondRho)
     {
         double[] factors = new double[_orders.Length];
-        double before = 0, last = 0;
+        double last = 0, next = 0;
         for (int o = 0; o < factors.Length; o++)
         {
             HitOrder order = _orders[o];
             factors[o] = Power(firstRho, order.First) * Power(secondRho, order.Second);
-            if (order.Total == Depth - 1) last += factors[o] * _hits[o].Sum();
-            else if (order.Total == Depth - 2) before += factors[o] * _hits[o].Sum();
+            if (order.Total != Depth - 1) continue;
+            for (int i = 0; i < _isSecond.Length; i++)
+            {
+                last += factors[o] * _hits[o][i];
+                next += factors[o] * _hits[o][i] * (_isSecond[i] ? secondRho : firstRho);
+            }
+
+            foreach (double[] escapes in _escapes) next -= factors[o] * (firstRho * escapes[2 * o] + secondRho * escapes[2 * o + 1]) / _escapes.Length;
         }
 
-        double ratio = before > 0 ? last / before : 0;
+        double ratio = last > 0 ? next / last : 0;
         return (factors, ratio is > 0 and < 1 ? ratio / (1 - ratio) : 0);
     }
 
@@ -102,6 +109,17 @@ public sealed class HitCounts
         }
 
         return sum;
+    }
+
+    /// <summary>Where all randomisations agree to the last bits, their scatter says nothing: then the part of one ray is as much as is known.</summary>
+    private double Resolution(double[] complements, double mean)
+    {
+        foreach (double value in complements)
+        {
+            if (Math.Abs(value - mean) > 1e-14 * mean) return 0;
+        }
+
+        return mean / Math.Max(1, _rays);
     }
 
     private static double Power(double value, int exponent)

@@ -52,11 +52,12 @@ internal sealed class PanelMesh
         MeridianLine line = meridian.Lines[index];
         SortedSet<double> cuts = [0, line.Length];
         bool cone = index == 0 && line.EndZ > line.StartZ;
+        if (meridian.Obstacle > 0) options = options with { Longest = options.Longest / 2 }; // shadows bend the view factors within half a radius
         double shortest = options.Shortest * Math.Min(1, line.Length);
         if (meridian.ApertureRadius < 1) shortest = Math.Min(shortest, (1 - meridian.ApertureRadius) / 8);
         Grade(cuts, 0, line.Length, (line.Length, index > 0 || cone, index < meridian.Lines.Count - 1), shortest, options);
         foreach (double cut in grid.Limits(index)) AddCut(cuts, cut);
-        foreach (double cut in ShadowCuts(meridian, line)) AddCut(cuts, cut);
+        foreach (double cut in ShadowCuts(meridian, line, grid.Limits(index))) AddCut(cuts, cut);
         double from = double.NaN;
         foreach (double to in cuts)
         {
@@ -79,13 +80,17 @@ internal sealed class PanelMesh
         Grade(cuts, cut, to, line, shortest, options);
     }
 
-    /// <summary>The height from which the whole re-entrant cone is in sight, and steps towards it from below, where the view of the cone has the power 3/2.</summary>
-    private static IEnumerable<double> ShadowCuts(Meridian meridian, MeridianLine line)
+    /// <summary>
+    /// The height from which the whole re-entrant cone is in sight, steps towards it from below, where the view of the cone has the power 3/2, and the heights from
+    /// which a limit of a zone goes behind the cone.
+    /// </summary>
+    private static IEnumerable<double> ShadowCuts(Meridian meridian, MeridianLine line, IReadOnlyList<double> limits)
     {
         if (meridian.Obstacle <= 0 || line.Surface != CavitySurface.Wall) yield break;
         double top = 2 * meridian.Obstacle;
         yield return top;
         for (double d = 0.3; d > 0.002; d /= 3) yield return top * (1 - d);
+        foreach (double limit in limits) yield return top - limit;
     }
 
     private static void AddCut(SortedSet<double> cuts, double cut)

@@ -10,7 +10,7 @@ namespace LabWatch.Metrology.Cavities;
 /// </summary>
 public sealed class RingKernelSolver
 {
-    private const int DefaultDepth = 48;
+    internal const int DefaultDepth = 48;
 
     /// <summary>What polynomials on the panels leave, relative to 1 - e_eff: largest difference from four times finer panels over all forms (5e-10), rounded up.</summary>
     private const double PanelError = 1e-9;

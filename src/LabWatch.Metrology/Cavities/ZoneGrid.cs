@@ -8,10 +8,10 @@ public sealed class ZoneGrid
 {
     private readonly double[][] _limits;
     private readonly int[] _first;
+    private readonly CavitySurface[] _surfaces;
 
-    private ZoneGrid(Meridian meridian, double[][] limits, bool linear)
+    private ZoneGrid(double[][] limits, bool linear, Func<int, double, Zone> zoneAt)
     {
-        Meridian = meridian;
         Linear = linear;
         _limits = limits;
         _first = new int[limits.Length];
@@ -19,15 +19,11 @@ public sealed class ZoneGrid
         for (int line = 0; line < limits.Length; line++)
         {
             _first[line] = zones.Count;
-            MeridianLine m = meridian.Lines[line];
             int count = linear ? limits[line].Length : limits[line].Length - 1;
-            for (int i = 0; i < count; i++)
-            {
-                double t = linear ? limits[line][i] : (limits[line][i] + limits[line][i + 1]) / 2;
-                zones.Add(new Zone(m.Surface, m.R(t), m.Z(t)));
-            }
+            for (int i = 0; i < count; i++) zones.Add(zoneAt(line, linear ? limits[line][i] : (limits[line][i] + limits[line][i + 1]) / 2));
         }
 
+        _surfaces = [.. _first.Select(first => zones[first].Surface)];
         Zones = zones;
     }
 
@@ -37,35 +33,52 @@ public sealed class ZoneGrid
     /// <summary>Whether hits are shared between nodes; otherwise each cell is a zone.</summary>
     public bool Linear { get; }
 
-    internal Meridian Meridian { get; }
-
     internal IReadOnlyList<double> Limits(int line) => _limits[line];
+
+    internal bool IsSecond(int line, HitTally tally) => tally.IsSecond(_surfaces[line]);
 
     /// <summary>
     /// Nodes for a temperature that varies smoothly: closer to the bottom's rim and to the aperture, at most a quarter of the radius apart on the bottom and the plate
     /// and about an eighth of the length on the wall.
     /// </summary>
-    /// <param name="geometry">Geometry of straight lines (neither sphere nor plate).</param>
+    /// <param name="geometry">Any geometry. A sphere has nodes by height, a flat plate has one zone.</param>
     public static ZoneGrid Nodes(CavityGeometry geometry)
     {
         ArgumentNullException.ThrowIfNull(geometry);
-        Meridian meridian = new(geometry.Normalised());
-        double[][] limits = [.. meridian.Lines.Select(line => NodeLimits(line))];
-        return new ZoneGrid(meridian, limits, linear: true);
+        CavityGeometry unit = geometry.Normalised();
+        if (unit.Form is CavityForm.Sphere or CavityForm.FlatPlate) return Round(unit, linear: unit.Form == CavityForm.Sphere, 16);
+        var meridian = new Meridian(unit);
+        return Straight(meridian, [.. meridian.Lines.Select(NodeLimits)], linear: true);
     }
 
-    /// <summary>The bottom, equal cells of the wall, and the plate where there is one, each with one temperature.</summary>
-    /// <param name="geometry">Geometry of straight lines (neither sphere nor plate).</param>
-    /// <param name="wallCells">Number of cells of the cylindrical wall, positive.</param>
+    /// <summary>The bottom, equal cells of the wall, and the plate where there is one, each with one temperature; a sphere has cells of equal height.</summary>
+    /// <param name="geometry">Any geometry; a flat plate has one zone.</param>
+    /// <param name="wallCells">Number of cells of the cylindrical wall or the sphere, positive.</param>
     public static ZoneGrid Cells(CavityGeometry geometry, int wallCells)
     {
         ArgumentNullException.ThrowIfNull(geometry);
         ArgumentOutOfRangeException.ThrowIfNegativeOrZero(wallCells);
-        Meridian meridian = new(geometry.Normalised());
+        CavityGeometry unit = geometry.Normalised();
+        if (unit.Form is CavityForm.Sphere or CavityForm.FlatPlate) return Round(unit, linear: false, wallCells);
+        var meridian = new Meridian(unit);
         double[][] limits = [.. meridian.Lines.Select(line => line.Surface == CavitySurface.Wall
             ? [.. Enumerable.Range(0, wallCells + 1).Select(i => line.Length * i / wallCells)]
             : new[] { 0, line.Length })];
-        return new ZoneGrid(meridian, limits, linear: false);
+        return Straight(meridian, limits, linear: false);
+    }
+
+    private static ZoneGrid Straight(Meridian meridian, double[][] limits, bool linear) => new(limits, linear, (line, t) =>
+    {
+        MeridianLine m = meridian.Lines[line];
+        return new Zone(m.Surface, m.R(t), m.Z(t));
+    });
+
+    private static ZoneGrid Round(CavityGeometry unit, bool linear, int cells)
+    {
+        if (unit.Form == CavityForm.FlatPlate) return new ZoneGrid([[0, 1]], linear: false, (_, _) => new Zone(CavitySurface.Bottom, 0, 0));
+        double top = new SphereScene(unit.ApertureRadius).Top;
+        double[] limits = [.. Enumerable.Range(0, cells + 1).Select(i => top * i / cells)];
+        return new ZoneGrid([limits], linear, (_, z) => new Zone(CavitySurface.Bottom, Math.Sqrt(Math.Max(0, z * (2 - z))), z));
     }
 
     /// <summary>Adds a hit at a place to the counts of its zones.</summary>

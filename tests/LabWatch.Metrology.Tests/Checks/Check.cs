@@ -50,6 +50,26 @@ public sealed class Check
     public static Check Of(CheckRow row, Func<double> compute) =>
         OfNumber(row.Id, WhatOf(row), row.Source, row.Status, row.Expected, row.Tolerance, row.ToleranceKind == "rel", compute);
 
+    /// <summary>
+    /// A check of a number that is uncertain on both sides: the difference may be four times the combined standard uncertainty, which one in 15 000 normal
+    /// differences exceeds.
+    /// </summary>
+    public static Check OfEstimate(
+        string id, string what, string source, string status, string expected, double uncertainty, Func<(double Value, double StandardError)> compute) =>
+        new(id, what, source, status, () =>
+        {
+            double target = CheckRow.Parse(expected);
+            (double computed, double error) = compute();
+            double permitted = 4 * Math.Sqrt(uncertainty * uncertainty + error * error);
+            double difference = Math.Abs(computed - target);
+            return new(
+                difference <= permitted,
+                expected,
+                Rounded(computed, permitted),
+                string.Create(CultureInfo.InvariantCulture, $"{permitted:G3}"),
+                MarginOf(difference, permitted));
+        });
+
     /// <summary>A check of a row's text, letter by letter.</summary>
     public static Check OfText(CheckRow row, Func<string> compute) =>
         new(row.Id, WhatOf(row), row.Source, row.Status, () =>

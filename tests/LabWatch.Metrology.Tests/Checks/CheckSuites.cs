@@ -8,6 +8,11 @@ internal static class CheckSuites
         new Thermometry.Iec60751Suite(),
         new Radiometry.PlanckSuite(),
         new Uncertainty.ConformitySuite(),
+        new Cavities.SphereSuite(),
+        new Cavities.DiffuseCavitySuite(),
+        new Cavities.MirrorCavitySuite(),
+        new Cavities.ZoneWeightSuite(),
+        new Cavities.NonIsothermalSuite(),
     ];
 
     public static T Get<T>()
