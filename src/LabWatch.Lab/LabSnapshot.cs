@@ -53,6 +53,9 @@ public sealed class LabSnapshot
     /// <summary>All revisions of all certificates.</summary>
     public IReadOnlyList<Certificate> Certificates { get; }
 
+    /// <summary>All revisions of all triple-point checks of resistance thermometers.</summary>
+    public IReadOnlyList<TriplePointCheck> TriplePointChecks { get; init; } = [];
+
     /// <summary>All revisions of all acceptance limits.</summary>
     public IReadOnlyList<AcceptanceLimit> Limits { get; }
 
@@ -80,6 +83,16 @@ public sealed class LabSnapshot
                 .ThenByDescending(certificate => certificate.Revision)
                 .FirstOrDefault();
     }
+
+    /// <summary>
+    /// The R(TPW) in force for an instrument at an instant: of its checks up to then the latest, in its highest revision; null where there is none.
+    /// </summary>
+    public TriplePointCheck? TriplePointInForce(string instrument, Instant at) =>
+        TriplePointChecks
+            .Where(check => string.Equals(check.Instrument, instrument, StringComparison.Ordinal) && check.At <= at)
+            .OrderByDescending(check => check.At)
+            .ThenByDescending(check => check.Revision)
+            .FirstOrDefault();
 
     /// <summary>
     /// The acceptance limit in force for a source, criterion and set point at an instant, in its highest revision; null where there is none.

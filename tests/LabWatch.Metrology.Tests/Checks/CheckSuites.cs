@@ -5,7 +5,10 @@ internal static class CheckSuites
 {
     public static IReadOnlyList<CheckSuite> All { get; } =
     [
+        new Thermometry.Its90Suite(),
         new Thermometry.Iec60751Suite(),
+        new Thermometry.ThermocoupleSuite(),
+        new Thermometry.FixedPointSuite(),
         new Radiometry.PlanckSuite(),
         new Uncertainty.ConformitySuite(),
         new Cavities.SphereSuite(),

@@ -1,0 +1,5 @@
+using LabWatch.Metrology.Tests.Checks;
+
+namespace LabWatch.Metrology.Tests.Thermometry;
+
+public sealed class FixedPointCheckTests : CheckSuiteTests<FixedPointSuite>;
