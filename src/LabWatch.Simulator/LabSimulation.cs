@@ -119,12 +119,12 @@ public sealed class LabSimulation : ILabSimulation
 
     internal long Second => Volatile.Read(ref _second);
 
-    /// <summary>Runs up to a second from the state it was built in.</summary>
-    internal void Settle(long second)
+    /// <summary>Runs up to a second from the state it was built in, over <see cref="SpinUp"/> or another time.</summary>
+    internal void Settle(long second, TimeSpan? over = null)
     {
         lock (_gate)
         {
-            _second = second - (long)SpinUp.TotalSeconds;
+            _second = second - (long)(over ?? SpinUp).TotalSeconds;
             AdvanceLocked(second);
         }
     }
@@ -190,6 +190,8 @@ public sealed class LabSimulation : ILabSimulation
             {
                 source.Restore(state.Sources[source.Design.Id]);
             }
+
+            MoveSources(static (source, second, room, effects) => source.Observe(second, room, effects));
         }
     }
 
@@ -200,13 +202,13 @@ public sealed class LabSimulation : ILabSimulation
         while (_second < second)
         {
             Volatile.Write(ref _second, _second + 1);
-            _room.Set(_second);
-            ApplyFaults();
+            MoveSources(static (source, second, room, effects) => source.Step(second, room, effects));
         }
     }
 
-    private void ApplyFaults()
+    private void MoveSources(Action<SourceSimulation, long, RoomClimate, FaultEffects> move)
     {
+        _room.Set(_second);
         Instant now = Instant.FromUnixSeconds(_second);
         IReadOnlyList<ActiveFault> commanded = _book.Commanded;
         ActiveFault? first = null;
@@ -229,7 +231,7 @@ public sealed class LabSimulation : ILabSimulation
 
         foreach (SourceSimulation source in _sources)
         {
-            source.Step(_second, _room, first is null ? FaultEffects.None : EffectsOn(source.Design.Id, now, first, all));
+            move(source, _second, _room, first is null ? FaultEffects.None : EffectsOn(source.Design.Id, now, first, all));
         }
     }
 

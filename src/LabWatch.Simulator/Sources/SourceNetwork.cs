@@ -61,7 +61,7 @@ internal sealed class SourceNetwork
         builder.Conduct(Lip, _air, heat.LipToRoomConductance);
         _bridge = builder.Conduct(_fluid >= 0 ? _fluid : _heater >= 0 ? _heater : inner, Case, 0);
         _chiller = builder.Conduct(_fluid >= 0 ? _fluid : Case, _coolant, 0);
-        _purge = [.. Enumerable.Range(0, Rings).Select(ring => builder.Conduct(ring, _air, 0))];
+        _purge = heat.PurgeFlow > 0 ? [.. Enumerable.Range(0, Rings).Select(ring => builder.Conduct(ring, _air, 0))] : [];
         _openings = LinkRadiation(builder);
         Network = builder.Build();
     }

@@ -82,18 +82,24 @@ internal sealed class SourceSimulation
     /// <summary>Moves to the next second, which is given.</summary>
     public void Step(long second, RoomClimate room, FaultEffects effects)
     {
+        Observe(second, room, effects);
+        Control(second);
+        Purge(room.DewPointCelsius);
+        _network.SetPlant(_heaterWatt, ChillerRuns(), PurgeFlow, ApertureOpen, effects.InsulationBridge);
+        _network.Network.Advance(1);
+        Freeze();
+        _sensors.Step(second);
+    }
+
+    /// <summary>Takes in what follows from the moment alone: faults, room, set point, shutter. A restored state needs it before it can be read.</summary>
+    public void Observe(long second, RoomClimate room, FaultEffects effects)
+    {
         Effects = effects;
         AirCelsius = room.AirCelsius;
         RelativeHumidity = room.RelativeHumidity;
         SetPoint = Design.Routine.At(second);
         ApertureOpen = !Design.HasShutter || effects.ShutterOpen || SetPointRoutine.InUse(second);
-        Control(second);
-        Purge(room.DewPointCelsius);
         _network.SetRoom(AirCelsius, AirCelsius + Truth.BackgroundKelvin);
-        _network.SetPlant(_heaterWatt, ChillerRuns(), PurgeFlow, ApertureOpen, effects.InsulationBridge);
-        _network.Network.Advance(1);
-        Freeze();
-        _sensors.Step(second);
     }
 
     /// <summary>Reads all sensors at the second that <see cref="Step"/> moved to, in units of each readout's last decimal; null where silent.</summary>
@@ -110,6 +116,7 @@ internal sealed class SourceSimulation
         RampedSetPoint = double.IsNaN(_controller.RampedSetPoint) ? null : _controller.RampedSetPoint,
         Previous = double.IsNaN(_controller.Previous) ? null : _controller.Previous,
         HeaterWatt = _heaterWatt,
+        PurgeFlow = PurgeFlow,
         DewPoint = DewPoint,
         Frost = Frost,
         Tripped = Tripped,
@@ -130,6 +137,7 @@ internal sealed class SourceSimulation
         _controller.RampedSetPoint = state.RampedSetPoint ?? double.NaN;
         _controller.Previous = state.Previous ?? double.NaN;
         _heaterWatt = state.HeaterWatt;
+        PurgeFlow = state.PurgeFlow;
         DewPoint = state.DewPoint;
         Frost = state.Frost;
         Tripped = state.Tripped;
@@ -142,7 +150,10 @@ internal sealed class SourceSimulation
         double wanted = _controller.Update(measured, SetPoint);
         double full = Design.Tuning.MaximumWatt;
         double given = double.IsNaN(Effects.RelayDuty) ? wanted : Effects.RelayDuty * full;
-        Tripped = _control > Design.CutoutCelsius || (Tripped && _control > Design.CutoutCelsius - CutoutResetKelvin);
+
+        // Somebody resets the cut-out, but not before the relay is repaired and the source has cooled.
+        bool mayReset = double.IsNaN(Effects.RelayDuty) && _control <= Design.CutoutCelsius - CutoutResetKelvin;
+        Tripped = _control > Design.CutoutCelsius || (Tripped && !mayReset);
         double mains = 1 + (MainsRipple * CounterNoise.Slow(_seed, _stream + 1, second, 60));
         _heaterWatt = Tripped ? 0 : given * mains;
     }

@@ -27,6 +27,9 @@ internal sealed record SourceState
     /// <summary>Heater power of the last second, W.</summary>
     public required double HeaterWatt { get; init; }
 
+    /// <summary>Purge flow of the last second, l/min.</summary>
+    public required double PurgeFlow { get; init; }
+
     /// <summary>Dew point at the aperture, degree Celsius.</summary>
     public required double DewPoint { get; init; }
 

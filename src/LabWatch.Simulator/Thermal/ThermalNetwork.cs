@@ -27,24 +27,19 @@ internal sealed class ThermalNetwork
     private readonly double[] _flow;
     private readonly double[] _heat;
     private readonly double[] _received;
-    private readonly (int A, int B)[] _conductiveEnds;
-    private readonly (int A, int B)[] _radiativeEnds;
-    private readonly double[] _conductance;
-    private readonly double[] _exchange;
+    private readonly ThermalLink[] _conductive;
+    private readonly ThermalLink[] _radiative;
     private readonly double[] _capacity;
     private double _ratedCeiling = double.NegativeInfinity;
     private double _rate;
 
     /// <summary>Takes over the parts that a <see cref="ThermalNetworkBuilder"/> has collected; a boundary has an infinite capacity.</summary>
-    internal ThermalNetwork(
-        double[] capacity, double[] temperature, (int A, int B)[] conductiveEnds, double[] conductance, (int A, int B)[] radiativeEnds, double[] exchange)
+    internal ThermalNetwork(double[] capacity, double[] temperature, ThermalLink[] conductive, ThermalLink[] radiative)
     {
         _capacity = capacity;
         _temperature = temperature;
-        _conductiveEnds = conductiveEnds;
-        _conductance = conductance;
-        _radiativeEnds = radiativeEnds;
-        _exchange = exchange;
+        _conductive = conductive;
+        _radiative = radiative;
         _inverseCapacity = Array.ConvertAll(capacity, static value => 1 / value);
         _middle = new double[capacity.Length];
         _fourthPower = new double[capacity.Length];
@@ -84,10 +79,10 @@ internal sealed class ThermalNetwork
     public void SetTemperature(int index, double kelvin) => _temperature[index] = kelvin;
 
     /// <summary>Sets the conductance of a conductive link, W/K, zero or more.</summary>
-    public void SetConductance(int link, double wattPerKelvin) => Change(ref _conductance[link], wattPerKelvin);
+    public void SetConductance(int link, double wattPerKelvin) => Change(ref _conductive[link], wattPerKelvin);
 
     /// <summary>Sets the exchange area (area times exchange factor) of a radiative link, m^2, zero or more.</summary>
-    public void SetExchangeArea(int link, double squareMetre) => Change(ref _exchange[link], squareMetre * StefanBoltzmann);
+    public void SetExchangeArea(int link, double squareMetre) => Change(ref _radiative[link], squareMetre * StefanBoltzmann);
 
     /// <summary>Advances by a step of more than zero and at most <see cref="LongestStepSecond"/>.</summary>
     public void Advance(double seconds)
@@ -111,16 +106,16 @@ internal sealed class ThermalNetwork
         }
     }
 
-    private void Change(ref double place, double value)
+    private void Change(ref ThermalLink link, double value)
     {
         if (!(value >= 0))
         {
             throw new ArgumentOutOfRangeException(nameof(value), value, "A conductance is zero or more.");
         }
 
-        if (place != value)
+        if (link.Strength != value)
         {
-            place = value;
+            link = link with { Strength = value };
             _ratedCeiling = double.NegativeInfinity;
         }
     }
@@ -152,20 +147,17 @@ internal sealed class ThermalNetwork
             _flow[i] = _heat[i];
         }
 
-        for (int i = 0; i < _conductance.Length; i++)
-        {
-            (int a, int b) = _conductiveEnds[i];
-            double flow = _conductance[i] * (temperature[a] - temperature[b]);
-            _flow[a] -= flow;
-            _flow[b] += flow;
-        }
+        Carry(_conductive, temperature, _flow);
+        Carry(_radiative, _fourthPower, _flow);
+    }
 
-        for (int i = 0; i < _exchange.Length; i++)
+    private static void Carry(ThermalLink[] links, double[] potential, double[] flow)
+    {
+        foreach (ref readonly ThermalLink link in links.AsSpan())
         {
-            (int a, int b) = _radiativeEnds[i];
-            double flow = _exchange[i] * (_fourthPower[a] - _fourthPower[b]);
-            _flow[a] -= flow;
-            _flow[b] += flow;
+            double heat = link.Strength * (potential[link.A] - potential[link.B]);
+            flow[link.A] -= heat;
+            flow[link.B] += heat;
         }
     }
 
@@ -192,19 +184,8 @@ internal sealed class ThermalNetwork
     {
         Span<double> sums = stackalloc double[_capacity.Length];
         sums.Clear();
-        for (int i = 0; i < _conductance.Length; i++)
-        {
-            sums[_conductiveEnds[i].A] += _conductance[i];
-            sums[_conductiveEnds[i].B] += _conductance[i];
-        }
-
-        double slope = 4 * ceiling * ceiling * ceiling;
-        for (int i = 0; i < _exchange.Length; i++)
-        {
-            sums[_radiativeEnds[i].A] += _exchange[i] * slope;
-            sums[_radiativeEnds[i].B] += _exchange[i] * slope;
-        }
-
+        Sum(_conductive, 1, sums);
+        Sum(_radiative, 4 * ceiling * ceiling * ceiling, sums);
         double rate = 0;
         for (int i = 0; i < sums.Length; i++)
         {
@@ -212,5 +193,14 @@ internal sealed class ThermalNetwork
         }
 
         return rate;
+    }
+
+    private static void Sum(ThermalLink[] links, double slope, Span<double> sums)
+    {
+        foreach (ref readonly ThermalLink link in links.AsSpan())
+        {
+            sums[link.A] += link.Strength * slope;
+            sums[link.B] += link.Strength * slope;
+        }
     }
 }

@@ -5,10 +5,8 @@ internal sealed class ThermalNetworkBuilder
 {
     private readonly List<double> _capacity = [];
     private readonly List<double> _temperature = [];
-    private readonly List<(int A, int B)> _conductiveEnds = [];
-    private readonly List<double> _conductance = [];
-    private readonly List<(int A, int B)> _radiativeEnds = [];
-    private readonly List<double> _exchange = [];
+    private readonly List<ThermalLink> _conductive = [];
+    private readonly List<ThermalLink> _radiative = [];
 
     /// <summary>Adds a node with a heat capacity (J/K, positive) at a temperature (K).</summary>
     public int Node(double jouleThroughKelvin, double kelvin)
@@ -25,20 +23,17 @@ internal sealed class ThermalNetworkBuilder
     /// <summary>Adds a conductive (or convective) link, W/K, zero or more.</summary>
     public int Conduct(int a, int b, double wattPerKelvin)
     {
-        _conductiveEnds.Add((a, b));
-        _conductance.Add(wattPerKelvin);
-        return _conductance.Count - 1;
+        _conductive.Add(new ThermalLink(a, b, wattPerKelvin));
+        return _conductive.Count - 1;
     }
 
     /// <summary>Adds a radiative link by its exchange area (area times exchange factor), m^2, zero or more.</summary>
     public int Radiate(int a, int b, double squareMetre)
     {
-        _radiativeEnds.Add((a, b));
-        _exchange.Add(squareMetre * ThermalNetwork.StefanBoltzmann);
-        return _exchange.Count - 1;
+        _radiative.Add(new ThermalLink(a, b, squareMetre * ThermalNetwork.StefanBoltzmann));
+        return _radiative.Count - 1;
     }
 
     /// <summary>The finished network.</summary>
-    public ThermalNetwork Build() =>
-        new([.. _capacity], [.. _temperature], [.. _conductiveEnds], [.. _conductance], [.. _radiativeEnds], [.. _exchange]);
+    public ThermalNetwork Build() => new([.. _capacity], [.. _temperature], [.. _conductive], [.. _radiative]);
 }

@@ -89,8 +89,9 @@ public sealed class DemoLabFileTests
     [Fact]
     public void LabFile_HiddenTruth_StandsNowhere()
     {
-        HiddenTruth truth = new LabSimulation(1, FirstStart).Truth("rowan");
+        SourceDesign rowan = DemoLab.Designs.First(design => design.Id == "rowan");
+        HiddenTruth truth = HiddenTruth.Draw(1, rowan);
         Assert.All(truth.Emissivity.Values, value => Assert.DoesNotContain(value.ToString(System.Globalization.CultureInfo.InvariantCulture), DemoLab.LabFileText, StringComparison.Ordinal));
-        Assert.NotEqual(truth.Emissivity["8-14"], new LabSimulation(2, FirstStart).Truth("rowan").Emissivity["8-14"]);
+        Assert.NotEqual(truth.Emissivity["8-14"], HiddenTruth.Draw(2, rowan).Emissivity["8-14"]);
     }
 }
