@@ -1,7 +1,9 @@
 using System.Diagnostics.CodeAnalysis;
+using System.Net.Sockets;
 using LabWatch.Lab.Time;
 using Microsoft.Extensions.Hosting;
 using Microsoft.Extensions.Logging;
+using MQTTnet.Exceptions;
 
 namespace LabWatch.Simulator.Demo;
 
@@ -54,7 +56,14 @@ internal sealed class DemoPublisher(DemoOptions options, DemoEngine engine, Time
             catch (Exception error)
             {
                 pause = clock.GetElapsedTime(began) > LongestPause ? FirstPause : pause;
-                Log.SessionEnded(logger, clientId, pause, error);
+                if (error is MqttCommunicationException or MqttClientNotConnectedException or IOException or SocketException)
+                {
+                    Log.BrokerLost(logger, clientId, error.Message, pause);
+                }
+                else
+                {
+                    Log.SessionFailed(logger, clientId, pause, error);
+                }
             }
 
             await Task.Delay(pause * (0.75 + (0.5 * Random.Shared.NextDouble())), clock, stopping).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
