@@ -5,6 +5,7 @@ import { clockTime, span } from "../format/time";
 import { stateWord } from "../format/words";
 import { alerts, deviations, now, site } from "../state";
 import { ageOf } from "./freshness";
+import { Detail } from "./HazardBoard";
 import { Icon } from "./Icon";
 
 /** Alerts that are no hazards, and the alerts of before. */
@@ -40,6 +41,12 @@ function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (ale
           Acknowledged by {alert.acknowledgedBy}
           {alert.acknowledgeNote !== null && <>: “{alert.acknowledgeNote}”</>}
         </p>
+      )}
+      {onAcknowledge !== undefined && (
+        <details>
+          <summary>Details and what to do</summary>
+          <Detail text={alert.detail} />
+        </details>
       )}
       {onAcknowledge !== undefined && alert.acknowledgedAt === null && (
         <button type="button" onClick={() => onAcknowledge(alert)}>

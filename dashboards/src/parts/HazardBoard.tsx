@@ -31,6 +31,24 @@ export function HazardBoard({ onAcknowledge }: { onAcknowledge: (alert: Alert) =
   );
 }
 
+/** The service's words, one line a part; the caution stands once below all hazards. */
+export function Detail({ text }: { text: string }) {
+  const lines = text.split("\n").filter((line) => line !== "" && !line.startsWith("LabWatch is no protective device") && !line.startsWith("Where: ") && !line.startsWith("Since: "));
+  return (
+    <>
+      {lines.map((line) => {
+        const label = /^(Do|Do not): /.exec(line)?.[0];
+        return (
+          <p key={line}>
+            {label !== undefined && <strong>{label}</strong>}
+            {line.slice(label?.length ?? 0)}
+          </p>
+        );
+      })}
+    </>
+  );
+}
+
 function HazardItem({ alert, onAcknowledge }: { alert: Alert; onAcknowledge: (alert: Alert) => void }) {
   const zone = site.value?.timeZone ?? "UTC";
   const isOpen = alert.acknowledgedAt === null;
@@ -41,7 +59,7 @@ function HazardItem({ alert, onAcknowledge }: { alert: Alert; onAcknowledge: (al
         <strong>{stateWord[alert.state]}</strong> · since {clockTime(alert.raisedAt, zone, now.value)} ({span(ageOf(alert.raisedAt))})
         {alert.returnedAt !== null && <> · gone at {clockTime(alert.returnedAt, zone, now.value)}</>}
       </p>
-      <p>{alert.detail}</p>
+      <Detail text={alert.detail} />
       {isOpen ? (
         <button type="button" class="act" onClick={() => onAcknowledge(alert)}>
           Acknowledge<span class="hidden">: {alert.headline}</span>

@@ -48,6 +48,7 @@ internal static class ApiRegistration
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, RecordsCheck>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, BrokerCheck>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, PlannerCheck>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, AlertsCheck>());
     }
 
     private static void AddHttp(IServiceCollection services)

@@ -1,8 +1,8 @@
+using LabWatch.Alerts;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
 using LabWatch.Records.Alerts;
 using LabWatch.Service.Api.Live;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
 using Microsoft.AspNetCore.Http.HttpResults;
@@ -57,12 +57,23 @@ internal static class AlertEndpoints
     private static async Task<Results<Ok<AlertDetailView>, ProblemHttpResult>> FindAsync(
         string id, SiteBoard board, IAlertLedger ledger, CancellationToken cancellationToken)
     {
-        Alert? alert = await SeekAsync(id, ledger, cancellationToken);
-        return alert is null ? Missing(id) : TypedResults.Ok(await DetailAsync(board, ledger, alert, cancellationToken));
+        if (!Guid.TryParse(id, out Guid guid))
+        {
+            return Missing(id);
+        }
+
+        // An open alert is known before the ledger has it, and shows the latest value of its sensor.
+        Alert? alert = board.OpenAlerts().FirstOrDefault(open => open.Id == guid) ?? await ledger.FindAsync(guid, cancellationToken);
+        return alert is null
+            ? Missing(id)
+            : TypedResults.Ok(new AlertDetailView(
+                AlertViews.Of(board.Lab, alert),
+                [.. (await ledger.TransitionsAsync(guid, cancellationToken)).Select(AlertViews.Of)],
+                SiteBoard.Caution));
     }
 
     private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> AcknowledgeAsync(
-        string id, AcknowledgeRequest request, SiteBoard board, IAlertLedger ledger, IAlertPort desk, CancellationToken cancellationToken)
+        string id, AcknowledgeRequest request, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)
     {
         IReadOnlyList<Finding> findings = request.Check();
         if (findings.Count > 0)
@@ -77,29 +88,20 @@ internal static class AlertEndpoints
 
         string by = request.By!.Trim();
         string? note = string.IsNullOrWhiteSpace(request.Note) ? null : request.Note.Trim();
-        (Alert? alert, IReadOnlyList<Finding> refused) = await desk.AcknowledgeAsync(guid, by, note, cancellationToken);
-        if (refused.Count > 0)
+        AcknowledgeResult result = await desk.AcknowledgeAsync(guid, by, note, cancellationToken);
+        if (result.Findings.Count > 0)
         {
-            return Refusals.BadRequest(refused);
+            return Refusals.BadRequest(result.Findings);
         }
 
-        alert ??= await ledger.FindAsync(guid, cancellationToken);
-        return alert switch
+        return result.Alert switch
         {
             null => Missing(id),
             { AcknowledgedBy: { } first } when !string.Equals(first, by, StringComparison.Ordinal) => Refusals.Conflict(
                 "acknowledged-already", $"{first} has acknowledged this alert already.", id, "Nothing is left to do; the record keeps who was first."),
-            _ => TypedResults.Ok(AlertViews.Of(board.Lab, alert)),
+            { } alert => TypedResults.Ok(AlertViews.Of(board.Lab, alert)),
         };
     }
-
-    private static async ValueTask<Alert?> SeekAsync(string id, IAlertLedger ledger, CancellationToken cancellationToken) =>
-        Guid.TryParse(id, out Guid guid) ? await ledger.FindAsync(guid, cancellationToken) : null;
-
-    private static async ValueTask<AlertDetailView> DetailAsync(SiteBoard board, IAlertLedger ledger, Alert alert, CancellationToken cancellationToken) => new(
-        AlertViews.Of(board.Lab, alert),
-        [.. (await ledger.TransitionsAsync(alert.Id, cancellationToken)).Select(AlertViews.Of)],
-        SiteBoard.Caution);
 
     private static ProblemHttpResult Missing(string id) => Refusals.NotFound("alert", id, "GET /api/v1/alerts lists the alerts.");
 }

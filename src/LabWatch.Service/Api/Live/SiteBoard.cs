@@ -1,10 +1,10 @@
 using System.Reflection;
+using LabWatch.Alerts;
 using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Service.Api.Demo;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Service.Api.Views;
 using LabWatch.Simulator.Demo;
 
@@ -12,11 +12,11 @@ namespace LabWatch.Service.Api.Live;
 
 /// <summary>Everything that a page shows of the site now, put together from the rooms that know it.</summary>
 internal sealed class SiteBoard(
-    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertPort alerts, LatestAssessments assessments, TimeProvider clock, IDemoProgress? demo = null)
+    ILabSnapshotSource lab, SourceStatusMaker statuses, IAlertBoard alerts, LatestAssessments assessments, TimeProvider clock, IDemoProgress? demo = null)
 {
     /// <summary>The caution that goes with every hazard.</summary>
     public const string Caution =
-        "LabWatch is not a protective device. Independent over-temperature protection, guards, gas alarms, ventilation, eye protection against optical "
+        "LabWatch is no protective device: independent over-temperature protection, guards, gas alarms, ventilation, eye protection against optical "
         + "radiation and local rules (IEC 61010-1, IEC 61010-2-010, IEC 61010-2-011, ICNIRP 2013, local codes) remain in force, and licensed or competent people decide.";
 
     /// <summary>Version of the program.</summary>
@@ -37,7 +37,7 @@ internal sealed class SiteBoard(
     }
 
     /// <summary>Alerts that are not over.</summary>
-    public IReadOnlyList<Alert> OpenAlerts() => alerts.Open();
+    public IReadOnlyList<Alert> OpenAlerts() => alerts.View().Open;
 
     /// <summary>The status of one source.</summary>
     public ValueTask<SourceStatusView> StatusAsync(ReferenceSource source, IReadOnlyList<Alert> open, CancellationToken cancellationToken) =>
@@ -47,7 +47,7 @@ internal sealed class SiteBoard(
     public async ValueTask<IReadOnlyList<SourceView>> SourcesAsync(CancellationToken cancellationToken)
     {
         LabSnapshot current = lab.Current;
-        IReadOnlyList<Alert> open = alerts.Open();
+        IReadOnlyList<Alert> open = alerts.View().Open;
         List<SourceView> views = [];
         foreach (ReferenceSource source in current.Sources)
         {
@@ -65,7 +65,7 @@ internal sealed class SiteBoard(
     public async ValueTask<SnapshotView> SnapshotAsync(CancellationToken cancellationToken) => new(
         Site(),
         await SourcesAsync(cancellationToken).ConfigureAwait(false),
-        AlertViews.Sorted(lab.Current, alerts.Open()),
+        AlertViews.Sorted(lab.Current, alerts.View().Open),
         await AssessmentsAsync(cancellationToken).ConfigureAwait(false),
         Progress,
         Caution);

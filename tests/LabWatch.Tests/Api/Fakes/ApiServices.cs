@@ -1,3 +1,4 @@
+using LabWatch.Alerts;
 using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
@@ -5,7 +6,6 @@ using LabWatch.Readings;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Service.Api;
-using LabWatch.Service.Api.Ports;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
 using Microsoft.Extensions.DependencyInjection;
@@ -34,7 +34,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton(clock);
         services.AddSingleton<ILabSnapshotSource>(Lab);
         services.AddSingleton<IReadingStore>(Store);
-        services.AddSingleton<IAlertPort>(Alerts);
+        services.AddSingleton<IAlertBoard>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
         services.AddSingleton<IPlannerState>(Planner);

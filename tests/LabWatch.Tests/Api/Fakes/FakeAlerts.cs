@@ -1,13 +1,13 @@
+using LabWatch.Alerts;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
-using LabWatch.Service.Api.Ports;
 
 namespace LabWatch.Tests.Api.Fakes;
 
 /// <summary>Alerts in memory.</summary>
-internal sealed class FakeAlerts(TimeProvider clock) : IAlertPort, IAlertLedger
+internal sealed class FakeAlerts(TimeProvider clock) : IAlertBoard, IAlertLedger
 {
     private readonly Lock _gate = new();
     private readonly Dictionary<Guid, List<AlertTransition>> _steps = [];
@@ -28,6 +28,22 @@ internal sealed class FakeAlerts(TimeProvider clock) : IAlertPort, IAlertLedger
         }
     }
 
+    public event EventHandler<AlertBoardChange>? Changed
+    {
+        add { }
+        remove { }
+    }
+
+    public IReadOnlyList<Finding> Findings => [];
+
+    public int WaitingForLedger { get; set; }
+
+    public bool JournalFailing { get; set; }
+
+    public AlertBoardView View() => new(0, Open());
+
+    public IReadOnlyList<OutboxMessage> PendingMessages() => [];
+
     public IReadOnlyList<Alert> Open()
     {
         lock (_gate)
@@ -36,13 +52,13 @@ internal sealed class FakeAlerts(TimeProvider clock) : IAlertPort, IAlertLedger
         }
     }
 
-    public ValueTask<(Alert? Alert, IReadOnlyList<Finding> Findings)> AcknowledgeAsync(Guid id, string by, string? note, CancellationToken cancellationToken)
+    public ValueTask<AcknowledgeResult> AcknowledgeAsync(Guid id, string by, string? note, CancellationToken cancellationToken)
     {
         lock (_gate)
         {
             if (!_steps.TryGetValue(id, out List<AlertTransition>? steps))
             {
-                return new((null, []));
+                return new(new AcknowledgeResult(null, []));
             }
 
             Alert alert = steps[^1].Alert;
@@ -58,7 +74,7 @@ internal sealed class FakeAlerts(TimeProvider clock) : IAlertPort, IAlertLedger
                 Step(alert, "acknowledged", by, note);
             }
 
-            return new((alert, []));
+            return new(new AcknowledgeResult(alert, []));
         }
     }
 
