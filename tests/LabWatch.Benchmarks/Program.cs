@@ -1,1 +1,14 @@
-return 0;
+using LabWatch.Benchmarks.Readings;
+using LabWatch.Benchmarks.Simulator;
+
+string[] rest = [.. args.Skip(1)];
+switch (args.FirstOrDefault())
+{
+    case "simulator":
+        return SimulatorBenchmark.Run(rest);
+    case "store":
+        return await StoreBenchmark.RunAsync(rest);
+    default:
+        Console.Error.WriteLine("Give the name of a benchmark: simulator, store.");
+        return 1;
+}
