@@ -45,7 +45,7 @@ internal sealed class HazardTexts(SiteTime time)
     /// <summary>A hazard channel whose readings are all too old to judge by.</summary>
     public AlertCondition OnlyOld(HazardChannel channel, TimeSpan oldest, Instant at) => new(
         Key(channel, HazardCode.HazardSilent), true, at, AlertPriority.High,
-        Headline(channel, AlertTexts.SilentOldHeadline, NameLength),
+        Headline(channel, AlertTexts.SilentOldHeadline, ShortNameLength),
         Detail(channel, Phrase.Fill(AlertTexts.SilentOldWhat, Phrase.Duration(oldest), Last(channel)), at, AlertTexts.SilentDo, AlertTexts.SilentDoNot),
         null, null, string.Empty);
 
