@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Numerics;
+
 namespace LabWatch.Metrology.Cavities;
 
 /// <summary>View factor to the aperture where a re-entrant cone may hide a part of it: the ring kernel summed over the rings of the opening.</summary>

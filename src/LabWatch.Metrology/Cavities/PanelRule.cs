@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Numerics;
+
 namespace LabWatch.Metrology.Cavities;
 
 /// <summary>A Gauss-Legendre rule with the barycentric weights of its nodes (J.-P. Berrut and L. N. Trefethen, SIAM Rev. 46 (2004) 501-517).</summary>

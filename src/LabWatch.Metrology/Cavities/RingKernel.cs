@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Numerics;
+
 namespace LabWatch.Metrology.Cavities;
 
 /// <summary>

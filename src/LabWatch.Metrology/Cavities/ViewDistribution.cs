@@ -1,3 +1,5 @@
+using LabWatch.Metrology.Numerics;
+
 namespace LabWatch.Metrology.Cavities;
 
 /// <summary>Where the rays of a view first hit the wall: weights of the nodes of a mesh, whose sum is one.</summary>

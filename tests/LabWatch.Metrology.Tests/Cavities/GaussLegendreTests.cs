@@ -1,4 +1,4 @@
-using LabWatch.Metrology.Cavities;
+using LabWatch.Metrology.Numerics;
 using Xunit;
 
 namespace LabWatch.Metrology.Tests.Cavities;

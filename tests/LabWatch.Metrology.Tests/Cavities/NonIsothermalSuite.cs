@@ -1,5 +1,6 @@
 using System.Globalization;
 using LabWatch.Metrology.Cavities;
+using LabWatch.Metrology.Numerics;
 using LabWatch.Metrology.Tests.Checks;
 
 namespace LabWatch.Metrology.Tests.Cavities;

@@ -11,6 +11,8 @@ internal static class CheckSuites
         new Thermometry.FixedPointSuite(),
         new Radiometry.PlanckSuite(),
         new Uncertainty.ConformitySuite(),
+        new Statistics.TimeSeriesSuite(),
+        new Statistics.ControlChartSuite(),
         new Cavities.SphereSuite(),
         new Cavities.DiffuseCavitySuite(),
         new Cavities.MirrorCavitySuite(),

@@ -1,4 +1,4 @@
-namespace LabWatch.Metrology.Cavities;
+namespace LabWatch.Metrology.Numerics;
 
 /// <summary>Gauss-Legendre rules on [-1, 1]: the roots of P_n by Newton's method from Tricomi's start (NIST Digital Library of Mathematical Functions, 3.5(v)).</summary>
 internal static class GaussLegendre
