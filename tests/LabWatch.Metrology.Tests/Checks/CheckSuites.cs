@@ -10,6 +10,7 @@ internal static class CheckSuites
         new Thermometry.ThermocoupleSuite(),
         new Thermometry.FixedPointSuite(),
         new Radiometry.PlanckSuite(),
+        new Uncertainty.GumSuite(),
         new Uncertainty.ConformitySuite(),
         new Statistics.TimeSeriesSuite(),
         new Statistics.ControlChartSuite(),

@@ -1,0 +1,5 @@
+using LabWatch.Metrology.Tests.Checks;
+
+namespace LabWatch.Metrology.Tests.Uncertainty;
+
+public sealed class GumCheckTests : CheckSuiteTests<GumSuite>;
