@@ -59,6 +59,9 @@ internal static class ApiRegistration
             options.SerializerOptions.NumberHandling = JsonNumberHandling.Strict;
             options.SerializerOptions.RespectNullableAnnotations = true;
         });
+
+        // What cannot be read at all is refused like everything else, with findings.
+        services.Configure<RouteHandlerOptions>(options => options.ThrowOnBadRequest = true);
         OpenApiDocument.Add(services);
         services.AddResponseCompression(options =>
         {

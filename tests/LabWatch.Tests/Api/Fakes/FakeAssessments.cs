@@ -20,6 +20,14 @@ internal sealed class FakeAssessments : IAssessmentLedger
         return default;
     }
 
+    public ValueTask RecordAsync(IReadOnlyList<Assessment> assessments, CancellationToken cancellationToken)
+    {
+        _all.AddRange(assessments);
+        return default;
+    }
+
+    public ValueTask MoveWatermarkAsync(SourceKey source, string criterion, Instant to, CancellationToken cancellationToken) => default;
+
     public ValueTask<Instant?> WatermarkAsync(SourceKey source, string criterion, CancellationToken cancellationToken) => new((Instant?)null);
 
     public ValueTask<Assessment?> FindAsync(SourceKey source, string criterion, string scope, TimeWindow window, CancellationToken cancellationToken) => new((Assessment?)null);
@@ -34,8 +42,6 @@ internal sealed class FakeAssessments : IAssessmentLedger
         LastQuery = query;
         return new(new AssessmentPage([.. _all.OrderByDescending(assessment => assessment.Window.End).Take(query.Count)], _all.Count > query.Count ? "more" : null));
     }
-
-    public ValueTask<IReadOnlyList<Assessment>> OverlappingAsync(SourceKey source, TimeWindow span, CancellationToken cancellationToken) => new([]);
 
     public ValueTask<IReadOnlyList<(long Sequence, Assessment Assessment)>> QueuedAsync(long afterSequence, int count, CancellationToken cancellationToken) => new([]);
 }

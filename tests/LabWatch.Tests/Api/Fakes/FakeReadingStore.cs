@@ -89,6 +89,8 @@ internal sealed class FakeReadingStore : IReadingStore
 
     public ValueTask<ChangedHours> ChangesAsync(long afterChange, CancellationToken cancellationToken) => new(new ChangedHours(0, []));
 
+    public ValueTask<IReadOnlyList<SealedHour>> SealedHoursAsync(long afterSeal, int count, CancellationToken cancellationToken) => new([]);
+
     public ValueTask DisposeAsync() => default;
 
     private Reading[] Rows(ChannelKey channel, TimeWindow window) =>
