@@ -57,6 +57,9 @@ internal sealed record HeatDesign
     /// <summary>Conductance from the lip to the room.</summary>
     public required double LipToRoomConductance { get; init; }
 
+    /// <summary>Standard deviation of the temperature that moving fluid or gas makes around a well, kelvin.</summary>
+    public required double ConvectionKelvin { get; init; }
+
     /// <summary>Flow of purge gas in normal use, l/min; zero where the source is not purged.</summary>
     public double PurgeFlow { get; init; }
 

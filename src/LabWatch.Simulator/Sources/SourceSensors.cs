@@ -8,6 +8,8 @@ internal sealed class SourceSensors
     private const double FrostWarmthKelvinPerKelvin = 0.004;
     private const double SlowNoiseShare = 0.7;
     private const int SlowNoiseSecond = 300;
+    private const int ConvectionSecond = 20;
+    private const double FullConvectionKelvin = 10;
 
     private readonly LabHistory _history;
     private readonly long _seed;
@@ -126,7 +128,7 @@ internal sealed class SourceSensors
         SourceNetwork network = _source.Network;
         return channel.Role switch
         {
-            ChannelRole.Well => Well(network.WallCelsius(channel.PositionMillimetre)),
+            ChannelRole.Well => Well(network.WallCelsius(channel.PositionMillimetre)) + Convection(index, second),
             ChannelRole.SetPoint => double.IsNaN(_source.SetPoint) ? 0 : _source.SetPoint,
             ChannelRole.HeaterPower => _source.HeaterWatt,
             ChannelRole.PurgeFlow => _source.PurgeFlow,
@@ -146,6 +148,13 @@ internal sealed class SourceSensors
     }
 
     private double Well(double wall) => wall + (_truth.WellToWallFraction * (wall - _source.AirCelsius));
+
+    // Eddies around the well, of zero mean and without heat of their own; none where the source is at the temperature of the room.
+    private double Convection(int index, long second)
+    {
+        double share = Math.Min(1, Math.Abs(_source.Network.ControlCelsius - _source.AirCelsius) / FullConvectionKelvin);
+        return share * _source.Design.Heat.ConvectionKelvin * CounterNoise.Slow(_seed, _streams[index] + 2, second, ConvectionSecond);
+    }
 
     private double Emissivity(string band, long second)
     {
