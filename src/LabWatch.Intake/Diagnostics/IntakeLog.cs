@@ -68,6 +68,9 @@ internal static partial class IntakeLog
     [LoggerMessage(1031, LogLevel.Warning, "The embedded broker refused a message of client {Client}: {Reason}")]
     public static partial void EmbeddedRefused(ILogger logger, string client, string reason);
 
+    [LoggerMessage(1032, LogLevel.Error, "The embedded broker could not process a message of client {Client}")]
+    public static partial void EmbeddedFailed(ILogger logger, Exception exception, string client);
+
     [LoggerMessage(1040, LogLevel.Information, "The intake stops: {Queued} messages in the queue, {Spooled} in the spool.")]
     public static partial void Stopping(ILogger logger, int queued, long spooled);
 

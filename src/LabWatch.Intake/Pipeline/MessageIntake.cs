@@ -54,7 +54,7 @@ internal sealed class MessageIntake(
         {
             counters.Decoded(pack.Readings.Count);
             _lastMessages[pack.Source] = arrival;
-            lock (_tapLocks[(int)((uint)pack.Source.GetHashCode() % TapLocks)])
+            lock (_tapLocks[(int)(unchecked((uint)pack.Source.GetHashCode()) % TapLocks)])
             {
                 Show(pack);
             }

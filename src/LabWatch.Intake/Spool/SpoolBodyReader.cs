@@ -52,7 +52,7 @@ internal ref struct SpoolBodyReader(ReadOnlySpan<byte> bytes)
     public string Pick(string[] texts)
     {
         int index = Int32();
-        if ((uint)index < (uint)texts.Length)
+        if (index >= 0 && index < texts.Length)
         {
             return texts[index];
         }

@@ -15,7 +15,7 @@ internal ref struct ByteReader(ReadOnlySpan<byte> bytes)
 
     public ReadOnlySpan<byte> Take(int count)
     {
-        if ((uint)count > (uint)Remaining)
+        if (count < 0 || count > Remaining)
         {
             throw new DamagedDataException("The bytes end too early.");
         }

@@ -24,7 +24,7 @@ internal sealed class HeadPart(int part)
     public ReadOnlySpan<HeadColumn?> Columns => _columns;
 
     /// <summary>The column of a channel; null where it has none.</summary>
-    public HeadColumn? Find(int channel) => (uint)channel < (uint)_columns.Length ? _columns[channel] : null;
+    public HeadColumn? Find(int channel) => channel >= 0 && channel < _columns.Length ? _columns[channel] : null;
 
     /// <summary>The column of a channel, made where there is none.</summary>
     public HeadColumn Column(int channel)

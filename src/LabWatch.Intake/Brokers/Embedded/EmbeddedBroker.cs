@@ -85,6 +85,20 @@ internal sealed class EmbeddedBroker(
 
     private async Task OnPublishAsync(InterceptingPublishEventArgs e)
     {
+        try
+        {
+            await TakeAsync(e);
+        }
+        catch (Exception exception)
+        {
+            // A defect in here would end the device's connection without a word; the device keeps the message and the log says why.
+            IntakeLog.EmbeddedFailed(logger, exception, Lab.Findings.Finding.Quote(e.ClientId) ?? string.Empty);
+            Refuse(e, MqttPubAckReasonCode.UnspecifiedError, "The message could not be processed.");
+        }
+    }
+
+    private async Task TakeAsync(InterceptingPublishEventArgs e)
+    {
         MqttApplicationMessage message = e.ApplicationMessage;
         if (!TopicMap.IsUnderRoot(message.Topic, root))
         {
