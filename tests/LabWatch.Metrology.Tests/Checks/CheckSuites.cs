@@ -14,6 +14,7 @@ internal static class CheckSuites
         new Uncertainty.ConformitySuite(),
         new Statistics.TimeSeriesSuite(),
         new Statistics.ControlChartSuite(),
+        new Attribution.CombinationSuite(),
         new Cavities.SphereSuite(),
         new Cavities.DiffuseCavitySuite(),
         new Cavities.MirrorCavitySuite(),
