@@ -7,7 +7,6 @@ using LabWatch.Readings;
 using LabWatch.Readings.Blocks;
 using LabWatch.Readings.Journal;
 using LabWatch.Readings.Summaries;
-using Xunit;
 
 namespace LabWatch.Tests.Readings;
 

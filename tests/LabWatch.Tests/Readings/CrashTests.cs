@@ -1,7 +1,6 @@
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
-using Xunit;
 using static LabWatch.Tests.Readings.StoreBench;
 
 namespace LabWatch.Tests.Readings;

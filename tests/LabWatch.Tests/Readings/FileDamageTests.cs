@@ -1,6 +1,5 @@
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
-using Xunit;
 using static LabWatch.Tests.Readings.StoreBench;
 
 namespace LabWatch.Tests.Readings;

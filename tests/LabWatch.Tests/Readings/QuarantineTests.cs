@@ -2,7 +2,6 @@ using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
 using LabWatch.Readings.Quarantine;
-using Xunit;
 
 namespace LabWatch.Tests.Readings;
 

@@ -3,7 +3,6 @@ using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
-using Xunit;
 
 namespace LabWatch.Tests.Readings;
 

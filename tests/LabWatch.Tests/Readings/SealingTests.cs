@@ -2,7 +2,6 @@ using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
-using Xunit;
 using static LabWatch.Tests.Readings.StoreBench;
 
 namespace LabWatch.Tests.Readings;

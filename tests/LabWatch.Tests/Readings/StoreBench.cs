@@ -5,7 +5,6 @@ using LabWatch.Readings;
 using Microsoft.Data.Sqlite;
 using Microsoft.Extensions.Logging.Abstractions;
 using Microsoft.Extensions.Time.Testing;
-using Xunit;
 
 namespace LabWatch.Tests.Readings;
 

@@ -4,7 +4,6 @@ using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
 using LabWatch.Readings.Blocks;
-using Xunit;
 
 namespace LabWatch.Tests.Readings;
 
