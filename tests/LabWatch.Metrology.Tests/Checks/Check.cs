@@ -80,7 +80,7 @@ public sealed class Check
 
     private static string WhatOf(CheckRow row) => row.InputText is "{}" or "" ? row.Quantity : $"{row.Quantity} {row.InputText}";
 
-    /// <summary>Two digits more than the tolerance has meaning for, so that the text is the same on every platform.</summary>
+    /// <summary>A digit more than the tolerance has meaning for.</summary>
     private static string Rounded(double value, double permitted)
     {
         if (value == 0 || !double.IsFinite(value))
@@ -89,7 +89,7 @@ public sealed class Check
         }
 
         double scale = permitted > 0 ? permitted : Math.Abs(value) * 1e-12;
-        int digits = (int)Math.Ceiling(Math.Log10(Math.Abs(value) / scale)) + 2;
+        int digits = (int)Math.Ceiling(Math.Log10(Math.Abs(value) / scale)) + 1;
         return value.ToString($"G{Math.Clamp(digits, 2, 14)}", CultureInfo.InvariantCulture);
     }
 

@@ -12,6 +12,7 @@ internal static class CheckSuites
         new Radiometry.PlanckSuite(),
         new Uncertainty.GumSuite(),
         new Uncertainty.ConformitySuite(),
+        new Hazards.HazardSuite(),
         new Statistics.TimeSeriesSuite(),
         new Statistics.ControlChartSuite(),
         new Attribution.CombinationSuite(),

@@ -1,0 +1,5 @@
+using LabWatch.Metrology.Tests.Checks;
+
+namespace LabWatch.Metrology.Tests.Hazards;
+
+public sealed class HazardCheckTests : CheckSuiteTests<HazardSuite>;
