@@ -269,6 +269,24 @@ public sealed class LabSimulationTests
         Assert.Empty(schedule.At(fault.End!.Value));
     }
 
+    [Theory]
+    [InlineData(0)] // Wednesday morning, rowan at 100 degC
+    [InlineData(2)] // on its way up
+    [InlineData(88)] // in the night to Sunday
+    public void Schedule_FirstFault_BringsAHotSurfaceWheneverTheDemoStarts(int hoursLater)
+    {
+        Instant start = Morning + TimeSpan.FromHours(hoursLater);
+        LabState settled = At(start).Capture();
+        LabSimulation lab = new(History, new FaultBook(DemoLab.Designs, []), new FaultSchedule(1, DemoLab.Designs, start));
+        lab.Take(settled, settled.Second);
+        lab.Advance(140);
+        Assert.InRange(Value(lab, "rowan", "outer-case"), 20, 45);
+        lab.Advance(400);
+        Assert.InRange(Value(lab, "rowan", "outer-case"), 65, 130);
+        lab.Advance(2400);
+        Assert.InRange(Value(lab, "rowan", "outer-case"), 20, 48);
+    }
+
     [Fact]
     public void Schedule_OfEverySlot_HasOrdersThatCanBe()
     {
