@@ -17,19 +17,15 @@ namespace LabWatch.Alerts.Hazards;
 /// </summary>
 internal sealed class HazardWatch : IReadingTap
 {
-    private const ReadingQuality Invalid = ReadingQuality.NoValue | ReadingQuality.OutsideSensorRange;
-
     private readonly TimeProvider _clock;
     private readonly HazardRules _rules;
+    private readonly HazardJudge _judge;
     private readonly IConditionSink _sink;
     private readonly ILogger _logger;
     private readonly IReadOnlyDictionary<ChannelKey, Instant> _heardBefore;
-    private readonly long _started;
     private readonly Lock _changing = new();
     private volatile HazardMap _map = HazardMap.Empty;
-    private volatile HazardTexts _texts;
     private long _packs;
-    private long _invalid;
 
     public HazardWatch(
         AlertsOptions options, TimeProvider clock, IConditionSink sink, IReadOnlyDictionary<ChannelKey, Instant> heardBefore, ILogger<HazardWatch> logger)
@@ -39,15 +35,14 @@ internal sealed class HazardWatch : IReadingTap
         _sink = sink;
         _heardBefore = heardBefore;
         _logger = logger;
-        _started = clock.GetTimestamp();
-        _texts = new HazardTexts(new SiteTime(HazardMap.Empty.Snapshot.Site));
+        _judge = new HazardJudge(_rules, clock, sink, new HazardTexts(new SiteTime(HazardMap.Empty.Snapshot.Site)));
     }
 
     /// <summary>Packs seen.</summary>
     public long Packs => Interlocked.Read(ref _packs);
 
     /// <summary>Readings of hazard channels that had no valid value.</summary>
-    public long InvalidReadings => Interlocked.Read(ref _invalid);
+    public long InvalidReadings => _judge.InvalidReadings;
 
     /// <summary>What cannot be watched as somebody may expect, under the present snapshot.</summary>
     public IReadOnlyList<Finding> Findings => _map.Findings();
@@ -61,7 +56,7 @@ internal sealed class HazardWatch : IReadingTap
             HazardMap map = HazardMap.Build(
                 snapshot, before, channel => ConditionDelays.Ticks(_rules.SilenceOf(channel.Interval), _clock), NewState);
             map.RefreshThermometers(Instant.Now(_clock));
-            _texts = new HazardTexts(new SiteTime(snapshot.Site));
+            _judge.Texts = new HazardTexts(new SiteTime(snapshot.Site));
             _map = map;
             foreach (HazardChannel gone in before.Sources.Values.SelectMany(source => source.Channels).Where(channel => map.Find(channel.Key) is null))
             {
@@ -116,7 +111,7 @@ internal sealed class HazardWatch : IReadingTap
             {
                 foreach (HazardChannel channel in source.Channels)
                 {
-                    Tick(channel, now, at);
+                    _judge.Tick(channel, now, at);
                 }
             }
         }
@@ -163,112 +158,9 @@ internal sealed class HazardWatch : IReadingTap
                 Reading reading = readings[i];
                 if (source.ById.TryGetValue(reading.Channel, out HazardChannel? channel))
                 {
-                    Watch(channel, reading, pack.Arrival, now);
+                    _judge.Watch(channel, reading, pack.Arrival, now);
                 }
             }
-        }
-    }
-
-    private void Watch(HazardChannel channel, in Reading reading, Instant arrival, long now)
-    {
-        double celsius = channel.Thermometer.Celsius(reading.Value);
-        bool meansNothing = channel.Limit is not null && channel.Thermometer.Usable && double.IsNaN(celsius);
-        if ((reading.Quality & Invalid) != 0 || !channel.IsPossible(reading.Value) || meansNothing)
-        {
-            Interlocked.Increment(ref _invalid);
-            return;
-        }
-
-        HazardChannelState state = channel.State;
-        if (_rules.IsOld(reading.Time, arrival))
-        {
-            HearOld(channel, arrival, now);
-            return;
-        }
-
-        bool inOrder = reading.Time > state.Newest && reading.Time <= arrival;
-        if (!inOrder && state.Recent.Contains(reading.Time, reading.Value))
-        {
-            return;
-        }
-
-        state.Recent.Add(reading.Time, reading.Value);
-        state.OldSince = null;
-        Hear(channel, arrival, now);
-        bool newest = reading.Time > state.Newest;
-        if (newest)
-        {
-            // A device clock that runs ahead must not hide what comes after it is put right.
-            state.Newest = reading.Time < arrival ? reading.Time : arrival;
-            state.LastCelsius = celsius;
-        }
-
-        if (channel.Limit is { } limit && !double.IsNaN(celsius))
-        {
-            WatchSurface(channel, limit, celsius, reading.Value, newest, arrival, now);
-        }
-    }
-
-    private void WatchSurface(HazardChannel channel, SurfaceLimit limit, double celsius, double raw, bool newest, Instant at, long now)
-    {
-        switch (channel.State.Hot.Observe(celsius >= limit.Celsius, celsius < limit.Celsius - _rules.DeadBandKelvin, newest, now, _rules.HotDelays))
-        {
-            case ConditionEdge.Raised:
-                _sink.Post(_texts.HotSurface(channel, limit, celsius, raw, at));
-                break;
-            case ConditionEdge.Returned:
-                _sink.Post(_texts.HotSurfaceReturned(channel, limit, celsius, raw, at));
-                break;
-            default:
-                break;
-        }
-    }
-
-    private void HearOld(HazardChannel channel, Instant arrival, long now)
-    {
-        channel.State.OldSince ??= now;
-        if (!channel.State.OnlyOld)
-        {
-            Hear(channel, arrival, now);
-        }
-    }
-
-    private void Hear(HazardChannel channel, Instant arrival, long now)
-    {
-        HazardChannelState state = channel.State;
-        state.LastValid = now;
-        state.LastHeard = arrival;
-        if (state.Silent)
-        {
-            state.Silent = false;
-            state.OnlyOld = false;
-            _sink.Post(_texts.SilenceEnded(channel, arrival));
-        }
-    }
-
-    private void Tick(HazardChannel channel, long now, Instant at)
-    {
-        HazardChannelState state = channel.State;
-        if (channel.Limit is { } limit && state.Hot.Tick(now, _rules.HotDelays) == ConditionEdge.Raised)
-        {
-            _sink.Post(_texts.HotSurface(channel, limit, state.LastCelsius, double.NaN, at));
-        }
-
-        if (state.Silent || now - _started < _rules.StartGrace)
-        {
-            return;
-        }
-
-        if (now - state.LastValid >= channel.Silence)
-        {
-            state.Silent = true;
-            _sink.Post(_texts.Silent(channel, _clock.GetElapsedTime(state.LastValid, now), at));
-        }
-        else if (state.OldSince is { } since && now - since >= Math.Max(channel.Silence, _rules.OldTicks))
-        {
-            state.Silent = true;
-            state.OnlyOld = true;
-            _sink.Post(_texts.OnlyOld(channel, _rules.OldestReading, at));
         }
     }
 
@@ -287,7 +179,7 @@ internal sealed class HazardWatch : IReadingTap
         if (map.Find(new ChannelKey(alert.Source, alert.Subject)) is not { } channel)
         {
             string name = map.Snapshot.FindSource(alert.Source)?.Name ?? alert.Source.Source;
-            _sink.Post(_texts.NotWatched(AlertKey.Of(alert), name, alert.Subject, Instant.Now(_clock)));
+            _sink.Post(_judge.Texts.NotWatched(AlertKey.Of(alert), name, alert.Subject, Instant.Now(_clock)));
             return;
         }
 
@@ -311,7 +203,7 @@ internal sealed class HazardWatch : IReadingTap
         {
             if (standing)
             {
-                _sink.Post(_texts.NotWatched(new AlertKey(gone.Source.Key, code, gone.Channel.Id), gone.Source.Name, gone.Channel.Name, at));
+                _sink.Post(_judge.Texts.NotWatched(new AlertKey(gone.Source.Key, code, gone.Channel.Id), gone.Source.Name, gone.Channel.Name, at));
             }
         }
     }

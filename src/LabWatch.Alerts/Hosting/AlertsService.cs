@@ -22,6 +22,7 @@ internal sealed class AlertsService(
     AssessmentFollower follower,
     HazardTicker ticker,
     LastHeardFile heard,
+    AlertsMetrics metrics,
     ILabSnapshotSource lab,
     TimeProvider clock,
     ILoggerFactory loggers) : IHostedService, IDisposable
@@ -46,6 +47,7 @@ internal sealed class AlertsService(
             dispatcher.Send(message);
         }
 
+        Measure();
         _thread = new DeskThread(queue, desk, loggers.CreateLogger<DeskThread>());
         _running = Task.WhenAll(Loop(ticker.RunAsync), Loop(recorder.RunAsync), Loop(follower.RunAsync));
         return Task.CompletedTask;
@@ -86,6 +88,16 @@ internal sealed class AlertsService(
     {
         watch.Apply(lab.Current);
         Report();
+    }
+
+    private void Measure()
+    {
+        metrics.ObserveTotal("labwatch.hazards.packs", "{pack}", "Packs watched for hazards.", () => watch.Packs);
+        metrics.ObserveTotal("labwatch.hazards.invalid_readings", "{reading}", "Readings of hazard channels without a valid value.", () => watch.InvalidReadings);
+        metrics.Observe("labwatch.alerts.open", "{alert}", "Alerts that are not over.", () => desk.View.Open.Count);
+        metrics.Observe("labwatch.alerts.pending_messages", "{message}", "Messages neither sent nor given up.", () => desk.Pending.Count);
+        metrics.Observe("labwatch.alerts.unrecorded_steps", "{step}", "Steps that the records database does not have yet.", () => recorder.Waiting);
+        metrics.Observe("labwatch.alerts.journal_failing", "1", "1 while the local alert journal cannot be written.", () => journal.Writer.Failing ? 1 : 0);
     }
 
     private void Report()

@@ -1,0 +1,130 @@
+using LabWatch.Alerts.Messages;
+using LabWatch.Lab.Readings;
+using LabWatch.Lab.Time;
+
+namespace LabWatch.Alerts.Hazards;
+
+/// <summary>Judges one channel at a time; the caller holds the lock of its source.</summary>
+internal sealed class HazardJudge(HazardRules rules, TimeProvider clock, IConditionSink sink, HazardTexts texts)
+{
+    private const ReadingQuality Invalid = ReadingQuality.NoValue | ReadingQuality.OutsideSensorRange;
+
+    private readonly long _started = clock.GetTimestamp();
+    private volatile HazardTexts _texts = texts;
+    private long _invalid;
+
+    /// <summary>The words for what is found; replaced with the lab file.</summary>
+    public HazardTexts Texts
+    {
+        get => _texts;
+        set => _texts = value;
+    }
+
+    /// <summary>Readings that had no valid value.</summary>
+    public long InvalidReadings => Interlocked.Read(ref _invalid);
+
+    /// <summary>Judges one reading.</summary>
+    public void Watch(HazardChannel channel, in Reading reading, Instant arrival, long now)
+    {
+        double celsius = channel.Thermometer.Celsius(reading.Value);
+        bool meansNothing = channel.Limit is not null && channel.Thermometer.Usable && double.IsNaN(celsius);
+        if ((reading.Quality & Invalid) != 0 || !channel.IsPossible(reading.Value) || meansNothing)
+        {
+            Interlocked.Increment(ref _invalid);
+            return;
+        }
+
+        HazardChannelState state = channel.State;
+        if (rules.IsOld(reading.Time, arrival))
+        {
+            HearOld(channel, arrival, now);
+            return;
+        }
+
+        bool inOrder = reading.Time > state.Newest && reading.Time <= arrival;
+        if (!inOrder && state.Recent.Contains(reading.Time, reading.Value))
+        {
+            return;
+        }
+
+        state.Recent.Add(reading.Time, reading.Value);
+        state.OldSince = null;
+        Hear(channel, arrival, now);
+        bool newest = reading.Time > state.Newest;
+        if (newest)
+        {
+            // A device clock that runs ahead must not hide what comes after it is put right.
+            state.Newest = reading.Time < arrival ? reading.Time : arrival;
+            state.LastCelsius = celsius;
+        }
+
+        if (channel.Limit is { } limit && !double.IsNaN(celsius))
+        {
+            WatchSurface(channel, limit, celsius, reading.Value, newest, arrival, now);
+        }
+    }
+
+    private void WatchSurface(HazardChannel channel, SurfaceLimit limit, double celsius, double raw, bool newest, Instant at, long now)
+    {
+        switch (channel.State.Hot.Observe(celsius >= limit.Celsius, celsius < limit.Celsius - rules.DeadBandKelvin, newest, now, rules.HotDelays))
+        {
+            case ConditionEdge.Raised:
+                sink.Post(Texts.HotSurface(channel, limit, celsius, raw, at));
+                break;
+            case ConditionEdge.Returned:
+                sink.Post(Texts.HotSurfaceReturned(channel, limit, celsius, raw, at));
+                break;
+            default:
+                break;
+        }
+    }
+
+    private void HearOld(HazardChannel channel, Instant arrival, long now)
+    {
+        channel.State.OldSince ??= now;
+        if (!channel.State.OnlyOld)
+        {
+            Hear(channel, arrival, now);
+        }
+    }
+
+    private void Hear(HazardChannel channel, Instant arrival, long now)
+    {
+        HazardChannelState state = channel.State;
+        state.LastValid = now;
+        state.LastHeard = arrival;
+        if (state.Silent)
+        {
+            state.Silent = false;
+            state.OnlyOld = false;
+            sink.Post(Texts.SilenceEnded(channel, arrival));
+        }
+    }
+
+    /// <summary>Judges what time alone brings: silence, and on-delays that have passed.</summary>
+    public void Tick(HazardChannel channel, long now, Instant at)
+    {
+        HazardChannelState state = channel.State;
+        if (channel.Limit is { } limit && state.Hot.Tick(now, rules.HotDelays) == ConditionEdge.Raised)
+        {
+            sink.Post(Texts.HotSurface(channel, limit, state.LastCelsius, double.NaN, at));
+        }
+
+        if (state.Silent || now - _started < rules.StartGrace)
+        {
+            return;
+        }
+
+        if (now - state.LastValid >= channel.Silence)
+        {
+            state.Silent = true;
+            sink.Post(Texts.Silent(channel, clock.GetElapsedTime(state.LastValid, now), at));
+        }
+        else if (state.OldSince is { } since && now - since >= Math.Max(channel.Silence, rules.OldTicks))
+        {
+            state.Silent = true;
+            state.OnlyOld = true;
+            sink.Post(Texts.OnlyOld(channel, rules.OldestReading, at));
+        }
+    }
+}
