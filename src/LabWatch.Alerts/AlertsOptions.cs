@@ -36,8 +36,11 @@ public sealed record AlertsOptions
     /// <summary>Readings older than this by device time say nothing about the present: they only end a silence. Default 60 s.</summary>
     public TimeSpan OldestReading { get; init; } = TimeSpan.FromSeconds(60);
 
-    /// <summary>How long a step may wait for the local disk before it is handed to the notifiers all the same. Default 250 ms.</summary>
-    public TimeSpan JournalPatience { get; init; } = TimeSpan.FromMilliseconds(250);
+    /// <summary>
+    /// How long a step waits for the local disk before it is told all the same; it is made durable as soon as the disk answers. Default 25 ms:
+    /// a slow disk delays no hazard, and what a loss of power then forgets is raised again by the next reading.
+    /// </summary>
+    public TimeSpan JournalPatience { get; init; } = TimeSpan.FromMilliseconds(25);
 
     /// <summary>How often new assessments are looked for. Default 2 s.</summary>
     public TimeSpan AssessmentPoll { get; init; } = TimeSpan.FromSeconds(2);

@@ -28,7 +28,7 @@ public interface IAlertBoard
 
     /// <summary>
     /// Acknowledges an alert; works without the records database, and is recorded there later. Acknowledging again changes nothing and gives
-    /// the alert as it is. Completes when the step is durable.
+    /// the alert as it is. Completes when the step is durable, or when the disk was waited for as long as the options say.
     /// </summary>
     /// <param name="id">Id of the alert.</param>
     /// <param name="by">Who acknowledges, 1 to 100 characters.</param>

@@ -21,7 +21,7 @@ internal static partial class Log
     [LoggerMessage(4010, LogLevel.Error, "The alert journal could not be written; steps are kept in memory and tried again with the next one. Check the disk.")]
     public static partial void JournalFailed(ILogger logger, Exception exception);
 
-    [LoggerMessage(4011, LogLevel.Warning, "The alert journal has not answered within {Patience}; steps are handed to the notifiers before they are durable.")]
+    [LoggerMessage(4011, LogLevel.Debug, "The alert journal has not answered within {Patience}; steps are handed to the notifiers before they are durable.")]
     public static partial void JournalSlow(ILogger logger, TimeSpan patience);
 
     [LoggerMessage(4012, LogLevel.Warning, "The alert journal was damaged: {Lines} lines were unreadable and kept in {File}; everything else was restored.")]
