@@ -65,16 +65,16 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
             while (reader.Read())
             {
                 long hour = reader.GetInt64(1);
-                if (reader.GetInt32(2) > 0 || unready.Contains(hour) || reader.IsDBNull(3) || incidents.IsBlockSetAside(reader.GetInt64(0))
-                    || !TryDecode(reader.GetInt64(0), reader.GetFieldValue<byte[]>(3), hour, channel.Channel, out SealedSummary? summary)
-                    || step % summary!.StepMicroseconds != 0)
+                byte[] bytes = reader.IsDBNull(3) ? [] : reader.GetFieldValue<byte[]>(3);
+                if (reader.GetInt32(2) > 0 || unready.Contains(hour) || step % Math.Max(1, SummaryCodec.StepOf(bytes)) != 0 || incidents.IsBlockSetAside(reader.GetInt64(0))
+                    || !TryDecode(reader.GetInt64(0), bytes, hour, channel.Channel, out SealedSummary? summary))
                 {
                     ready.Remove(hour);
                     unready.Add(hour);
                     continue;
                 }
 
-                ready[hour] = summary.Channels.Count > 0 ? summary.Channels[0] : null;
+                ready[hour] = summary!.Channels.Count > 0 ? summary.Channels[0] : null;
             }
 
             return 0;

@@ -50,6 +50,9 @@ internal static class SummaryCodec
         return bytes;
     }
 
+    /// <summary>Length of a row in microseconds, without unfolding; 0 where the bytes are too short to say.</summary>
+    public static long StepOf(ReadOnlySpan<byte> bytes) => bytes.Length > 5 ? bytes[5] * Minute : 0;
+
     /// <summary>Reads a summary. Throws <see cref="DamagedDataException"/> where it does not have its form.</summary>
     /// <param name="bytes">The bytes.</param>
     /// <param name="hour">Start of the hour.</param>

@@ -60,6 +60,30 @@ public sealed class BlockDamageTests
         Assert.True(GC.GetAllocatedBytesForCurrentThread() > before);
     }
 
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    public void Columns_of_random_bytes_are_refused_or_read_as_something(int seed)
+    {
+        Random random = new(seed);
+        double[] values = new double[50];
+        long[] times = new long[50];
+        ReadingQuality[] qualities = new ReadingQuality[50];
+        for (int round = 0; round < 20_000; round++)
+        {
+            byte[] bytes = new byte[random.Next(0, 500)];
+            random.NextBytes(bytes);
+            for (int i = 0; i < Math.Min(6, bytes.Length); i++)
+            {
+                bytes[i] = (byte)random.Next(10);
+            }
+
+            Refusing(() => ReadValues(bytes, values));
+            Refusing(() => ReadTimes(bytes, times));
+            Refusing(() => ReadQualities(bytes, qualities));
+        }
+    }
+
     [Fact]
     public void Journal_rows_damaged_or_moved_are_noticed()
     {
@@ -100,6 +124,36 @@ public sealed class BlockDamageTests
                 // The refusal that is wanted; anything else fails the test.
             }
         }
+    }
+
+    private static void Refusing(Action read)
+    {
+        try
+        {
+            read();
+        }
+        catch (DamagedDataException)
+        {
+            // The refusal that is wanted; anything else fails the test.
+        }
+    }
+
+    private static void ReadValues(byte[] bytes, double[] values)
+    {
+        ByteReader reader = new(bytes);
+        ValueColumn.Read(ref reader, values);
+    }
+
+    private static void ReadTimes(byte[] bytes, long[] times)
+    {
+        ByteReader reader = new(bytes);
+        TimeColumn.Read(ref reader, times, Hour);
+    }
+
+    private static void ReadQualities(byte[] bytes, ReadingQuality[] qualities)
+    {
+        ByteReader reader = new(bytes);
+        QualityRuns.Read(ref reader, qualities);
     }
 
     private static void ReadAll(byte[] damaged)
