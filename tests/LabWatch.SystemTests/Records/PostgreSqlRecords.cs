@@ -1,0 +1,27 @@
+using LabWatch.Records;
+using LabWatch.Records.Alerts;
+using LabWatch.Records.Assessments;
+using LabWatch.Records.LabFiles;
+using LabWatch.Tests.Records.Contract;
+using Microsoft.Extensions.DependencyInjection;
+
+namespace LabWatch.SystemTests.Records;
+
+/// <summary>Records in a PostgreSQL database.</summary>
+internal sealed class PostgreSqlRecords(string connectionString) : IRecordsUnderTest
+{
+    private readonly ServiceProvider _services = new ServiceCollection()
+        .AddLabWatchRecords(new RecordsOptions(RecordsProvider.PostgreSql, string.Empty, connectionString) { BusyTimeout = TimeSpan.FromSeconds(20) })
+        .BuildServiceProvider();
+
+    public IAssessmentLedger Assessments => _services.GetRequiredService<IAssessmentLedger>();
+
+    public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
+
+    public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
+
+    public static async ValueTask<IRecordsUnderTest> OpenAsync(PostgreSqlServer server) =>
+        new PostgreSqlRecords(await server.NewDatabaseAsync(TestContext.Current.CancellationToken));
+
+    public ValueTask DisposeAsync() => _services.DisposeAsync();
+}
