@@ -12,14 +12,17 @@ namespace LabWatch.Tests.Assessments;
 /// <summary>A planner on readings in memory, records in an SQLite file, and a clock that the test moves. Starts at 13:00 UTC.</summary>
 internal sealed class PlannerHarness : IAsyncDisposable
 {
-    private readonly SqliteRecords _records = new();
+    private readonly SqliteRecords _records;
     private readonly List<Planner> _planners = [];
 
-    public PlannerHarness()
+    private PlannerHarness(SqliteRecords records)
     {
+        _records = records;
         Ledger = new FaultyLedger(_records.Assessments, _records.Alerts);
         Restart();
     }
+
+    public static async Task<PlannerHarness> NewAsync() => new(await SqliteRecords.CopyAsync());
 
     public static Instant Start { get; } = TestLab.Noon + TimeSpan.FromHours(1);
 

@@ -20,7 +20,7 @@ public sealed class PlannerServiceTests
     [Fact]
     public async Task The_service_wakes_the_planner_again_and_again_also_after_the_clock_stepped_back()
     {
-        await using PlannerHarness lab = new();
+        await using PlannerHarness lab = await PlannerHarness.NewAsync();
         ClockSteps steps = new();
         PlannerService service = new(
             lab.Planner, [new StabilityCriterion(StabilityCriterion.DefaultSchedule)], new AssessmentsOptions(), steps, lab.Clock, NullLogger<PlannerService>.Instance);
