@@ -53,7 +53,7 @@ internal sealed class Planner : IDisposable
     }
 
     /// <summary>
-    /// One run. Whether there is more to do at once. Failures of the moment are logged, shown in the state, and tried again by the next run.
+    /// One run. Whether there is more to do at once. Failures are logged, shown in the state, and tried again by the next run.
     /// </summary>
     public async ValueTask<bool> RunAsync(CancellationToken cancellationToken)
     {
@@ -63,8 +63,9 @@ internal sealed class Planner : IDisposable
             _state.Started();
             return await RunOnceAsync(cancellationToken);
         }
-        catch (Exception exception) when (exception is StoreUnavailableException or RecordsUnavailableException)
+        catch (Exception exception) when (!cancellationToken.IsCancellationRequested)
         {
+            // Outermost: nothing is lost, because what was not recorded is still due at the next wake-up.
             Report(exception);
             return false;
         }

@@ -8,8 +8,15 @@ internal sealed class PlannerJob(Planner planner) : IJob
 {
     public async ValueTask Execute(IJobExecutionContext context, CancellationToken cancellationToken)
     {
-        while (!cancellationToken.IsCancellationRequested && await planner.RunAsync(cancellationToken))
+        try
         {
+            while (await planner.RunAsync(cancellationToken))
+            {
+            }
+        }
+        catch (OperationCanceledException) when (cancellationToken.IsCancellationRequested)
+        {
+            // Stopping: what was broken off stays due and is found by the next start.
         }
     }
 }
