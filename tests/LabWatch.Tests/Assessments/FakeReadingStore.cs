@@ -55,6 +55,11 @@ internal sealed class FakeReadingStore : IReadingStore
     public ValueTask<ReadingWindow> ReadAsync(SourceKey source, IReadOnlyCollection<string>? channels, TimeWindow window, CancellationToken cancellationToken)
     {
         Before(nameof(ReadAsync));
+        return new(Read(source, channels, window));
+    }
+
+    public ReadingWindow Read(SourceKey source, IReadOnlyCollection<string>? channels, TimeWindow window)
+    {
         lock (_lock)
         {
             Reads++;
@@ -72,7 +77,7 @@ internal sealed class FakeReadingStore : IReadingStore
                 }
             }
 
-            return new(new ReadingWindow(source, window, series, Hours(source, window)));
+            return new ReadingWindow(source, window, series, Hours(source, window));
         }
     }
 

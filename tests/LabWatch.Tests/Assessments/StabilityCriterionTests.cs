@@ -2,11 +2,11 @@ using LabWatch.Assessments;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Lab;
 using LabWatch.Lab.Instruments;
-using LabWatch.Lab.Limits;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Thermometry;
 using LabWatch.Metrology.Uncertainty;
+using LabWatch.Readings;
 
 namespace LabWatch.Tests.Assessments;
 
@@ -245,8 +245,8 @@ public sealed class StabilityCriterionTests
     {
         FakeReadingStore store = new();
         store.Add(TestLab.Rowan, readings);
-        var window = store.ReadAsync(TestLab.Rowan, Criterion.Channels(snapshot.Sources[0]), Span, CancellationToken.None).Result;
-        return Assert.Single(Criterion.Evaluate(new CriterionInput(snapshot, snapshot.Sources[0], Window, window)));
+        ReadingWindow seen = store.Read(TestLab.Rowan, Criterion.Channels(snapshot.Sources[0]), Span);
+        return Assert.Single(Criterion.Evaluate(new CriterionInput(snapshot, snapshot.Sources[0], Window, seen)));
     }
 
     private static double Figure(CriterionResult result, string name) => CriterionResult.Figure(result.Figures, name);
