@@ -100,15 +100,22 @@ internal sealed class Committer(
     private async Task SpoolAsync(SpoolEntry[] entries, CancellationToken stop)
     {
         var backoff = new Backoff(options.RetryFirst, options.RetryLongest, Random.Shared);
-        while (!await TrySpoolAsync(entries, stop))
+        bool stored = false;
+        while (!stored && !await TrySpoolAsync(entries, stop))
         {
             SetStopped(true);
             await Task.Delay(backoff.Next(), clock, stop);
+
+            // The spool may have emptied meanwhile, or be too small for these entries ever.
+            stored = await TryStoreAsync(entries);
         }
 
         SetStopped(false);
-        counters.Spooled(entries.Length);
-        drain.Wake();
+        if (!stored)
+        {
+            counters.Spooled(entries.Length);
+            drain.Wake();
+        }
     }
 
     private async Task<bool> TrySpoolAsync(SpoolEntry[] entries, CancellationToken stop)
