@@ -59,8 +59,8 @@ internal static partial class IntakeLog
     [LoggerMessage(1024, LogLevel.Warning, "An acknowledgement could not be sent; the broker delivers the message again: {Reason}")]
     public static partial void AcknowledgeFailed(ILogger logger, string reason);
 
-    [LoggerMessage(1025, LogLevel.Warning, "The supervisor of the broker link failed and starts again.")]
-    public static partial void SupervisorFailed(ILogger logger, Exception exception);
+    [LoggerMessage(1026, LogLevel.Error, "The broker had not kept the session {ClientId}: what was sent while the link was down may be lost. Give the broker persistence.")]
+    public static partial void SessionLost(ILogger logger, string clientId);
 
     [LoggerMessage(1030, LogLevel.Information, "The embedded broker listens on {Address}:{Port}.")]
     public static partial void EmbeddedStarted(ILogger logger, string address, int port);

@@ -17,6 +17,12 @@ internal readonly record struct DecimalSeconds(long Microseconds, long Attosecon
     private const long AttosecondsPerMicrosecond = 1_000_000_000_000;
     private const int ExponentLimit = 10_000;
 
+    private static readonly long[] Powers =
+    [
+        1, 10, 100, 1_000, 10_000, 100_000, 1_000_000, 10_000_000, 100_000_000, 1_000_000_000, 10_000_000_000, 100_000_000_000,
+        1_000_000_000_000, 10_000_000_000_000, 100_000_000_000_000, 1_000_000_000_000_000, 10_000_000_000_000_000, 100_000_000_000_000_000,
+    ];
+
     /// <summary>The exact sum.</summary>
     public static DecimalSeconds operator +(DecimalSeconds left, DecimalSeconds right)
     {
@@ -94,10 +100,4 @@ internal readonly record struct DecimalSeconds(long Microseconds, long Attosecon
     }
 
     private static long PowerOfTen(int power) => Powers[power];
-
-    private static ReadOnlySpan<long> Powers =>
-    [
-        1, 10, 100, 1_000, 10_000, 100_000, 1_000_000, 10_000_000, 100_000_000, 1_000_000_000, 10_000_000_000, 100_000_000_000,
-        1_000_000_000_000, 10_000_000_000_000, 100_000_000_000_000, 1_000_000_000_000_000, 10_000_000_000_000_000, 100_000_000_000_000_000,
-    ];
 }

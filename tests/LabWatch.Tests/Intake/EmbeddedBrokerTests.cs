@@ -66,7 +66,7 @@ public class EmbeddedBrokerTests
     {
         await using var rig = new PipelineRig(spoolLimit: 10);
         await using EmbeddedBroker broker = await StartAsync(rig, new EmbeddedBrokerOptions { Port = 0, CommitWait = TimeSpan.FromSeconds(30) });
-        using IMqttClient device = await ConnectAsync(broker, MqttProtocolVersion.V500, keepAliveSeconds: 2);
+        using IMqttClient device = await ConnectAsync(broker, MqttProtocolVersion.V500, keepAliveSeconds: 6);
         rig.Store.Failure = new StoreUnavailableException("gone");
         DateTimeOffset before = rig.Clock.GetUtcNow();
         Task<MqttClientPublishResult> publishing = PublishAsync(device, 1);

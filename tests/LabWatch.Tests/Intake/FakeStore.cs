@@ -106,6 +106,9 @@ internal sealed class FakeStore : IReadingStore
 
     public ValueTask<ChangedHours> ChangesAsync(long afterChange, CancellationToken cancellationToken) => throw new NotSupportedException();
 
+    public ValueTask<IReadOnlyList<SealedHour>> SealedHoursAsync(long afterSeal, int count, CancellationToken cancellationToken) =>
+        throw new NotSupportedException();
+
     public ValueTask DisposeAsync() => ValueTask.CompletedTask;
 
     private AppendResult Keep(IReadOnlyList<ReadingPack> packs)

@@ -28,6 +28,7 @@ internal sealed class BrokerSupervisor(
     private readonly TakeoverGuard _takeovers = new(options.TakenOverPause, clock);
     private volatile BrokerConnection? _connection;
     private volatile bool _refusing;
+    private bool _hadSession;
 
     /// <summary>Keeps the link up until cancelled; then sends what acknowledgements there are and leaves, the session kept.</summary>
     public async Task RunAsync(CancellationToken stop)
@@ -84,21 +85,36 @@ internal sealed class BrokerSupervisor(
         counters.Connected();
         string id = durable ? identity.ClientId : identity.WatchClientId;
         IntakeLog.Connected(logger, options.Host, options.Port, id, result.IsSessionPresent);
-        string? note = null;
-        uint asked = LinkOptions.ExpirySeconds(options);
-        if (durable && !options.UseMqtt311 && result.SessionExpiryInterval is { } granted && granted < asked)
-        {
-            IntakeLog.SessionExpiryShort(logger, granted, asked);
-            note = FormattableString.Invariant($"The broker keeps the session for {granted} s only.");
-        }
-
         status.Set(
-            durable ? BrokerLinkState.Connected : _takeovers.Pausing ? BrokerLinkState.TakenOver : BrokerLinkState.WatchingOnly, result.IsSessionPresent, note);
+            durable ? BrokerLinkState.Connected : _takeovers.Pausing ? BrokerLinkState.TakenOver : BrokerLinkState.WatchingOnly,
+            result.IsSessionPresent,
+            durable ? CheckSession(result) : status.Note);
         _connection = connection;
         if (_refusing)
         {
             connection.Refuse();
         }
+    }
+
+    /// <summary>What is wrong with the session that the broker granted; null where it is as asked. A broker that states no expiry (read as 0) grants what was asked.</summary>
+    private string? CheckSession(MqttClientConnectResult result)
+    {
+        uint asked = LinkOptions.ExpirySeconds(options);
+        bool lost = _hadSession && !result.IsSessionPresent;
+        _hadSession = true;
+        if (lost)
+        {
+            IntakeLog.SessionLost(logger, identity.ClientId);
+            return "The broker had not kept the session; what was sent meanwhile may be lost.";
+        }
+
+        if (result.SessionExpiryInterval is { } granted and > 0 && granted < asked)
+        {
+            IntakeLog.SessionExpiryShort(logger, granted, asked);
+            return FormattableString.Invariant($"The broker keeps the session for {granted} s only.");
+        }
+
+        return null;
     }
 
     private async Task<LinkEnd> WatchAsync(BrokerConnection connection, Task changed, CancellationToken stop)
