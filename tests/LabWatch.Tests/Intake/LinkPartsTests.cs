@@ -53,7 +53,7 @@ public class LinkPartsTests
     {
         using var counters = new IntakeCounters();
         using var lane = new AcknowledgementLane(counters, NullLogger.Instance);
-        lane.Acknowledge(_ => throw new NullReferenceException());
+        lane.Acknowledge(_ => throw new InvalidOperationException("the link is gone"));
         lane.Acknowledge(_ => Task.CompletedTask);
         await lane.RunAsync();
         Assert.Equal(0, counters.Totals().Acknowledged);
