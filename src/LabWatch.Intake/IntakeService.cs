@@ -27,6 +27,7 @@ internal sealed class IntakeService(
     private readonly CancellationTokenSource _stopLink = new();
     private readonly CancellationTokenSource _stopCommitter = new();
     private readonly CancellationTokenSource _stopDrain = new();
+    private int _stopped;
     private Task _link = Task.CompletedTask;
     private Task _committing = Task.CompletedTask;
     private Task _draining = Task.CompletedTask;
@@ -50,6 +51,11 @@ internal sealed class IntakeService(
     /// <inheritdoc/>
     public async Task StopAsync(CancellationToken cancellationToken)
     {
+        if (Interlocked.Exchange(ref _stopped, 1) == 1)
+        {
+            return;
+        }
+
         IntakeLog.Stopping(logger, queue.Count, spool.Entries);
         supervisor?.Refuse();
         embedded?.Refuse();

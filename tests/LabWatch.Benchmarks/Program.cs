@@ -1,4 +1,5 @@
 using LabWatch.Benchmarks.Alerts;
+using LabWatch.Benchmarks.Intake;
 using LabWatch.Benchmarks.Readings;
 using LabWatch.Benchmarks.Simulator;
 
@@ -7,11 +8,15 @@ switch (args.FirstOrDefault())
 {
     case "hazard":
         return await HazardBenchmark.RunAsync(rest);
+    case "intake":
+        return IntakeBenchmark.Run(rest);
+    case "intake-publisher":
+        return IntakePublisher.Run(rest);
     case "simulator":
         return SimulatorBenchmark.Run(rest);
     case "store":
         return await StoreBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: hazard, simulator, store.");
+        Console.Error.WriteLine("Give the name of a benchmark: hazard, intake, simulator, store.");
         return 1;
 }

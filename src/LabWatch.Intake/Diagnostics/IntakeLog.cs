@@ -44,6 +44,12 @@ internal static partial class IntakeLog
     [LoggerMessage(1011, LogLevel.Warning, "The spool waits for the store: {Reason}")]
     public static partial void DrainWaits(ILogger logger, string reason);
 
+    [LoggerMessage(1013, LogLevel.Error, "The decoder failed on a message; it goes to quarantine.")]
+    public static partial void DecoderFailed(ILogger logger, Exception exception);
+
+    [LoggerMessage(1014, LogLevel.Critical, "The committer failed and starts again; its batch is not acknowledged.")]
+    public static partial void CommitterFailed(ILogger logger, Exception exception);
+
     [LoggerMessage(1020, LogLevel.Information, "Connected to the broker {Host}:{Port} as {ClientId}; session kept by the broker: {SessionPresent}.")]
     public static partial void Connected(ILogger logger, string host, int port, string clientId, bool sessionPresent);
 

@@ -90,6 +90,9 @@ public static class IntakeCode
     /// <summary>The store refused this pack while it took others.</summary>
     public const string StoreRefused = "store-refused";
 
+    /// <summary>The decoder failed: a defect of this program.</summary>
+    public const string DecoderDefect = "decoder-defect";
+
     /// <summary>More findings than are listed.</summary>
     public const string MoreFindings = "more-findings";
 }

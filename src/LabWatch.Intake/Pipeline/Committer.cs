@@ -51,10 +51,16 @@ internal sealed class Committer(
 
             Complete(batch, DeliveryOutcome.Durable);
         }
-        catch (OperationCanceledException)
+        catch (OperationCanceledException) when (stop.IsCancellationRequested)
         {
             Complete(batch, DeliveryOutcome.Abandoned);
             throw;
+        }
+        catch (Exception exception)
+        {
+            // A defect: the batch is not acknowledged, so its senders still have it, and the next batch is tried.
+            IntakeLog.CommitterFailed(logger, exception);
+            Complete(batch, DeliveryOutcome.Abandoned);
         }
     }
 
@@ -131,8 +137,9 @@ internal sealed class Committer(
             SetStopped(true);
             return await write.WaitAsync(stop);
         }
-        catch (Exception exception) when (exception is IOException or UnauthorizedAccessException)
+        catch (Exception exception) when (!stop.IsCancellationRequested)
         {
+            // Whatever it was: nothing is durable, so nothing may be acknowledged, and the committer must live to try again.
             IntakeLog.SpoolFailed(logger, exception);
             return false;
         }

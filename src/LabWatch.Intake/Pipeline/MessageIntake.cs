@@ -3,6 +3,7 @@ using System.Collections.Concurrent;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Intake.Payloads;
 using LabWatch.Intake.Spool;
+using LabWatch.Lab.Findings;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
@@ -49,18 +50,38 @@ internal sealed class MessageIntake(
     private DecodedMessage Observe(string topic, in ReadOnlySequence<byte> payload, bool retained, Instant arrival)
     {
         counters.Received();
-        DecodedMessage decoded = decoder.Decode(topic, payload, retained, arrival);
+        DecodedMessage decoded = Decode(topic, payload, retained, arrival);
         if (decoded.Pack is { } pack)
         {
             counters.Decoded(pack.Readings.Count);
             _lastMessages[pack.Source] = arrival;
+<<<<<<< HEAD
             lock (_tapLocks[(int)(unchecked((uint)pack.Source.GetHashCode()) % TapLocks)])
+=======
+            lock (_tapLocks[pack.Source.GetHashCode() & (TapLocks - 1)])
+>>>>>>> e548d38 (Take messages of every source whatever its hash; never let a defect lose a message or stop the committer)
             {
                 Show(pack);
             }
         }
 
         return decoded;
+    }
+
+    private DecodedMessage Decode(string topic, in ReadOnlySequence<byte> payload, bool retained, Instant arrival)
+    {
+        try
+        {
+            return decoder.Decode(topic, payload, retained, arrival);
+        }
+        catch (Exception exception)
+        {
+            // A defect. The message goes to quarantine, or it would block its session for ever.
+            IntakeLog.DecoderFailed(logger, exception);
+            return new DecodedMessage(
+                null,
+                [new Finding(IntakeCode.DecoderDefect, "payload", "The decoder failed on this message.", exception.GetType().Name, "Report it with this message.")]);
+        }
     }
 
     private void Show(ReadingPack pack)

@@ -29,6 +29,8 @@ internal sealed class BareSubscriber(int port) : ISubscriber
         await _client.SubscribeAsync("lab/#", MqttQualityOfServiceLevel.AtLeastOnce);
     }
 
+    public override string ToString() => $"bare, {Done} received";
+
     public Task StopAsync() => _client.DisconnectAsync(new MqttClientDisconnectOptionsBuilder().WithSessionExpiryInterval(3_600).Build());
 
     public ValueTask DisposeAsync()

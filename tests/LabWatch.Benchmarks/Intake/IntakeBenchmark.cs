@@ -13,6 +13,7 @@ internal static class IntakeBenchmark
     private const int Publishers = 4;
     private const int Runs = 3;
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(2);
+    private static readonly TimeSpan Patience = TimeSpan.FromMinutes(1);
 
     /// <summary>Arguments: messages of packs of 12 (others in proportion; default 20000), directory for the data (default: temporary).</summary>
     public static int Run(string[] args)
@@ -87,16 +88,16 @@ internal static class IntakeBenchmark
         await using ISubscriber second = create(broker.Port);
         long begin = TimeProvider.System.GetTimestamp();
         await second.StartAsync();
-        await UntilAsync(() => second.Done >= each * Publishers);
+        await UntilAsync(() => second.Done >= each * Publishers, second);
         return each * Publishers / TimeProvider.System.GetElapsedTime(begin).TotalSeconds;
     }
 
     private static async Task<double> TimeAsync(ISubscriber subscriber, int messages, Task publishing)
     {
-        await UntilAsync(() => subscriber.Done > 0);
+        await UntilAsync(() => subscriber.Done > 0, subscriber);
         long before = subscriber.Done;
         long begin = TimeProvider.System.GetTimestamp();
-        await UntilAsync(() => subscriber.Done >= messages);
+        await UntilAsync(() => subscriber.Done >= messages, subscriber);
         double seconds = TimeProvider.System.GetElapsedTime(begin).TotalSeconds;
         await publishing;
         return (messages - before) / seconds;
@@ -115,10 +116,16 @@ internal static class IntakeBenchmark
             $"embedded, {Devices} devices, packs of 12, {window} under way each: {rate,9:N0} msg/s = {rate * 12,10:N0} readings/s durable; acknowledged after {report.MedianMilliseconds:F1} ms (median), {report.P99Milliseconds:F1} ms (p99); refused {intake.Totals.Refused}"));
     }
 
-    private static async Task UntilAsync(Func<bool> condition)
+    private static async Task UntilAsync(Func<bool> condition, ISubscriber subscriber)
     {
+        long start = TimeProvider.System.GetTimestamp();
         while (!condition())
         {
+            if (TimeProvider.System.GetElapsedTime(start) > Patience)
+            {
+                throw new TimeoutException($"The run does not end: {subscriber}");
+            }
+
             await Task.Delay(Pause, TimeProvider.System);
         }
     }

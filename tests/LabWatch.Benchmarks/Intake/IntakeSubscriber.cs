@@ -48,6 +48,8 @@ internal sealed class IntakeSubscriber : ISubscriber
         }
     }
 
+    public override string ToString() => $"link {_state.Link} ({_state.LinkNote}), queue {_state.QueueLength}, spool {_state.SpoolBytes}, {_state.Totals}";
+
     public Task StopAsync() => _host.StopAsync();
 
     public async ValueTask DisposeAsync()

@@ -28,25 +28,24 @@ internal sealed class IntakeLab : ILabSnapshotSource
 
     public event EventHandler? Changed;
 
-    public static LabSnapshot Snapshot(params Channel[] channels) => new(
-        new LabSite("hollin-vale", "Hollin Vale", "Europe/Dublin"),
-        [
-            new ReferenceSource(
-                Fir,
-                "Fir",
-                SourceKind.StirredBath,
-                TraceabilityRoute.Contact,
-                -20,
-                90,
-                new Cavity(CavityShape.Cylinder, 50, 300, null, 25, [new CoatingOptics("band", Estimate(0.95), Estimate(0.9))]),
-                [new WorkingBand("band", "Band", 8, 14)],
-                channels),
-        ],
-        [],
-        [],
-        [],
-        [],
-        []);
+    public static LabSnapshot Snapshot(params Channel[] channels) => Snapshot([Source(Fir, channels)]);
+
+    public static LabSnapshot Snapshot(SourceKey[] keys) =>
+        Snapshot([.. keys.Select(key => Source(key, Channel("power", "W") with { Key = new ChannelKey(key, "power") }))]);
+
+    private static LabSnapshot Snapshot(ReferenceSource[] sources) =>
+        new(new LabSite("hollin-vale", "Hollin Vale", "Europe/Dublin"), sources, [], [], [], [], []);
+
+    private static ReferenceSource Source(SourceKey key, params Channel[] channels) => new(
+        key,
+        key.Source,
+        SourceKind.StirredBath,
+        TraceabilityRoute.Contact,
+        -20,
+        90,
+        new Cavity(CavityShape.Cylinder, 50, 300, null, 25, [new CoatingOptics("band", Estimate(0.95), Estimate(0.9))]),
+        [new WorkingBand("band", "Band", 8, 14)],
+        channels);
 
     public static Channel Channel(string id, string unit, double? minimum = null, double? maximum = null) =>
         new(new ChannelKey(Fir, id), id, ChannelQuantity.WellThermometer, unit, TimeSpan.FromSeconds(1))

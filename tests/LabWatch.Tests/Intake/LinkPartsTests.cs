@@ -40,7 +40,7 @@ public class LinkPartsTests
     {
         using var counters = new IntakeCounters();
         using var lane = new AcknowledgementLane(counters, NullLogger.Instance);
-        Task running = lane.RunAsync();
+        Task<bool> running = lane.RunAsync();
         lane.Close();
         await running;
         lane.Acknowledge(_ => throw new InvalidOperationException("must not be sent"));
@@ -49,13 +49,13 @@ public class LinkPartsTests
     }
 
     [Fact]
-    public async Task An_acknowledgement_that_fails_ends_the_lane_quietly()
+    public async Task An_acknowledgement_that_fails_ends_the_lane_and_says_so()
     {
         using var counters = new IntakeCounters();
         using var lane = new AcknowledgementLane(counters, NullLogger.Instance);
         lane.Acknowledge(_ => throw new InvalidOperationException("the link is gone"));
         lane.Acknowledge(_ => Task.CompletedTask);
-        await lane.RunAsync();
+        Assert.False(await lane.RunAsync());
         Assert.Equal(0, counters.Totals().Acknowledged);
     }
 

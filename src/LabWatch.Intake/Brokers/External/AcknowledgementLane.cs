@@ -19,8 +19,8 @@ internal sealed class AcknowledgementLane(IntakeCounters counters, ILogger logge
     /// <summary>Hands over an acknowledgement; dropped where the connection is closed. Bounded by what the connection has delivered.</summary>
     public void Acknowledge(Func<CancellationToken, Task> send) => _pending.Writer.TryWrite(send);
 
-    /// <summary>Sends until closed, flushed or the link fails; then closes.</summary>
-    public async Task RunAsync()
+    /// <summary>Sends until closed, flushed or the link fails; false where it failed, so that the connection is of no use any more.</summary>
+    public async Task<bool> RunAsync()
     {
         CancellationToken closed = _closed.Token;
         try
@@ -39,9 +39,12 @@ internal sealed class AcknowledgementLane(IntakeCounters counters, ILogger logge
         {
             // The client throws different types here, among them NullReferenceException when the link is gone. The link is made anew.
             IntakeLog.AcknowledgeFailed(logger, exception.Message);
+            _pending.Writer.TryComplete();
+            return false;
         }
 
         _pending.Writer.TryComplete();
+        return true;
     }
 
     /// <summary>Takes no more; <see cref="RunAsync"/> ends when what was handed over is sent.</summary>

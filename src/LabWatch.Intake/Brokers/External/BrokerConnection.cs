@@ -69,7 +69,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
     {
         using var deadline = new CancellationTokenSource(_options.AnswerWithin * 2, _clock);
         using var either = CancellationTokenSource.CreateLinkedTokenSource(stop, deadline.Token);
-        _acknowledging = _acknowledgements.RunAsync();
+        _acknowledging = AcknowledgeAsync();
         MqttClientConnectResult result = await _client.ConnectAsync(LinkOptions.Connect(_options, _identity, _secrets, _durable), either.Token);
         if (result.ResultCode != MqttClientConnectResultCode.Success)
         {
@@ -136,6 +136,16 @@ internal sealed class BrokerConnection : IAsyncDisposable
 
         _client.Dispose();
         _acknowledgements.Dispose();
+    }
+
+    private async Task AcknowledgeAsync()
+    {
+        if (!await _acknowledgements.RunAsync())
+        {
+            // Without acknowledgements the broker stops sending; a new connection delivers again what is open.
+            _taking = false;
+            _ended.TrySetResult(LinkEnd.Lost);
+        }
     }
 
     private Task OnMessage(MqttApplicationMessageReceivedEventArgs e)
