@@ -55,11 +55,7 @@ internal sealed class MessageIntake(
         {
             counters.Decoded(pack.Readings.Count);
             _lastMessages[pack.Source] = arrival;
-<<<<<<< HEAD
-            lock (_tapLocks[(int)(unchecked((uint)pack.Source.GetHashCode()) % TapLocks)])
-=======
             lock (_tapLocks[pack.Source.GetHashCode() & (TapLocks - 1)])
->>>>>>> e548d38 (Take messages of every source whatever its hash; never let a defect lose a message or stop the committer)
             {
                 Show(pack);
             }
