@@ -52,6 +52,6 @@ public sealed class KillTests
         IReadOnlyList<(long Time, double Value)> stored = await fixture.ReadAsync("well-1", first, last + 1, token);
         Assert.Equal(stored.Count, stored.Select(reading => reading.Time).Distinct().Count());
         Dictionary<long, double> byTime = stored.ToDictionary(reading => reading.Time, reading => reading.Value);
-        Assert.Empty(device.Acknowledged.Where(sent => !byTime.TryGetValue(sent.Key, out double value) || value != sent.Value));
+        Assert.DoesNotContain(device.Acknowledged, sent => !byTime.TryGetValue(sent.Key, out double value) || value != sent.Value);
     }
 }

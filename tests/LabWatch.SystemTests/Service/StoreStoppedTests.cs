@@ -1,4 +1,3 @@
-using LabWatch.Lab.Time;
 using Microsoft.Data.Sqlite;
 
 namespace LabWatch.SystemTests.Service;
