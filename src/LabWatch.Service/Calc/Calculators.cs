@@ -5,7 +5,15 @@ internal static class Calculators
 {
     public static IReadOnlyList<Calculator> All { get; } =
     [
+        new PrtIts90Calculator(),
         new PrtCvdCalculator(),
+        new ThermocoupleCalculator(),
+        new RadiationThermometerCalculator(),
+        new RadianceCalculator(),
+        new BudgetCalculator(),
+        new DecisionCalculator(),
+        new BurnThresholdCalculator(),
+        new DewPointCalculator(),
     ];
 
     /// <summary>The calculator of a name; null where there is none.</summary>
