@@ -20,7 +20,8 @@ export function wellsOf(source: Source, isCurrent: boolean): Well[] {
         celsius: isCurrent && newest !== undefined && !newest.isSilent ? newest.celsius : null,
         isReference: channel.isReference,
       };
-    });
+    })
+    .sort((one, other) => one.x - other.x);
 }
 
 /** A source's cavity in section: aperture at the left, wells where they sit, the wall shaded by what they measure. */

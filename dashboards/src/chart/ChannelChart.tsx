@@ -6,6 +6,7 @@ import type { Channel, Source } from "../api/types";
 import { celsius, fixed } from "../format/numbers";
 import { clockTime, zoneName } from "../format/time";
 import { unitText } from "../format/units";
+import { typeset } from "../format/words";
 import { link, now, site, sources } from "../state";
 import { columnsOf, type Columns } from "./series";
 import { plot, type Level } from "./plot";
@@ -54,7 +55,7 @@ function Chart({ source, channel }: { source: Source; channel: Channel }) {
           <select value={source.id} onChange={(event) => (charted.value = { source: event.currentTarget.value, channel: null })}>
             {sources.value.map((candidate) => (
               <option key={candidate.id} value={candidate.id}>
-                {candidate.name}
+                {typeset(candidate.name)}
               </option>
             ))}
           </select>

@@ -40,7 +40,7 @@ export function plot(target: HTMLElement, input: PlotInput): uPlot {
       ],
       series: [
         { label: "Time", value: (_, at) => (at === null ? "–" : clockTime(at * 1000, zone, 0, true)) },
-        { label: columns.isReduced ? `${input.name}, mean` : input.name, stroke: colour("--trace"), width: 1.5, points: { show: false }, value: (_, value) => number(value) },
+        { label: columns.isReduced ? `${input.name}, mean` : input.name, stroke: colour("--trace"), width: 1.5, value: (_, value) => number(value) },
         ...(columns.isReduced
           ? [
               { label: "lowest", stroke: "transparent", points: { show: false }, value: (_: uPlot, value: number | null) => number(value) },

@@ -55,3 +55,6 @@ export const words = (code: string): string => {
   const text = code.replaceAll("-", " ");
   return text.charAt(0).toUpperCase() + text.slice(1);
 };
+
+/** The service's texts keep to plain characters; a page writes the unit as people do, and never parts it from its number. */
+export const typeset = (text: string): string => text.replaceAll(" degC", "\u00a0°C").replaceAll(/(\d) (mK|K|mm|um)\b/g, "$1\u00a0$2");

@@ -1,6 +1,7 @@
 import { useState } from "preact/hooks";
 import { acknowledge, Refusal } from "../api/client";
 import type { Alert } from "../api/types";
+import { typeset } from "../format/words";
 import { recall, remember } from "../memory";
 import { announcement, applyAlert, caution } from "../state";
 import { Dialog } from "./Dialog";
@@ -29,7 +30,7 @@ export function AcknowledgeDialog({ alert, onClose }: { alert: Alert; onClose: (
   return (
     <Dialog title="Acknowledge this alert?" onClose={onClose}>
       <p>
-        <strong>{alert.headline}</strong>
+        <strong>{typeset(alert.headline)}</strong>
       </p>
       <p>
         You say that you have seen it and take it on. {alert.isHazard ? "The hazard itself stays until it is dealt with." : "The deviation itself stays until it is dealt with."} This

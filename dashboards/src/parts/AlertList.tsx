@@ -2,7 +2,7 @@ import { useState } from "preact/hooks";
 import { listAlerts } from "../api/client";
 import type { Alert } from "../api/types";
 import { clockTime, span } from "../format/time";
-import { stateWord } from "../format/words";
+import { stateWord, typeset } from "../format/words";
 import { alerts, deviations, now, site } from "../state";
 import { ageOf } from "./freshness";
 import { Detail } from "./HazardBoard";
@@ -30,7 +30,7 @@ function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (ale
   return (
     <li class={`alert ${alert.isHazard ? "hazard" : "deviation"} ${alert.state}`}>
       <p class="headline">
-        <Icon name={alert.isHazard ? "hazard" : "deviation"} size={18} /> {alert.headline}
+        <Icon name={alert.isHazard ? "hazard" : "deviation"} size={18} /> {typeset(alert.headline)}
       </p>
       <p class="since">
         <strong>{stateWord[alert.state]}</strong> · {alert.priority} priority · since {clockTime(alert.raisedAt, zone, now.value)}

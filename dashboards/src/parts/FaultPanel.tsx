@@ -3,7 +3,7 @@ import { clearFault, injectFault, listFaults, Refusal } from "../api/client";
 import type { Faults } from "../api/types";
 import { clockTime } from "../format/time";
 import { fixed } from "../format/numbers";
-import { words } from "../format/words";
+import { typeset, words } from "../format/words";
 import { link, now, site, sources } from "../state";
 
 /** Demo only: break the simulated laboratory, and mend it. */
@@ -56,7 +56,7 @@ export function FaultPanel() {
           <select value={source.id} onChange={(event) => setSource(event.currentTarget.value)}>
             {sources.value.map((candidate) => (
               <option key={candidate.id} value={candidate.id}>
-                {candidate.name}
+                {typeset(candidate.name)}
               </option>
             ))}
           </select>
@@ -77,7 +77,7 @@ export function FaultPanel() {
             <select value={channelId} onChange={(event) => setChannel(event.currentTarget.value)}>
               {source.channels.map((candidate) => (
                 <option key={candidate.id} value={candidate.id}>
-                  {candidate.name}
+                  {typeset(candidate.name)}
                 </option>
               ))}
             </select>

@@ -1,6 +1,6 @@
 import type { Alert } from "../api/types";
 import { clockTime, span } from "../format/time";
-import { stateWord } from "../format/words";
+import { stateWord, typeset } from "../format/words";
 import { caution, hazards, link, now, site } from "../state";
 import { ageOf } from "./freshness";
 import { Icon } from "./Icon";
@@ -41,7 +41,7 @@ export function Detail({ text }: { text: string }) {
         return (
           <p key={line}>
             {label !== undefined && <strong>{label}</strong>}
-            {line.slice(label?.length ?? 0)}
+            {typeset(line.slice(label?.length ?? 0))}
           </p>
         );
       })}
@@ -54,7 +54,7 @@ function HazardItem({ alert, onAcknowledge }: { alert: Alert; onAcknowledge: (al
   const isOpen = alert.acknowledgedAt === null;
   return (
     <li class={`alert hazard ${alert.state}`}>
-      <h3>{alert.headline}</h3>
+      <h3>{typeset(alert.headline)}</h3>
       <p class="since">
         <strong>{stateWord[alert.state]}</strong> · since {clockTime(alert.raisedAt, zone, now.value)} ({span(ageOf(alert.raisedAt))})
         {alert.returnedAt !== null && <> · gone at {clockTime(alert.returnedAt, zone, now.value)}</>}

@@ -3,7 +3,7 @@ import { CavitySection } from "../cavity/CavitySection";
 import { celsius, decimalsFor, fixed, kelvin, significant } from "../format/numbers";
 import { clockTime, span } from "../format/time";
 import { unitText } from "../format/units";
-import { decisionWord, figureWord, kindWord, readinessMeaning, readinessWord, words } from "../format/words";
+import { decisionWord, figureWord, kindWord, readinessMeaning, readinessWord, typeset, words } from "../format/words";
 import { assessments, now, site } from "../state";
 import { ageOf, isCurrent } from "./freshness";
 import { Icon, type IconName } from "./Icon";
@@ -29,7 +29,7 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
   return (
     <article class="panel source" aria-labelledby={heading}>
       <header>
-        <h3 id={heading}>{source.name}</h3>
+        <h3 id={heading}>{typeset(source.name)}</h3>
         <p class="quiet">
           {kindWord[source.kind] ?? words(source.kind)}, {fixed(source.minimumCelsius, 0)} to {celsius(source.maximumCelsius, 0)}
         </p>
@@ -127,7 +127,7 @@ function Reasons({ source, fresh }: { source: Source; fresh: boolean }) {
     <ul>
       {reasons.map((reason) => (
         <li key={reason.code + reason.text} class={reason.blocks ? "" : "quiet"}>
-          {reason.text}
+          {typeset(reason.text)}
         </li>
       ))}
     </ul>
@@ -151,7 +151,7 @@ function Stability({ assessment }: { assessment: Assessment | undefined }) {
     <details class="stability">
       <summary>
         Stability: <span class={isOut ? "abnormal" : ""}>{isOut && <Icon name="deviation" size={15} />} {decisionWord[assessment.decision]}</span>
-        {assessment.value !== null && (
+        {assessment.value !== null && assessment.decision !== "not-decided" && (
           <>
             , {significant(assessment.value)} {unitText(assessment.unit)}
             {assessment.limit !== null && (
@@ -163,7 +163,7 @@ function Stability({ assessment }: { assessment: Assessment | undefined }) {
           </>
         )}
       </summary>
-      <p>{assessment.explanation}</p>
+      <p>{typeset(assessment.explanation)}</p>
       <ul class="figures">
         {assessment.figures.map((figure) => (
           <li key={figure.name}>

@@ -94,6 +94,21 @@ public sealed class SourceEndpointsTests
         Assert.True(status.GetProperty("isSilent").GetBoolean());
     }
 
+    // ISO 13732-1:2006 by way of BurnThreshold (its values are from memory): 48 degC where material and contact are not known.
+    [Theory]
+    [InlineData("lip", 48.0)]
+    [InlineData("case", 48.0)]
+    [InlineData("ambient", null)]
+    public async Task A_surface_tells_the_temperature_that_raises_its_alert(string channel, double? limit)
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+
+        JsonElement channels = (await host.GetAsync("/api/v1/sources/hollin-vale.fir")).Json.GetProperty("source").GetProperty("channels");
+
+        JsonElement found = channels.EnumerateArray().Single(candidate => candidate.GetProperty("id").GetString() == channel).GetProperty("hotLimitCelsius");
+        Assert.Equal(limit, found.ValueKind == JsonValueKind.Null ? null : found.GetDouble());
+    }
+
     [Fact]
     public async Task A_source_is_told_with_its_instruments_and_limits()
     {

@@ -55,8 +55,8 @@ internal static class SourceViews
         channel.Interval.TotalSeconds,
         channel.AxialPositionMillimetre,
         channel.IsReference,
-        channel.Contact is not null,
-        channel.IsHazardChannel || channel.Contact is not null,
+        TouchLimits.IsTouchable(channel),
+        channel.IsHazardChannel || TouchLimits.IsTouchable(channel),
         channel.Band,
         TouchLimits.HotCelsius(channel));
 
