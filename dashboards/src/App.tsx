@@ -4,7 +4,7 @@ import { charted, ChannelChart, rangeKey, ranges } from "./chart/ChannelChart";
 import { clockTime, zoneName } from "./format/time";
 import { AcknowledgeDialog } from "./parts/AcknowledgeDialog";
 import { AlertList } from "./parts/AlertList";
-import { Banners } from "./parts/Banners";
+import { HistoryBanner, LostBanner } from "./parts/Banners";
 import { FaultPanel } from "./parts/FaultPanel";
 import { HazardBoard } from "./parts/HazardBoard";
 import { HelpDialog } from "./parts/HelpDialog";
@@ -42,12 +42,13 @@ export function App() {
         {announcement.value}
       </div>
       <main class={link.value === "lost" ? "is-old" : ""}>
-        <Banners />
+        <LostBanner />
         {site.value === null ? (
           <p class="panel">{link.value === "connecting" ? "Asking the service…" : "The service does not answer. Trying again by itself."}</p>
         ) : (
           <>
             <HazardBoard onAcknowledge={setAcknowledging} />
+            <HistoryBanner />
             <section id="sources" aria-labelledby="sources-title" tabIndex={-1}>
               <h2 id="sources-title">Sources: may I calibrate now?</h2>
               {sources.value.length === 0 && <p class="panel">The lab file names no source yet.</p>}

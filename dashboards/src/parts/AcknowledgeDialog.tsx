@@ -8,13 +8,15 @@ import { Dialog } from "./Dialog";
 
 /** Asks who acknowledges, and makes sure that it is meant: it cannot be taken back. */
 export function AcknowledgeDialog({ alert, onClose }: { alert: Alert; onClose: () => void }) {
-  const [by, setBy] = useState(recall("name") ?? "");
-  const [note, setNote] = useState("");
   const [isSending, setSending] = useState(false);
   const [problems, setProblems] = useState<string[]>([]);
 
   const send = async (event: Event): Promise<void> => {
     event.preventDefault();
+    // From the form itself: a browser that fills in the name does not always say so.
+    const fields = new FormData(event.currentTarget as HTMLFormElement);
+    const by = String(fields.get("name") ?? "");
+    const note = String(fields.get("note") ?? "");
     setSending(true);
     try {
       applyAlert(await acknowledge(alert.id, by, note));
@@ -39,11 +41,11 @@ export function AcknowledgeDialog({ alert, onClose }: { alert: Alert; onClose: (
       <form onSubmit={(event) => void send(event)}>
         <label>
           Your name
-          <input type="text" name="name" autocomplete="name" required maxLength={80} value={by} onInput={(event) => setBy(event.currentTarget.value)} />
+          <input type="text" name="name" autocomplete="name" required maxLength={80} defaultValue={recall("name") ?? ""} />
         </label>
         <label>
           Note (what you saw or did; may stay empty)
-          <textarea name="note" rows={3} maxLength={1000} value={note} onInput={(event) => setNote(event.currentTarget.value)} />
+          <textarea name="note" rows={3} maxLength={1000} />
         </label>
         <div role="alert">
           {problems.map((problem) => (

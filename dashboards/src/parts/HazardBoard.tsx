@@ -21,30 +21,68 @@ export function HazardBoard({ onAcknowledge }: { onAcknowledge: (alert: Alert) =
             : "Hazards are not known while the service is not heard. Treat every source as hot."}
         </p>
       )}
-      <ul class="alert-list">
-        {open.map((alert) => (
-          <HazardItem key={alert.id} alert={alert} onAcknowledge={onAcknowledge} />
-        ))}
-      </ul>
+      {groups(open).map((group) => (
+        <div key={group.key} class="hazard-group">
+          <ul class="alert-list">
+            {group.alerts.map((alert) => (
+              <HazardItem key={alert.id} alert={alert} onAcknowledge={onAcknowledge} />
+            ))}
+          </ul>
+          <Advice lines={group.advice} />
+        </div>
+      ))}
       <p class="caution">{caution.value}</p>
     </section>
   );
 }
 
-/** The service's words, one line a part; the caution stands once below all hazards. */
-export function Detail({ text }: { text: string }) {
-  const lines = text.split("\n").filter((line) => line !== "" && !line.startsWith("LabWatch is no protective device") && !line.startsWith("Where: ") && !line.startsWith("Since: "));
+interface Group { key: string; advice: string[]; alerts: Alert[] }
+
+/** Hazards with the same advice stand together, so that on a phone the advice is read once and not seven times. */
+function groups(open: Alert[]): Group[] {
+  const made = new Map<string, Group>();
+  for (const alert of open) {
+    const advice = parts(alert.detail).advice;
+    const key = alert.code + advice.join();
+    const group = made.get(key) ?? { key, advice, alerts: [] };
+    group.alerts.push(alert);
+    made.set(key, group);
+  }
+  return [...made.values()];
+}
+
+/** The service's words: what is the case, and what to do. Where, since and the caution stand elsewhere on the page. */
+function parts(detail: string): { what: string[]; advice: string[] } {
+  const lines = detail.split("\n").filter((line) => line !== "" && !/^(LabWatch is no protective device|Where: |Since: )/.test(line));
+  const isAdvice = (line: string): boolean => /^(Do|Do not): /.test(line);
+  return { what: lines.filter((line) => !isAdvice(line)), advice: lines.filter(isAdvice) };
+}
+
+function Advice({ lines }: { lines: string[] }) {
   return (
     <>
       {lines.map((line) => {
-        const label = /^(Do|Do not): /.exec(line)?.[0];
+        const label = line.slice(0, line.indexOf(": ") + 2);
         return (
           <p key={line}>
-            {label !== undefined && <strong>{label}</strong>}
-            {typeset(line.slice(label?.length ?? 0))}
+            <strong>{label}</strong>
+            {typeset(line.slice(label.length))}
           </p>
         );
       })}
+    </>
+  );
+}
+
+/** An alert's whole detail. */
+export function Detail({ text }: { text: string }) {
+  const { what, advice } = parts(text);
+  return (
+    <>
+      {what.map((line) => (
+        <p key={line}>{typeset(line)}</p>
+      ))}
+      <Advice lines={advice} />
     </>
   );
 }
@@ -59,7 +97,11 @@ function HazardItem({ alert, onAcknowledge }: { alert: Alert; onAcknowledge: (al
         <strong>{stateWord[alert.state]}</strong> · since {clockTime(alert.raisedAt, zone, now.value)} ({span(ageOf(alert.raisedAt))})
         {alert.returnedAt !== null && <> · gone at {clockTime(alert.returnedAt, zone, now.value)}</>}
       </p>
-      <Detail text={alert.detail} />
+      {parts(alert.detail).what.map((line) => (
+        <p key={line} class="what">
+          {typeset(line)}
+        </p>
+      ))}
       {isOpen ? (
         <button type="button" class="act" onClick={() => onAcknowledge(alert)}>
           Acknowledge<span class="hidden">: {alert.headline}</span>
