@@ -46,7 +46,7 @@ export function CavitySection({ source, isCurrent }: { source: Source; isCurrent
     const share = high > low ? (value - low) / (high - low) : 1;
     return `color-mix(in oklab, var(--wall-hot) ${Math.round(share * 100)}%, var(--wall-cold))`;
   };
-  const stroke = pieces(line, Math.max(4, 8 / place.unit));
+  const stroke = pieces(line, 6 / place.unit);
   const edge = Math.max(source.cavity.apertureRadiusMillimetre * place.unit, 2);
 
   return (
@@ -55,15 +55,11 @@ export function CavitySection({ source, isCurrent }: { source: Source; isCurrent
         <g transform={`translate(${frame.left} ${frame.top + place.middle})`}>
           <rect class="case" x={-4} y={-caseRadius} width={end + 30} height={2 * caseRadius} rx={6} />
           {!isPlate && <path class="hollow" d={hollow(line, place.unit)} />}
-          {[1, -1].map((side) => (
-            <polyline
-              key={side}
-              class="joint"
-              points={line.map((point) => `${point.x * place.unit},${-side * point.r * place.unit}`).join(" ")}
-              stroke-width={wall}
-              style={{ stroke: shade(line[line.length - 2]!.x) }}
-            />
-          ))}
+          {[1, -1].map((side) =>
+            line
+              .slice(1, -1)
+              .map((point, i) => <circle key={`${side}-${i}`} class="joint" cx={point.x * place.unit} cy={-side * point.r * place.unit} r={wall / 2} style={{ fill: shade(point.x) }} />),
+          )}
           {[1, -1].map((side) =>
             stroke.map(([from, to], i) => (
               <line
@@ -74,6 +70,7 @@ export function CavitySection({ source, isCurrent }: { source: Source; isCurrent
                 x2={to.x * place.unit}
                 y2={-side * to.r * place.unit}
                 stroke-width={wall}
+                stroke-linecap={from.x === to.x ? "butt" : "square"}
                 style={{ stroke: shade((from.x + to.x) / 2) }}
               />
             )),

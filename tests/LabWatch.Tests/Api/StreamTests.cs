@@ -1,6 +1,7 @@
 using System.Text;
 using LabWatch.Service.Api.Streaming;
 using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.Hosting;
 
 namespace LabWatch.Tests.Api;
 
@@ -98,7 +99,7 @@ public sealed class StreamTests
         using Listener listener = await Listener.OpenAsync(host, null);
         await listener.NextAsync();
 
-        host.Services.GetRequiredService<StreamHub>().End();
+        host.Services.GetRequiredService<IHostApplicationLifetime>().StopApplication();
 
         Assert.True(await listener.IsOverAsync());
         Assert.Null(host.Services.GetRequiredService<StreamHub>().Join());

@@ -10,7 +10,8 @@ namespace LabWatch.Service.Api.Streaming;
 /// Looks for changes at a steady pace while somebody listens, and hands them to the hub. Everything it sends replaces what was known of
 /// the same id, so a look that fails loses nothing: the next one sends the state then.
 /// </summary>
-internal sealed class ChangePump(StreamHub hub, SiteBoard board, IAlertLedger ledger, StreamOptions options, ILogger<ChangePump> log) : BackgroundService
+internal sealed class ChangePump(
+    StreamHub hub, SiteBoard board, IAlertLedger ledger, StreamOptions options, IHostApplicationLifetime lifetime, ILogger<ChangePump> log) : BackgroundService
 {
     private const int LooksBetweenAssessments = 5;
     private readonly Dictionary<string, byte[]> _sent = new(StringComparer.Ordinal);
@@ -19,15 +20,10 @@ internal sealed class ChangePump(StreamHub hub, SiteBoard board, IAlertLedger le
     private int _looks;
 
     /// <inheritdoc/>
-    public override async Task StopAsync(CancellationToken cancellationToken)
-    {
-        hub.End();
-        await base.StopAsync(cancellationToken).ConfigureAwait(false);
-    }
-
-    /// <inheritdoc/>
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
+        // At the first sign of stopping: the web server waits for open streams, and hosted services are stopped after it.
+        using CancellationTokenRegistration ending = lifetime.ApplicationStopping.Register(hub.End);
         using PeriodicTimer pace = new(options.LookEvery, options.Clock);
         try
         {
