@@ -1,11 +1,14 @@
 using LabWatch.Benchmarks.Alerts;
 using LabWatch.Benchmarks.Intake;
+using LabWatch.Benchmarks.Metrology;
 using LabWatch.Benchmarks.Readings;
 using LabWatch.Benchmarks.Simulator;
 
 string[] rest = [.. args.Skip(1)];
 switch (args.FirstOrDefault())
 {
+    case "cavity":
+        return CavityBenchmark.Run(rest);
     case "hazard":
         return await HazardBenchmark.RunAsync(rest);
     case "intake":
@@ -14,9 +17,11 @@ switch (args.FirstOrDefault())
         return IntakePublisher.Run(rest);
     case "simulator":
         return SimulatorBenchmark.Run(rest);
+    case "statistics":
+        return StatisticsBenchmark.Run(rest);
     case "store":
         return await StoreBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: hazard, intake, simulator, store.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, hazard, intake, simulator, statistics, store.");
         return 1;
 }

@@ -19,9 +19,7 @@ public readonly record struct CavityRadiance(double EffectiveEmissivity, double 
         ArgumentNullException.ThrowIfNull(band);
         ReadOnlySpan<double> w = weights.Weights;
         if (zoneKelvin.Length != w.Length) throw new ArgumentException("One temperature for each zone is needed.", nameof(zoneKelvin));
-        double reference = band.Radiance(referenceKelvin), sum = 0;
-        for (int i = 0; i < w.Length; i++) sum += w[i] * (1 - band.Radiance(zoneKelvin[i]) / reference);
-        double complement = weights.IsothermalComplement + sum;
+        double complement = weights.IsothermalComplement + RadianceDeficit.Sum(w, band, zoneKelvin, referenceKelvin);
         return new CavityRadiance(1 - complement, complement, weights.IsothermalComplement);
     }
 

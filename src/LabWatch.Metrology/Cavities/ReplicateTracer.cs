@@ -14,6 +14,10 @@ internal sealed class ReplicateTracer<TScene>
     private readonly int _perReflection;
     private readonly SobolPoints _points;
     private readonly double[] _alive;
+    private readonly double[] _hits;
+    private readonly double[] _escapes;
+    private readonly bool[] _isSecond;
+    private readonly int _zones;
     private Xoshiro256 _random;
 
     public ReplicateTracer(TScene scene, RayStart start, HitTally tally, int replicate, double diffuse, ulong seed)
@@ -23,6 +27,8 @@ internal sealed class ReplicateTracer<TScene>
         _random = new Xoshiro256(unchecked(seed * 1_000_003 + (ulong)replicate));
         _points = new SobolPoints(ref _random);
         _alive = new double[tally.Depth];
+        (_hits, _escapes, _zones) = (tally.Hits[replicate], tally.Escapes[replicate], tally.Grid.Zones.Count);
+        _isSecond = [.. Enumerable.Range(0, tally.Grid.LineCount).Select(line => tally.Grid.IsSecond(line, tally))];
     }
 
     public void Trace(int rays)
@@ -43,14 +49,14 @@ internal sealed class ReplicateTracer<TScene>
         int dimension = _start.Dimensions, onSecond = 0, depth = _tally.Depth;
         for (int k = 0; k < depth; k++, dimension += _perReflection)
         {
-            int order = _tally.IndexOf(k, onSecond), second = _tally.Grid.IsSecond(ray.Line, _tally) ? 1 : 0;
+            int order = _tally.IndexOf(k, onSecond), second = _isSecond[ray.Line] ? 1 : 0;
             _alive[k]++;
-            _tally.Grid.Add(_tally.Zones(_replicate, order), ray.Line, _scene.Along(ray), 1);
+            _tally.Grid.Add(_hits.AsSpan(order * _zones, _zones), ray.Line, _scene.Along(ray), 1);
             double escape = _diffuse > 0 ? _diffuse * _scene.ToAperture(ray) : 0;
             Ray mirrored = ray;
             bool stays = _diffuse < 1 && Mirror(ref mirrored);
             if (_diffuse < 1 && !stays) escape += 1 - _diffuse;
-            _tally.Escapes[_replicate][2 * order + second] += escape;
+            _escapes[2 * order + second] += escape;
             onSecond += second;
             if (k == depth - 1) return;
             if (_perReflection == 3 ? Coordinate(dimension + 2) < _diffuse : _diffuse >= 1)

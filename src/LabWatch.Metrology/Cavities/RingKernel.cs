@@ -16,9 +16,12 @@ internal static class RingKernel
     private static readonly (double[] X, double[] W) Rule = GaussLegendre.Rule(Nodes);
 
     /// <summary>View factor from the place <paramref name="x"/> to the ring at <paramref name="y"/>, per unit length of the meridian.</summary>
-    public static double ToRing(in RingPoint x, in RingPoint y)
+    public static double ToRing(in RingPoint x, in RingPoint y) => y.R * Exchange(x, y);
+
+    /// <summary>The view factor over the radius of the ring, the same both ways (reciprocity).</summary>
+    public static double Exchange(in RingPoint x, in RingPoint y)
     {
-        double sight = Math.Min(Math.PI, x.Sight + y.Sight);
+        double sight = x.Sight + y.Sight;
         if (sight <= 0) return 0;
         double dr = y.R - x.R, dz = y.Z - x.Z;
         double s1 = 0, s2 = 0;
@@ -30,38 +33,41 @@ internal static class RingKernel
 
         double q1 = x.NormalR * y.R, q2 = y.NormalR * x.R;
         double g = dr * dr + dz * dz, b = 2 * x.R * y.R, a = g + b;
-        (double j0, double j1, double j2) = sight >= Math.PI ? Full(g, a, b) : Partial(g, a, b, sight, q1 * q2 != 0);
-        return 2 * y.R / Math.PI * (s1 * s2 * j0 - (s1 * q2 + s2 * q1) * j1 + q1 * q2 * j2);
+        if (sight >= Math.PI)
+        {
+            double d2 = g * (a + b), d = Math.Sqrt(d2);
+            return 2 / (d2 * d) * (s1 * s2 * a - (s1 * q2 + s2 * q1) * g + q1 * q2 * g * (g + 2 * d) / (a + d));
+        }
+
+        double cosine = x.SightCosine * y.SightCosine - x.SightSine * y.SightSine, sine = x.SightSine * y.SightCosine + x.SightCosine * y.SightSine;
+        (double j0, double j1, double j2) = Partial(g, a, b, sight, cosine, sine, q1 * q2 != 0);
+        return 2 / Math.PI * (s1 * s2 * j0 - (s1 * q2 + s2 * q1) * j1 + q1 * q2 * j2);
     }
 
     /// <summary>View factor from a place to the whole aperture, where nothing is in the way.</summary>
-    public static double ToAperture(in RingPoint x, double radius, double apertureZ)
-    {
-        double h = apertureZ - x.Z;
-        if (h <= 0) return x.R <= radius ? (x.NormalZ - x.NormalR) / 2 : 0; // the lip itself: the limit from inside
-        double p = x.R * x.R + h * h - radius * radius;
-        double d = Math.Sqrt(p * p + 4 * h * h * radius * radius);
-        double up = p > 0 ? 2 * radius * radius * h * h / (d * (d + p)) : (1 - p / d) / 2;
-        double a = x.R * x.R + h * h + radius * radius;
-        double outward = -2 * h * x.R * radius * radius / (d * (d + a));
-        return x.NormalZ * up + x.NormalR * outward;
-    }
+    public static double ToAperture(in RingPoint x, double radius, double apertureZ) => ToAperture(x.R, x.Z, x.NormalR, x.NormalZ, radius, apertureZ);
 
-    private static (double J0, double J1, double J2) Full(double g, double a, double b)
+    /// <inheritdoc cref="ToAperture(in RingPoint, double, double)"/>
+    public static double ToAperture(double r, double z, double normalR, double normalZ, double radius, double apertureZ)
     {
-        double d2 = g * (a + b), d = Math.Sqrt(d2), scale = Math.PI / (d2 * d);
-        return (a * scale, g * scale, g * (g + 2 * d) / (a + d) * scale);
+        double h = apertureZ - z;
+        if (h <= 0) return r <= radius ? (normalZ - normalR) / 2 : 0; // the lip itself: the limit from inside
+        double square = radius * radius, p = r * r + h * h - square;
+        double d = Math.Sqrt(p * p + 4 * h * h * square);
+        double up = p > 0 ? 2 * square * h * h / (d * (d + p)) : (1 - p / d) / 2;
+        double outward = -2 * h * r * square / (d * (d + p + 2 * square));
+        return normalZ * up + normalR * outward;
     }
 
     /// <summary>The integrals up to an azimuth, by the eccentric angle psi with tan(psi) = D/g tan(azimuth/2).</summary>
-    private static (double J0, double J1, double J2) Partial(double g, double a, double b, double sight, bool needsThird)
+    private static (double J0, double J1, double J2) Partial(double g, double a, double b, double sight, double cosine, double sine, bool needsThird)
     {
         double d2 = g * (a + b), d = Math.Sqrt(d2), scale = 2 / (d2 * d);
-        double psi = Math.Atan(d / g * Math.Tan(sight / 2)), sin = Math.Sin(psi), twice = 2 * sin * Math.Cos(psi);
+        double tangent = d / g * (sine / (1 + cosine)), psi = Math.Atan(tangent), twice = 2 * tangent / (1 + tangent * tangent);
         double difference = psi > 0.2 ? psi - twice / 2 : SmallDifference(psi);
         double j0 = scale * (a * psi + b / 2 * twice);
         double j1 = scale * g * difference;
-        return (j0, j1, needsThird ? Third(g, a, b, d, psi, sight) : 0);
+        return (j0, j1, needsThird ? Third(g, a, b, d, psi, sight, cosine, sine) : 0);
     }
 
     /// <summary>psi - sin(psi) cos(psi) for a small angle, by its series.</summary>
@@ -71,11 +77,11 @@ internal static class RingKernel
         return psi * (q / 6) * (1 - q / 20 * (1 - q / 42 * (1 - q / 72 * (1 - q / 110))));
     }
 
-    private static double Third(double g, double a, double b, double d, double psi, double sight)
+    private static double Third(double g, double a, double b, double d, double psi, double sight, double cosine, double sine)
     {
         if (b > 0.2 * a && sight > 0.3)
         {
-            double t1 = 2 * psi / d, end = Math.Sin(sight) / (a - b * Math.Cos(sight));
+            double t1 = 2 * psi / d, end = sine / (a - b * cosine);
             return (sight - g * t1 * (a + 2 * b) / (a + b) + g * b * end / (a + b)) / (b * b);
         }
 

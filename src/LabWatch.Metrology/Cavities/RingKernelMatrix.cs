@@ -21,10 +21,11 @@ internal sealed class RingKernelMatrix
         int n = mesh.Count;
         Entries = new double[n * n];
         ToAperture = new double[n];
+        FarEntries(n);
         for (int i = 0; i < n; i++)
         {
             RingPoint x = mesh.Points[i];
-            Row(x, mesh.T[i], Entries.AsSpan(i * n, n));
+            Row(x, mesh.T[i], Entries.AsSpan(i * n, n), nearOnly: true);
             ToAperture[i] = Aperture(x);
         }
     }
@@ -55,7 +56,8 @@ internal sealed class RingKernelMatrix
     /// <param name="t">Its distance from the start of its line.</param>
     /// <param name="row">Receives one entry a node; has to be zero.</param>
     /// <param name="without">A line to leave out, or -1.</param>
-    public void Row(in RingPoint x, double t, Span<double> row, int without = -1)
+    /// <param name="nearOnly">Leaves out the panels that are integrated by their nodes.</param>
+    public void Row(in RingPoint x, double t, Span<double> row, int without = -1, bool nearOnly = false)
     {
         Span<double> cuts = stackalloc double[2];
         for (int p = 0; p < _mesh.Panels.Count; p++)
@@ -63,11 +65,49 @@ internal sealed class RingKernelMatrix
             Panel panel = _mesh.Panels[p];
             if (panel.Line == without || Blind(x, panel.Line)) continue;
             Span<double> entries = row.Slice(p * _mesh.Order, _mesh.Order);
-            int count = 0;
-            if (panel.Line == x.Line && t > panel.From && t < panel.To) cuts[count++] = panel.U(t);
-            if (_meridian.Obstacle > 0 && ShadowEdge(x, panel) is { } edge) cuts[count++] = edge;
-            if (count == 0 && IsFar(x, panel, -1, 1)) Far(x, p, entries);
-            else Near(x, panel, cuts[..count], entries);
+            int count = Cuts(x, t, panel, cuts);
+            if (count > 0 || !IsFar(x, panel, -1, 1)) Near(x, panel, cuts[..count], entries);
+            else if (!nearOnly) Far(x, p, entries);
+        }
+    }
+
+    /// <summary>Where a panel has to be cut for a place: at the place itself, and where the shadow of a re-entrant cone begins.</summary>
+    private int Cuts(in RingPoint x, double t, in Panel panel, Span<double> cuts)
+    {
+        int count = 0;
+        if (panel.Line == x.Line && t > panel.From && t < panel.To) cuts[count++] = panel.U(t);
+        if (_meridian.Obstacle > 0 && ShadowEdge(x, panel) is { } edge) cuts[count++] = edge;
+        return count;
+    }
+
+    /// <summary>The entries between nodes and panels far from each other, each exchange computed once for both ways.</summary>
+    private void FarEntries(int n)
+    {
+        int order = _mesh.Order, panels = _mesh.Panels.Count;
+        bool[] far = new bool[n * panels];
+        Span<double> cuts = stackalloc double[2];
+        for (int i = 0; i < n; i++)
+        {
+            RingPoint x = _mesh.Points[i];
+            for (int p = 0; p < panels; p++)
+            {
+                Panel panel = _mesh.Panels[p];
+                far[i * panels + p] = !Blind(x, panel.Line) && Cuts(x, _mesh.T[i], panel, cuts) == 0 && IsFar(x, panel, -1, 1);
+            }
+        }
+
+        for (int i = 0; i < n; i++)
+        {
+            RingPoint x = _mesh.Points[i];
+            int own = i / order;
+            for (int j = i; j < n; j++)
+            {
+                bool there = far[i * panels + j / order], back = far[j * panels + own];
+                if (!there && !back) continue;
+                double exchange = RingKernel.Exchange(x, _mesh.Points[j]);
+                if (there) Entries[i * n + j] = exchange * _mesh.Points[j].R * _mesh.Weights[j];
+                if (back) Entries[j * n + i] = exchange * x.R * _mesh.Weights[i];
+            }
         }
     }
 

@@ -70,7 +70,7 @@ internal readonly struct StraightScene : IRayScene
         if (ray.Line == _plate) return 0;
         if (_table is not null) return _table.Of(ray.Line, Along(ray));
         (double normalR, double normalZ) = Normal(ray);
-        return RingKernel.ToAperture(new RingPoint(ray.R, ray.Z, normalR, normalZ, Math.PI, ray.Line), _aperture, _top);
+        return RingKernel.ToAperture(ray.R, ray.Z, normalR, normalZ, _aperture, _top);
     }
 
     public double Along(in Ray ray) => ray.Line == Bottom ? ray.R * _bottomLength : ray.Line == _wall ? ray.Z : 1 - ray.R;

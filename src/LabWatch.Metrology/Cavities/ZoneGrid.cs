@@ -35,6 +35,8 @@ public sealed class ZoneGrid
 
     internal IReadOnlyList<double> Limits(int line) => _limits[line];
 
+    internal int LineCount => _limits.Length;
+
     internal bool IsSecond(int line, HitTally tally) => tally.IsSecond(_surfaces[line]);
 
     /// <summary>

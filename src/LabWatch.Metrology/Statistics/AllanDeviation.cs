@@ -34,6 +34,16 @@ public static class AllanDeviation
         return points;
     }
 
+    /// <summary>Overlapping deviations at m = 1, 2, 4, ... as long as four means fit.</summary>
+    /// <param name="values">Values at one spacing, NaN where there is none.</param>
+    public static IReadOnlyList<AllanPoint> OverlappingOctaves(ReadOnlySpan<double> values)
+    {
+        List<AllanPoint> points = [];
+        using var sums = new GapSums(values);
+        for (int m = 1; m <= values.Length / 4; m *= 2) points.Add(sums.Deviation(m, modified: false, 1));
+        return points;
+    }
+
     private static AllanPoint Run(ReadOnlySpan<double> values, int m, bool modified, int step)
     {
         ArgumentOutOfRangeException.ThrowIfLessThan(m, 1);
