@@ -9,6 +9,8 @@ switch (args.FirstOrDefault())
 {
     case "cavity":
         return CavityBenchmark.Run(rest);
+    case "evaluation":
+        return EvaluationBenchmark.Run(rest);
     case "hazard":
         return await HazardBenchmark.RunAsync(rest);
     case "intake":
@@ -22,6 +24,6 @@ switch (args.FirstOrDefault())
     case "store":
         return await StoreBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, hazard, intake, simulator, statistics, store.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, evaluation, hazard, intake, simulator, statistics, store.");
         return 1;
 }
