@@ -5,7 +5,6 @@ using FsCheck;
 using FsCheck.Fluent;
 using FsCheck.Xunit;
 using LabWatch.Intake.Payloads;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

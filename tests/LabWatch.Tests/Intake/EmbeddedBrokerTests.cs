@@ -6,7 +6,6 @@ using Microsoft.Extensions.Logging.Abstractions;
 using MQTTnet;
 using MQTTnet.Formatter;
 using MQTTnet.Protocol;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

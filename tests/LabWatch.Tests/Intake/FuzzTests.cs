@@ -1,6 +1,5 @@
 using System.Text;
 using LabWatch.Intake.Payloads;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

@@ -3,7 +3,6 @@ using LabWatch.Intake.Options;
 using LabWatch.Intake.Payloads;
 using LabWatch.Intake.Secrets;
 using Microsoft.Extensions.DependencyInjection;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

@@ -7,7 +7,6 @@ using Microsoft.Extensions.Logging.Abstractions;
 using Microsoft.Extensions.Time.Testing;
 using MQTTnet.Channel;
 using MQTTnet.Exceptions;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

@@ -2,7 +2,6 @@ using System.Globalization;
 using System.Text;
 using LabWatch.Intake.Payloads;
 using LabWatch.Lab.Readings;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

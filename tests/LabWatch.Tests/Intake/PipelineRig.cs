@@ -9,7 +9,6 @@ using LabWatch.Intake.Spool;
 using LabWatch.Lab.Readings;
 using Microsoft.Extensions.Logging.Abstractions;
 using Microsoft.Extensions.Time.Testing;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

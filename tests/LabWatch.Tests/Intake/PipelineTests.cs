@@ -6,7 +6,6 @@ using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Readings;
 using Microsoft.Extensions.Logging.Abstractions;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

@@ -2,7 +2,6 @@ using LabWatch.Intake.Payloads;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 

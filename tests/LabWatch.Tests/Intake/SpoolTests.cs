@@ -3,7 +3,6 @@ using LabWatch.Lab.Findings;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 using LabWatch.Readings.Quarantine;
-using Xunit;
 
 namespace LabWatch.Tests.Intake;
 
