@@ -9,7 +9,4 @@ internal sealed record PanelOptions(int Order, double Shortest, double Longest, 
 {
     /// <summary>Fine enough for 1e-9 of 1 - e_eff.</summary>
     public static PanelOptions Fine { get; } = new(10, 1e-3, 1.0, 3);
-
-    /// <summary>Coarser, to see from the difference what the panels cost.</summary>
-    public static PanelOptions Coarse { get; } = new(8, 1e-3, 1.0, 3);
 }

@@ -41,6 +41,7 @@ internal sealed class CavityCalculator : Calculator
         CalcField.Positive("emissivity", "wall emissivity") with { Maximum = 1 },
         CalcField.NotNegative("u_emissivity", "its standard uncertainty; 0 where missing").Optional() with { Maximum = 1 },
         CalcField.NotNegative("diffuse_fraction", "diffuse fraction of the reflection; 1 where missing").Optional() with { Maximum = 1 },
+        CalcField.NotNegative("u_diffuse_fraction", "its standard uncertainty; 0 where missing; not with plate_emissivity").Optional() with { Maximum = 1 },
         CalcField.Positive("plate_emissivity", "emissivity of the aperture plate where it differs").Optional() with { Maximum = 1 },
         CalcField.Numbers("depth_mm", "depths of the wells below the aperture plane, mm").Optional() with { MaximumItems = 100 },
         CalcField.Numbers("t_c", "temperature at each well, degree Celsius").Optional() with { Minimum = -273.15, Maximum = 1e4, MaximumItems = 100 },
@@ -60,7 +61,8 @@ internal sealed class CavityCalculator : Calculator
         ("one_minus_effective_emissivity", "one minus that, to full relative precision"),
         ("u_numerical", "Monte Carlo standard error, or the estimated error of the other methods"),
         ("slope_of_emissivity", "derivative of the effective emissivity with respect to the wall emissivity"),
-        ("u_effective_emissivity", "standard uncertainty from the wall emissivity and the numerical error"),
+        ("slope_of_diffuse_fraction", "derivative of the effective emissivity with respect to the diffuse fraction; only with u_diffuse_fraction"),
+        ("u_effective_emissivity", "standard uncertainty from wall emissivity, diffuse fraction and numerical error"),
         ("profile_effective_emissivity", "with the temperature profile in the band, for the reference temperature"),
         ("reflected_part", "part of the surroundings' radiance that is reflected"),
         ("radiance_temperature_c", "radiance temperature in the band with the surroundings, degree Celsius"),
@@ -91,7 +93,8 @@ internal sealed class CavityCalculator : Calculator
         HitCounts counts = CavityTrace.Run(
             geometry, view, diffuse, null, plate ? SecondMaterial.Plate : SecondMaterial.None, plate ? options with { Depth = 24 } : options);
         ZoneWeights weights = counts.Weights(input.Number("emissivity"), plate ? input.Number("plate_emissivity") : input.Number("emissivity"));
-        Isothermal(input, weights, result);
+        double byDiffuse = input.Number("u_diffuse_fraction", 0) > 0 && !plate ? DiffuseSlope(input, geometry, view, diffuse, options, result) : 0;
+        Isothermal(input, weights, byDiffuse * input.Number("u_diffuse_fraction", 0), result);
         if (input.Has("depth_mm") || input.Has("t_c")) Profile(input, geometry, weights, result);
         if (!input.Flag("zones")) return;
         result.Add("zone_depth_mm", counts.Grid.Zones.Select(zone => Depth(geometry, zone)))
@@ -99,7 +102,19 @@ internal sealed class CavityCalculator : Calculator
             .Add("zone_weight", weights.Weights.ToArray());
     }
 
-    private static void Isothermal(CalcInput input, ZoneWeights weights, CalcResult result)
+    /// <summary>Slope of the effective emissivity with respect to the diffuse fraction, from four traces with the same rays around it.</summary>
+    private static double DiffuseSlope(
+        CalcInput input, CavityGeometry geometry, CavityView view, double diffuse, MonteCarloOptions options, CalcResult result)
+    {
+        if (geometry.Form == CavityForm.FlatPlate || (view.Kind == CavityViewKind.Axis && geometry.ConeDepth > 0)) return 0;
+        double low = Math.Clamp(diffuse - 0.2, 0, 0.4);
+        double[] fractions = [low, low + 0.2, low + 0.4, low + 0.6];
+        (_, double slope, _, _) = DiffuseFractionGrid.Trace(geometry, view, options, fractions).At(input.Number("emissivity"), Math.Clamp(diffuse, low, low + 0.6));
+        result.Add("slope_of_diffuse_fraction", -slope);
+        return slope;
+    }
+
+    private static void Isothermal(CalcInput input, ZoneWeights weights, double fromDiffuse, CalcResult result)
     {
         (_, double slope) = weights.Slopes();
         double numerical = Math.Max(weights.StandardError, weights.Counts.RelativeError * weights.IsothermalComplement);
@@ -113,7 +128,8 @@ internal sealed class CavityCalculator : Calculator
             .Add("one_minus_effective_emissivity", weights.IsothermalComplement)
             .Add("u_numerical", numerical)
             .Add("slope_of_emissivity", -slope)
-            .Add("u_effective_emissivity", double.Hypot(slope * input.Number("u_emissivity", 0), numerical))
+            .Add("u_effective_emissivity", double.Hypot(double.Hypot(slope * input.Number("u_emissivity", 0), numerical), fromDiffuse))
+            .Step("u_from_diffuse_fraction", fromDiffuse)
             .Step("reflections_followed", weights.Counts.Depth)
             .Step("zones", weights.Counts.Grid.Zones.Count);
     }
