@@ -8,6 +8,10 @@ internal static class CharacteristicSection
 {
     private const string CallendarVanDusen = "callendar-van-dusen";
     private const string CorrectionTable = "correction-table";
+    private const string Sprt = "sprt";
+    private const string Thermocouple = "thermocouple";
+    private const string PolynomialKind = "polynomial";
+    private const string SakumaHattori = "sakuma-hattori";
 
     private static readonly CorrectionTableCharacteristic Nothing = new(double.NaN, double.NaN, []);
 
@@ -29,12 +33,59 @@ internal static class CharacteristicSection
             case CorrectionTable:
                 item.OnlyMembers("kind", "expandedUncertaintyKelvin", "coverageFactor", "points");
                 return new CorrectionTableCharacteristic(uncertainty, factor, Points(item));
+            case Sprt:
+                item.OnlyMembers("kind", "expandedUncertaintyKelvin", "coverageFactor", "triplePointOhm", "below", "above");
+                return SprtSection.Read(item, uncertainty, factor);
+            case Thermocouple:
+                item.OnlyMembers("kind", "expandedUncertaintyKelvin", "coverageFactor", "type", "deviationMillivolt", "referenceJunctionCelsius");
+                return new ThermocoupleCharacteristic(
+                    uncertainty,
+                    factor,
+                    ThermocoupleTypeOf(item),
+                    item.Numbers("deviationMillivolt", -1, 1, required: false),
+                    item.OptionalNumber("referenceJunctionCelsius", -50, 200));
+            case PolynomialKind:
+                item.OnlyMembers("kind", "expandedUncertaintyKelvin", "coverageFactor", "rawUnit", "rawMinimum", "rawMaximum", "coefficients");
+                return Polynomial(item, uncertainty, factor);
+            case SakumaHattori:
+                item.OnlyMembers("kind", "expandedUncertaintyKelvin", "coverageFactor", "rawUnit", "aMicrometre", "bMicrometreKelvin", "c");
+                return new SakumaHattoriCharacteristic(
+                    item.Text("rawUnit"), uncertainty, factor, item.Number("aMicrometre", 0.1, 100), item.Number("bMicrometreKelvin", -1e5, 1e5), item.Number("c", 1e-30, 1e30));
             case "":
                 return Nothing;
             default:
-                item.Report("unknown-choice", "This kind of characteristic is not known.", $"Use one of: {CallendarVanDusen}, {CorrectionTable}.", "kind");
+                string kinds = string.Join(", ", CallendarVanDusen, CorrectionTable, Sprt, Thermocouple, PolynomialKind, SakumaHattori);
+                item.Report("unknown-choice", "This kind of characteristic is not known.", $"Use one of: {kinds}.", "kind");
                 return Nothing;
         }
+    }
+
+    private static ThermocoupleType ThermocoupleTypeOf(JsonCursor item)
+    {
+        string letter = item.Text("type");
+        if (Enum.GetNames<ThermocoupleType>().Contains(letter) && Enum.TryParse(letter, out ThermocoupleType type))
+        {
+            return type;
+        }
+
+        if (letter.Length > 0)
+        {
+            item.Report("unknown-choice", "This type of thermocouple is not known.", $"Use one of: {string.Join(", ", Enum.GetNames<ThermocoupleType>())}.", "type");
+        }
+
+        return default;
+    }
+
+    private static PolynomialCharacteristic Polynomial(JsonCursor item, double uncertainty, double factor)
+    {
+        double minimum = item.Number("rawMinimum", -1e9, 1e9);
+        double maximum = item.Number("rawMaximum", -1e9, 1e9);
+        if (maximum <= minimum)
+        {
+            item.Report("empty-range", "The highest raw value is not above the lowest.", "Correct one of the two.", "rawMaximum");
+        }
+
+        return new PolynomialCharacteristic(item.Text("rawUnit"), uncertainty, factor, item.Numbers("coefficients", -1e9, 1e9), minimum, maximum);
     }
 
     private static CorrectionPoint[] Points(JsonCursor item)

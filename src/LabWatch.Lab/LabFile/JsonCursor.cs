@@ -118,6 +118,36 @@ internal readonly struct JsonCursor
         return value;
     }
 
+    /// <summary>The named array of finite numbers inside inclusive bounds; empty where it is missing.</summary>
+    public double[] Numbers(string name, double minimum, double maximum, bool required = true)
+    {
+        if (Child(name, JsonValueKind.Array, "an array", required) is not { } array)
+        {
+            return [];
+        }
+
+        List<double> numbers = [];
+        foreach (JsonElement item in array._element.EnumerateArray())
+        {
+            JsonCursor cursor = new(item, $"{array.Pointer}/{numbers.Count}", _findings);
+            double value = double.NaN;
+            bool isGood = item.ValueKind == JsonValueKind.Number && item.TryGetDouble(out value) && value >= minimum && value <= maximum;
+            if (!isGood)
+            {
+                cursor.Report("out-of-range", FormattableString.Invariant($"This is no number between {minimum} and {maximum}."), "Correct it.");
+            }
+
+            numbers.Add(value);
+        }
+
+        if (required && numbers.Count == 0)
+        {
+            array.Report("empty", "At least one number is needed.", "Add a number.");
+        }
+
+        return [.. numbers];
+    }
+
     /// <summary>The named positive whole number.</summary>
     public int PositiveInteger(string name)
     {
