@@ -19,8 +19,8 @@ internal sealed class ApertureRings(Meridian meridian)
 
     private double Piece(in RingPoint x, double from, double to)
     {
-        // Towards the rim of the opening the rings come near to the wall: halve until each piece is short against its distance.
-        double dr = x.R - to, dz = x.Z - meridian.ApertureZ, length = to - from;
+        // The rings come near to a place at the rim of the opening or at an apex below it: halve until each piece is short against its distance.
+        double dr = x.R - Math.Clamp(x.R, from, to), dz = x.Z - meridian.ApertureZ, length = to - from;
         if (length > 1e-7 && length > Math.Sqrt(dr * dr + dz * dz)) return Piece(x, from, (from + to) / 2) + Piece(x, (from + to) / 2, to);
         double sum = 0;
         for (int i = 0; i < Nodes; i++)

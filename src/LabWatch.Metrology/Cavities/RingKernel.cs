@@ -63,7 +63,9 @@ internal static class RingKernel
     private static (double J0, double J1, double J2) Partial(double g, double a, double b, double sight, double cosine, double sine, bool needsThird)
     {
         double d2 = g * (a + b), d = Math.Sqrt(d2), scale = 2 / (d2 * d);
-        double tangent = d / g * (sine / (1 + cosine)), psi = Math.Atan(tangent), twice = 2 * tangent / (1 + tangent * tangent);
+        // tan of half the azimuth without cancellation; infinite where rounding has brought the azimuth to pi.
+        double half = sine <= 0 ? double.PositiveInfinity : cosine < 0 ? (1 - cosine) / sine : sine / (1 + cosine);
+        double tangent = d / g * half, psi = Math.Atan(tangent), twice = 2 / (tangent + 1 / tangent);
         double difference = psi > 0.2 ? psi - twice / 2 : SmallDifference(psi);
         double j0 = scale * (a * psi + b / 2 * twice);
         double j1 = scale * g * difference;

@@ -33,6 +33,21 @@ public sealed class RingKernelTests
     }
 
     [Theory]
+    [InlineData(0.0)]
+    [InlineData(4e-16)]
+    [InlineData(1e-9)]
+    public void Kernel_is_continuous_where_a_shadow_begins(double shortOfPi)
+    {
+        double first = 1.9892623609944848, second = Math.PI - first - shortOfPi;
+        var x = new RingPoint(1, 6, -1, 0, first, 1);
+
+        double whole = RingKernel.ToRing(x, new RingPoint(1, 2.5, -1, 0, Math.PI, 1));
+        double edge = RingKernel.ToRing(x, new RingPoint(1, 2.5, -1, 0, second, 1));
+
+        Assert.Equal(whole, edge, 1e-8 * whole + shortOfPi);
+    }
+
+    [Theory]
     [InlineData(CavityForm.Cylinder, 0, 1.0)]
     [InlineData(CavityForm.CylinderOutwardCone, 30, 0.6)]
     [InlineData(CavityForm.CylinderOutwardCone, 75, 1.0)]
