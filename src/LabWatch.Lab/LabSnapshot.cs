@@ -70,18 +70,22 @@ public sealed class LabSnapshot
 
     /// <summary>
     /// The certificate in force for a channel at an instant: of the instrument installed then, the latest one valid from then or before,
-    /// in its highest revision. Null where no instrument is installed or it has no certificate yet.
+    /// in its highest revision. Null where no instrument is installed or it has no certificate yet. That of a standard resistance thermometer
+    /// carries the R(TPW) in force, where a triple-point check was recorded since its calibration.
     /// </summary>
     public Certificate? CertificateInForce(ChannelKey channel, Instant at)
     {
         Installation? stay = Installations.FirstOrDefault(candidate => candidate.Channel == channel && candidate.Covers(at));
-        return stay is null
+        Certificate? certificate = stay is null
             ? null
             : Certificates
                 .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal) && certificate.ValidFrom <= at)
                 .OrderByDescending(certificate => certificate.ValidFrom)
                 .ThenByDescending(certificate => certificate.Revision)
                 .FirstOrDefault();
+        return certificate?.Characteristic is SprtCharacteristic && TriplePointInForce(certificate.Instrument, at) is { } check && check.At >= certificate.ValidFrom
+            ? certificate with { TriplePoint = check }
+            : certificate;
     }
 
     /// <summary>

@@ -17,7 +17,7 @@ public sealed record CertificateTimeline(IReadOnlyList<CertificateStretch> Stret
     public Certificate? At(Instant instant) => Stretches.FirstOrDefault(stretch => stretch.Span.Contains(instant))?.Certificate;
 
     /// <summary>How a certificate is named in provenance.</summary>
-    public static string ReferenceTo(Certificate certificate) => $"{certificate.Id}@{certificate.Revision}";
+    public static string ReferenceTo(Certificate certificate) => certificate.Reference;
 
     /// <summary>The timeline of a channel over a span.</summary>
     public static CertificateTimeline Of(LabSnapshot snapshot, ChannelKey channel, TimeWindow span)
@@ -27,6 +27,9 @@ public sealed record CertificateTimeline(IReadOnlyList<CertificateStretch> Stret
             .SelectMany(stay => snapshot.Certificates
                 .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal))
                 .Select(certificate => certificate.ValidFrom)
+                .Concat(snapshot.TriplePointChecks
+                    .Where(check => string.Equals(check.Instrument, stay.Instrument, StringComparison.Ordinal))
+                    .Select(check => check.At))
                 .Append(stay.From)
                 .Append(stay.Until ?? span.End))
             .Where(instant => instant > span.Start && instant < span.End);

@@ -23,4 +23,11 @@ public sealed record Certificate(
     Instant? DueAt,
     double MinimumCelsius,
     double MaximumCelsius,
-    Characteristic Characteristic);
+    Characteristic Characteristic)
+{
+    /// <summary>The R(TPW) in force, where a resistance thermometer has a recorded triple-point check; the snapshot sets it, not the certificate.</summary>
+    public TriplePointCheck? TriplePoint { get; init; }
+
+    /// <summary>How an evaluation names what it used: <c>id@revision</c>, with a triple-point check <c>id@revision+check@revision</c>.</summary>
+    public string Reference => TriplePoint is { } check ? $"{Id}@{Revision}+{check.Id}@{check.Revision}" : $"{Id}@{Revision}";
+}

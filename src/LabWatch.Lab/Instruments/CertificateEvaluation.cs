@@ -40,7 +40,7 @@ public static class CertificateEvaluation
         {
             CallendarVanDusenCharacteristic c => new CallendarVanDusen(c.R0Ohm, c.A, c.B, c.C).Evaluate(rawValue, u),
             CorrectionTableCharacteristic c => new CorrectionTable(c.Points).Evaluate(rawValue, u),
-            SprtCharacteristic c => Evaluate(c, rawValue, conditions.TriplePointOhm ?? new Estimate(c.TriplePointOhm, 0), u),
+            SprtCharacteristic c => Evaluate(c, rawValue, conditions.TriplePointOhm ?? InForce(certificate, c), u),
             ThermocoupleCharacteristic c => Evaluate(c, rawValue, conditions.ReferenceJunctionCelsius ?? Kept(c), u),
             PolynomialCharacteristic c => new CharacteristicPolynomial(c.Coefficients, c.RawMinimum, c.RawMaximum).Evaluate(rawValue, u),
             SakumaHattoriCharacteristic c => new SakumaHattori(c.AMicrometre, c.BMicrometreKelvin, c.C).Evaluate(rawValue, u),
@@ -48,6 +48,9 @@ public static class CertificateEvaluation
         };
         return evaluation.Within(certificate.MinimumCelsius, certificate.MaximumCelsius);
     }
+
+    private static Estimate InForce(Certificate certificate, SprtCharacteristic characteristic) =>
+        certificate.TriplePoint?.TriplePointOhm ?? new Estimate(characteristic.TriplePointOhm, 0);
 
     private static Estimate Kept(ThermocoupleCharacteristic characteristic) =>
         characteristic.ReferenceJunctionCelsius is { } celsius ? new(celsius, 0) : Estimate.None;

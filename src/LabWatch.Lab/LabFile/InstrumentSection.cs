@@ -8,23 +8,32 @@ internal static class InstrumentSection
 {
     /// <summary>What the section holds.</summary>
     public sealed record Instruments(
-        IReadOnlyList<Instrument> All, IReadOnlyList<Placed<Installation>> Installations, IReadOnlyList<Placed<Certificate>> Certificates);
+        IReadOnlyList<Instrument> All, IReadOnlyList<Placed<Installation>> Installations, IReadOnlyList<Placed<Certificate>> Certificates, IReadOnlyList<TriplePointCheck> TriplePointChecks);
 
     public static Instruments Read(JsonCursor top, string site)
     {
         List<Instrument> instruments = [];
         List<Placed<Installation>> installations = [];
         List<Placed<Certificate>> certificates = [];
+        List<TriplePointCheck> checks = [];
         foreach (JsonCursor item in top.Items("instruments", required: false))
         {
-            item.OnlyMembers("id", "serialNumber", "description", "installations", "certificates");
+            item.OnlyMembers("id", "serialNumber", "description", "installations", "certificates", "triplePointChecks");
             Instrument instrument = new(item.Id("id"), item.Text("serialNumber"), item.Text("description"));
             instruments.Add(instrument);
             installations.AddRange(item.Items("installations", required: false).Select(stay => new Placed<Installation>(Stay(stay, instrument.Id, site), stay.Pointer)));
             certificates.AddRange(item.Items("certificates", required: false).Select(certificate => new Placed<Certificate>(Certificate(certificate, instrument.Id), certificate.Pointer)));
+            checks.AddRange(item.Items("triplePointChecks", required: false).Select(check => TriplePoint(check, instrument.Id)));
         }
 
-        return new Instruments(instruments, installations, certificates);
+        return new Instruments(instruments, installations, certificates, checks);
+    }
+
+    private static TriplePointCheck TriplePoint(JsonCursor item, string instrument)
+    {
+        item.OnlyMembers("id", "revision", "at", "triplePointOhm");
+        return new TriplePointCheck(
+            item.Id("id"), item.PositiveInteger("revision"), instrument, item.Time("at"), item.Estimate("triplePointOhm", 0.05, 1000));
     }
 
     private static Installation Stay(JsonCursor item, string instrument, string site)

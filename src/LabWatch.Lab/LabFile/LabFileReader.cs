@@ -94,7 +94,10 @@ public static class LabFileReader
                 [.. instruments.Installations.Select(stay => stay.Value)],
                 [.. instruments.Certificates.Select(certificate => certificate.Value)],
                 limits,
-                notifiers);
+                notifiers)
+            {
+                TriplePointChecks = instruments.TriplePointChecks,
+            };
         return new LabFileResult(snapshot, findings);
     }
 }

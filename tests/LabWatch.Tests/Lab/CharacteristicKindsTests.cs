@@ -65,6 +65,21 @@ public sealed class CharacteristicKindsTests
             result.Findings, finding => finding.Code == code && finding.Where == "/instruments/0/certificates/0/characteristic" + member);
     }
 
+    [Fact]
+    public void Triple_point_checks_are_read_and_meet_the_schema()
+    {
+        JsonObject file = With("""{ "kind": "sprt", "triplePointOhm": 25.5, "above": { "subrange": "water-to-gallium", "a": -2e-4 } }""", "Ohm");
+        file["instruments"]![0]!["triplePointChecks"] = JsonNode.Parse(
+            """[ { "id": "tpw-1", "revision": 1, "at": "2026-06-01T08:00:00Z", "triplePointOhm": { "value": 25.50012, "standardUncertainty": 1e-5 } } ]""");
+
+        LabFileResult result = LabFileReader.Read(Encoding.UTF8.GetBytes(file.ToJsonString()));
+
+        using JsonDocument document = JsonDocument.Parse(file.ToJsonString());
+        Assert.True(Schema.Evaluate(document.RootElement).IsValid);
+        Assert.Empty(result.Findings);
+        Assert.Equal(25.50012, Assert.Single(result.Snapshot!.TriplePointChecks).TriplePointOhm.Value);
+    }
+
     private static JsonObject With(string characteristic, string unit)
     {
         JsonDocumentOptions lenient = new() { CommentHandling = JsonCommentHandling.Skip, AllowTrailingCommas = true };

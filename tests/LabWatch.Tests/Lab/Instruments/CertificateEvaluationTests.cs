@@ -1,4 +1,5 @@
 using LabWatch.Lab;
+using LabWatch.Lab.Identity;
 using LabWatch.Lab.Instruments;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Thermometry;
@@ -126,6 +127,34 @@ public sealed class CertificateEvaluationTests
         Assert.Null(snapshot.TriplePointInForce("sprt-1", Instant.FromUnixSeconds(99)));
         Assert.Equal(corrected, snapshot.TriplePointInForce("sprt-1", Instant.FromUnixSeconds(199)));
         Assert.Equal(later, snapshot.TriplePointInForce("sprt-1", Instant.FromUnixSeconds(200)));
+    }
+
+    [Fact]
+    public void CertificateInForce_CarriesTheTriplePointCheckInForce_AndNamesIt()
+    {
+        SprtDeviation deviation = new(SprtSubrange.WaterToZinc, [-1.9736e-4, -2.114e-5]);
+        Certificate certificate = Covering(0, 420, new SprtCharacteristic(0.004, 2, 25.4791120, null, deviation));
+        ChannelKey channel = new(new SourceKey("hollin-vale", "rowan"), "well-1");
+        LabSnapshot snapshot = new(
+            new LabSite("hollin-vale", "Hollin Vale", "Europe/Dublin"),
+            [],
+            [],
+            [new Installation("pt-1", channel, Instant.FromUnixSeconds(0), null)],
+            [certificate],
+            [],
+            [])
+        {
+            TriplePointChecks = [new("tpw-1", 2, "pt-1", Instant.FromUnixSeconds(100), new Estimate(25.48, 1e-5))],
+        };
+        double ohm = new Sprt(25.48, null, deviation).ResistanceOhm(300);
+
+        Certificate before = snapshot.CertificateInForce(channel, Instant.FromUnixSeconds(99))!;
+        Certificate after = snapshot.CertificateInForce(channel, Instant.FromUnixSeconds(100))!;
+
+        Assert.Equal("cert-a@1", before.Reference);
+        Assert.Equal("cert-a@1+tpw-1@2", after.Reference);
+        Assert.Equal(300, CertificateEvaluation.Evaluate(after, ohm, "Ohm").Celsius.Value, 1e-9);
+        Assert.NotEqual(300, CertificateEvaluation.Evaluate(before, ohm, "Ohm").Celsius.Value, 1e-3);
     }
 
     private static Certificate Covering(double minimum, double maximum, Characteristic characteristic) =>
