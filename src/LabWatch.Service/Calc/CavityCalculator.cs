@@ -119,11 +119,11 @@ internal sealed class CavityCalculator : Calculator
         (_, double slope) = weights.Slopes();
         double numerical = Math.Max(weights.StandardError, weights.Counts.RelativeError * weights.IsothermalComplement);
         result.Add("method", weights.Counts.Method switch
-            {
-                CavityMethod.ClosedForm => "closed-form",
-                CavityMethod.IntegralEquation => "integral-equation",
-                _ => "monte-carlo",
-            })
+        {
+            CavityMethod.ClosedForm => "closed-form",
+            CavityMethod.IntegralEquation => "integral-equation",
+            _ => "monte-carlo",
+        })
             .Add("effective_emissivity", weights.Isothermal)
             .Add("one_minus_effective_emissivity", weights.IsothermalComplement)
             .Add("u_numerical", numerical)
