@@ -22,8 +22,14 @@ public sealed class DemoBrowserTests
         IPage page = await browser.OpenAsync(service.Address, width, height);
         await Assertions.Expect(page.GetByText("Rowan").First).ToBeVisibleAsync(Browser.Patient);
 
-        using HttpResponseMessage injected = await service.Client.PostAsJsonAsync("api/v1/demo/faults", new { kind = "insulation-damage", source = "hollin-vale.rowan", size = 20 }, token);
-        Assert.True(injected.IsSuccessStatusCode, await injected.Content.ReadAsStringAsync(token));
+        await Poll.UntilAsync(
+            "the fault is injected",
+            async () =>
+            {
+                using HttpResponseMessage injected = await service.Client.PostAsJsonAsync("api/v1/demo/faults", new { kind = "insulation-damage", source = "hollin-vale.rowan", size = 20 }, token);
+                return injected.IsSuccessStatusCode;
+            },
+            TimeSpan.FromSeconds(30), token, () => service.Output);
         ILocator hazard = page.Locator("#hazards li").Filter(new() { HasText = "Outer case" }).Filter(new() { HasText = "surface sensor reads" });
         await Assertions.Expect(hazard).ToBeVisibleAsync(new() { Timeout = 180_000 });
         Assert.DoesNotContain("safe to touch", await page.ContentAsync(), StringComparison.OrdinalIgnoreCase);

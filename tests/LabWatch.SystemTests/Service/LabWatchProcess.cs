@@ -11,6 +11,11 @@ internal sealed class LabWatchProcess : IAsyncDisposable
     private readonly Process _process;
     private readonly ConcurrentQueue<string> _output = new();
 
+    private const string ManagerScript = "\"$0\" \"$@\" & child=$!; trap 'kill -TERM $child' TERM; wait $child; wait $child";
+
+    // The service's own output, with the pages beside it; the copy beside the tests has none.
+    private static string Program { get; } = FindProgram();
+
     private LabWatchProcess(Process process, Uri address)
     {
         _process = process;
@@ -39,10 +44,11 @@ internal sealed class LabWatchProcess : IAsyncDisposable
     /// <param name="arguments">Command and options without --urls.</param>
     /// <param name="environment">Variables besides those of this process.</param>
     /// <param name="port">Port of the pages; a free one where null.</param>
-    public static LabWatchProcess Start(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment = null, int? port = null)
+    /// <param name="launcher">A shell that starts the service and passes the request to end on, as a service manager does; none where null.</param>
+    public static LabWatchProcess Start(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment = null, int? port = null, string? launcher = null)
     {
         Uri address = new($"http://127.0.0.1:{port ?? FreePort()}");
-        Process process = Launch([.. arguments, "--urls", address.GetLeftPart(UriPartial.Authority)], environment);
+        Process process = Launch([.. arguments, "--urls", address.GetLeftPart(UriPartial.Authority)], environment, launcher);
         LabWatchProcess service = new(process, address);
         process.OutputDataReceived += (_, line) => service._output.Enqueue(line.Data ?? string.Empty);
         process.ErrorDataReceived += (_, line) => service._output.Enqueue(line.Data ?? string.Empty);
@@ -114,16 +120,27 @@ internal sealed class LabWatchProcess : IAsyncDisposable
         _process.Dispose();
     }
 
-    private static Process Launch(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment)
+    private static string FindProgram()
     {
-        ProcessStartInfo start = new("dotnet")
+        DirectoryInfo framework = new(AppContext.BaseDirectory.TrimEnd(Path.DirectorySeparatorChar));
+        DirectoryInfo? root = framework;
+        while (root is not null && !File.Exists(Path.Combine(root.FullName, "LabWatch.sln")))
+        {
+            root = root.Parent;
+        }
+
+        return Path.Combine(root?.FullName ?? throw new InvalidOperationException("The tests must run from inside the repository."), "src", "LabWatch.Service", "bin", framework.Parent!.Name, framework.Name, "labwatch.dll");
+    }
+
+    private static Process Launch(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment, string? launcher = null)
+    {
+        ProcessStartInfo start = new(launcher ?? "dotnet")
         {
             RedirectStandardOutput = true,
             RedirectStandardError = true,
             WorkingDirectory = Path.GetTempPath(),
         };
-        start.ArgumentList.Add(Path.Combine(AppContext.BaseDirectory, "labwatch.dll"));
-        foreach (string argument in arguments)
+        foreach (string argument in (IEnumerable<string>)[.. launcher is null ? Array.Empty<string>() : ["-c", ManagerScript, "dotnet"], Program, .. arguments])
         {
             start.ArgumentList.Add(argument);
         }

@@ -32,6 +32,9 @@ internal sealed class ServiceFixture : IAsyncDisposable
     /// <summary>Variables for the service besides the port of its broker.</summary>
     public Dictionary<string, string> Environment { get; } = [];
 
+    /// <summary>A shell that plays the service manager; none where null.</summary>
+    public string? Launcher { get; set; }
+
     /// <summary>Starts the service, or starts it again, and waits until it is ready.</summary>
     public async Task StartAsync(CancellationToken cancellationToken)
     {
@@ -41,7 +44,7 @@ internal sealed class ServiceFixture : IAsyncDisposable
         }
 
         Environment.TryAdd("LABWATCH__Intake__EmbeddedBroker__Port", BrokerPort.ToString(CultureInfo.InvariantCulture));
-        _service = LabWatchProcess.Start(["serve", "--lab", _directory.At("lab.json"), "--data", Data], Environment, _port);
+        _service = LabWatchProcess.Start(["serve", "--lab", _directory.At("lab.json"), "--data", Data], Environment, _port, Launcher);
         await _service.WaitUntilReadyAsync(cancellationToken);
     }
 

@@ -50,7 +50,7 @@ internal static class AlertEndpoints
             return Refusals.BadRequest(query.Findings);
         }
 
-        AlertPage page = await ledger.ListAsync(asked, cancellationToken);
+        AlertPage page = asked.OpenOnly ? OpenAlertPage.Of(board.OpenAlerts(), asked) : await ledger.ListAsync(asked, cancellationToken);
         return TypedResults.Ok(new AlertListView([.. page.Items.Select(alert => AlertViews.Of(board.Lab, alert))], page.Next));
     }
 
