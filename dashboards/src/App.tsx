@@ -2,19 +2,21 @@ import { useEffect, useState } from "preact/hooks";
 import type { Alert } from "./api/types";
 import { charted, ChannelChart, rangeKey, ranges } from "./chart/ChannelChart";
 import { clockTime, zoneName } from "./format/time";
+import { standing } from "./hazards/board";
 import { AcknowledgeDialog } from "./parts/AcknowledgeDialog";
 import { AlertList } from "./parts/AlertList";
 import { HistoryBanner, LostBanner } from "./parts/Banners";
 import { FaultPanel } from "./parts/FaultPanel";
 import { HazardBoard } from "./parts/HazardBoard";
 import { HelpDialog } from "./parts/HelpDialog";
+import { ReadinessStrip } from "./parts/ReadinessStrip";
 import { SourcePanel } from "./parts/SourcePanel";
-import { goTo, listenToKeys } from "./shortcuts";
+import { focusAfter, goTo, listenToKeys } from "./shortcuts";
 import { announcement, hazards, link, now, site, sources } from "./state";
 
 /** All sources at a glance. */
 export function App() {
-  const [acknowledging, setAcknowledging] = useState<Alert | null>(null);
+  const [acknowledging, setAcknowledging] = useState<Alert[] | null>(null);
   const [helping, setHelping] = useState(false);
   useEffect(() => {
     const actions: Record<string, () => void> = {
@@ -27,9 +29,9 @@ export function App() {
     ranges.forEach((range, i) => (actions[String(i + 1)] = () => (rangeKey.value = range.key)));
     return listenToKeys(actions);
   }, []);
-  const open = hazards.value.length;
+  const open = standing(hazards.value).length;
   useEffect(() => {
-    document.title = `${open > 0 ? `(${open}) hazard${open === 1 ? "" : "s"} – ` : ""}${site.value?.name ?? ""} – LabWatch`;
+    document.title = `${open > 0 ? `(${open}) standing hazard${open === 1 ? "" : "s"} – ` : ""}${site.value?.name ?? ""} – LabWatch`;
   }, [open, site.value?.name]);
 
   return (
@@ -47,6 +49,7 @@ export function App() {
           <p class="panel">{link.value === "connecting" ? "Asking the service…" : "The service does not answer. Trying again by itself."}</p>
         ) : (
           <>
+            <ReadinessStrip />
             <HazardBoard onAcknowledge={setAcknowledging} />
             <HistoryBanner />
             <section id="sources" aria-labelledby="sources-title" tabIndex={-1}>
@@ -74,7 +77,15 @@ export function App() {
       <footer class="foot quiet">
         LabWatch {site.value?.version} is no protective device. <a href="/openapi/v1.json">Description of the API</a> · <a href="/health/ready">Health</a>
       </footer>
-      {acknowledging !== null && <AcknowledgeDialog alert={acknowledging} onClose={() => setAcknowledging(null)} />}
+      {acknowledging !== null && (
+        <AcknowledgeDialog
+          chosen={acknowledging}
+          onClose={() => {
+            setAcknowledging(null);
+            focusAfter(acknowledging);
+          }}
+        />
+      )}
       {helping && <HelpDialog onClose={() => setHelping(false)} />}
     </>
   );

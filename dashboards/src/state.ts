@@ -1,5 +1,6 @@
 import { computed, signal } from "@preact/signals";
 import type { Alert, Assessment, DemoProgress, Site, Snapshot, Source, SourceStatus } from "./api/types";
+import { typeset } from "./format/words";
 
 /** Whether the service is heard: connecting (nothing seen yet), live, or lost. */
 export const link = signal<"connecting" | "live" | "lost">("connecting");
@@ -58,7 +59,7 @@ export function applySnapshot(snapshot: Snapshot): void {
   heard(snapshot.site.now);
   const fresh = snapshot.openAlerts.filter((alert) => alert.isHazard && !known.has(alert.id));
   if (fresh.length > 0) {
-    announcement.value = isFirst ? `${fresh.length} open hazard${fresh.length === 1 ? "" : "s"}. ${fresh[0]!.headline}` : fresh.map((alert) => alert.headline).join(" ");
+    announcement.value = isFirst ? `${fresh.length} open hazard${fresh.length === 1 ? "" : "s"}. ${typeset(fresh[0]!.headline)}` : fresh.map((alert) => typeset(alert.headline)).join(" ");
   }
 }
 
@@ -72,7 +73,7 @@ export function applyAlert(alert: Alert): void {
   const others = alerts.value.filter((candidate) => candidate.id !== alert.id);
   alerts.value = alert.state === "normal" ? others : [alert, ...others].sort(byUrgency);
   if (alert.isHazard && alert.state === "raised-unacknowledged" && before?.state !== "raised-unacknowledged") {
-    announcement.value = `New hazard. ${alert.headline}`;
+    announcement.value = `New hazard. ${typeset(alert.headline)}`;
   }
 }
 

@@ -4,12 +4,13 @@ import type { Alert } from "../api/types";
 import { clockTime, span } from "../format/time";
 import { stateWord, typeset } from "../format/words";
 import { alerts, deviations, now, site } from "../state";
+import { Acknowledge } from "./Acknowledge";
+import { Detail } from "./Detail";
 import { ageOf } from "./freshness";
-import { Detail } from "./HazardBoard";
 import { Icon } from "./Icon";
 
 /** Alerts that are no hazards, and the alerts of before. */
-export function AlertList({ onAcknowledge }: { onAcknowledge: (alert: Alert) => void }) {
+export function AlertList({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]) => void }) {
   const open = deviations.value;
   return (
     <section id="alerts" aria-labelledby="alerts-title" tabIndex={-1} class="panel">
@@ -25,10 +26,10 @@ export function AlertList({ onAcknowledge }: { onAcknowledge: (alert: Alert) => 
   );
 }
 
-function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (alert: Alert) => void }) {
+function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (alerts: Alert[]) => void }) {
   const zone = site.value?.timeZone ?? "UTC";
   return (
-    <li class={`alert ${alert.isHazard ? "hazard" : "deviation"} ${alert.state}`}>
+    <li id={onAcknowledge === undefined ? undefined : `alert-${alert.id}`} tabIndex={-1} class={`alert ${alert.isHazard ? "hazard" : "deviation"} ${alert.state}`}>
       <p class="headline">
         <Icon name={alert.isHazard ? "hazard" : "deviation"} size={18} /> {typeset(alert.headline)}
       </p>
@@ -49,9 +50,7 @@ function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (ale
         </details>
       )}
       {onAcknowledge !== undefined && alert.acknowledgedAt === null && (
-        <button type="button" onClick={() => onAcknowledge(alert)}>
-          Acknowledge<span class="hidden">: {alert.headline}</span>
-        </button>
+        <Acknowledge alert={alert} onAcknowledge={onAcknowledge} />
       )}
     </li>
   );

@@ -4,9 +4,21 @@ import { useEffect, useRef } from "preact/hooks";
 /** A modal dialog: the browser keeps the focus inside and gives it back afterwards. */
 export function Dialog({ title, onClose, children }: { title: string; onClose: () => void; children: ComponentChildren }) {
   const dialog = useRef<HTMLDialogElement>(null);
-  useEffect(() => dialog.current?.showModal(), []);
+  const close = useRef(onClose);
+  close.current = onClose;
+  useEffect(() => {
+    const element = dialog.current!;
+    const onEscape = (): void => close.current();
+    element.showModal();
+    element.addEventListener("close", onEscape);
+    return () => {
+      // A dialog that is only taken off the page does not give the focus back.
+      element.removeEventListener("close", onEscape);
+      element.close();
+    };
+  }, []);
   return (
-    <dialog ref={dialog} aria-labelledby="dialog-title" onClose={onClose}>
+    <dialog ref={dialog} aria-labelledby="dialog-title">
       <h2 id="dialog-title">{title}</h2>
       {children}
     </dialog>

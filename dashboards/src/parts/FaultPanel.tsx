@@ -4,6 +4,7 @@ import type { Faults } from "../api/types";
 import { clockTime } from "../format/time";
 import { fixed } from "../format/numbers";
 import { typeset, words } from "../format/words";
+import { shortName } from "../hazards/board";
 import { link, now, site, sources } from "../state";
 
 /** Demo only: break the simulated laboratory, and mend it. */
@@ -113,14 +114,14 @@ export function FaultPanel() {
         <ul class="fault-list">
           {faults.active.map((fault) => (
             <li key={fault.id}>
-              {words(fault.kind)}, {sources.value.find((candidate) => candidate.id === fault.source)?.name ?? fault.source}
+              {words(fault.kind)}, {shortName(sources.value.find((candidate) => candidate.id === fault.source)?.name ?? fault.source)}
               {fault.channel !== null && `, ${fault.channel}`}
               {fault.size !== null && `, ${fixed(fault.size, 2)}`} · since {clockTime(fault.since, zone, now.value)}
               {fault.isScheduled ? (
                 <span class="quiet"> · ends by itself</span>
               ) : (
                 <button type="button" onClick={() => void act(clearFault(fault.id))}>
-                  Repair<span class="hidden"> {words(fault.kind)}</span>
+                  Repair<span class="hidden"> {words(fault.kind)}, {fault.channel ?? fault.source}</span>
                 </button>
               )}
             </li>

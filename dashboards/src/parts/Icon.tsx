@@ -1,3 +1,5 @@
+import type { ReadinessState } from "../api/types";
+
 // Shapes of our own: each state has its own outline, so that none is told by colour alone.
 const paths = {
   ready: "M8 1.5a6.5 6.5 0 1 0 0 13a6.5 6.5 0 1 0 0-13M4.8 8.2l2.3 2.3l4.2-4.6",
@@ -10,6 +12,17 @@ const paths = {
 } as const;
 
 export type IconName = keyof typeof paths;
+
+/** The shape of each state of readiness. */
+export const readinessIcon: Record<ReadinessState, IconName> = {
+  ready: "ready",
+  heating: "waiting",
+  cooling: "waiting",
+  settling: "waiting",
+  off: "off",
+  "not-fit": "stop",
+  unknown: "unknown",
+};
 
 export function Icon({ name, size = 20 }: { name: IconName; size?: number }) {
   return (

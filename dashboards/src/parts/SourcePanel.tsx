@@ -1,33 +1,26 @@
-import type { Assessment, ReadinessState, Source } from "../api/types";
+import type { Assessment, Source } from "../api/types";
 import { CavitySection } from "../cavity/CavitySection";
 import { celsius, decimalsFor, fixed, kelvin, significant } from "../format/numbers";
 import { clockTime, span } from "../format/time";
 import { unitText } from "../format/units";
 import { decisionWord, figureWord, kindWord, readinessMeaning, readinessWord, typeset, words } from "../format/words";
-import { assessments, now, site } from "../state";
+import { gone, standing } from "../hazards/board";
+import { alerts, assessments, now, site } from "../state";
 import { ageOf, isCurrent } from "./freshness";
-import { Icon, type IconName } from "./Icon";
-
-const icons: Record<ReadinessState, IconName> = {
-  ready: "ready",
-  heating: "waiting",
-  cooling: "waiting",
-  settling: "waiting",
-  off: "off",
-  "not-fit": "stop",
-  unknown: "unknown",
-};
+import { Icon, readinessIcon } from "./Icon";
+import { panelId, presentState } from "./ReadinessStrip";
 
 /** One source: may it be calibrated with now, at what temperature, and what stands against it. */
 export function SourcePanel({ source, onShow }: { source: Source; onShow: (source: Source) => void }) {
-  const { status } = source;
   const fresh = isCurrent(source);
-  const state: ReadinessState = fresh ? status.readiness.state : "unknown";
-  const hazards = status.openAlerts.filter((alert) => alert.isHazard);
-  const others = status.openAlerts.length - hazards.length;
+  const state = presentState(source);
+  const open = alerts.value.filter((alert) => alert.source === source.id);
+  const hazards = standing(open).length;
+  const past = gone(open).length;
+  const others = open.length - hazards - past;
   const heading = `source-${source.source}`;
   return (
-    <article class="panel source" aria-labelledby={heading}>
+    <article id={panelId(source)} tabIndex={-1} class="panel source" aria-labelledby={heading}>
       <header>
         <h3 id={heading}>{typeset(source.name)}</h3>
         <p class="quiet">
@@ -35,14 +28,21 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
         </p>
       </header>
       <p class={`readiness ${state}`} title={readinessMeaning[state]}>
-        <Icon name={icons[state]} size={26} />
+        <Icon name={readinessIcon[state]} size={26} />
         <strong>{readinessWord[state]}</strong>
       </p>
-      {hazards.length > 0 && (
+      {hazards > 0 && (
         <p class="mark hazard">
           <Icon name="hazard" />
           <a href="#hazards">
-            {hazards.length} open hazard{hazards.length === 1 ? "" : "s"}
+            {hazards} standing hazard{hazards === 1 ? "" : "s"}
+          </a>
+        </p>
+      )}
+      {past > 0 && (
+        <p class="quiet">
+          <a href="#gone">
+            {past} hazard{past === 1 ? "" : "s"} gone, not yet acknowledged
           </a>
         </p>
       )}
@@ -127,7 +127,7 @@ function Reasons({ source, fresh }: { source: Source; fresh: boolean }) {
     <ul>
       {reasons.map((reason) => (
         <li key={reason.code + reason.text} class={reason.blocks ? "" : "quiet"}>
-          {typeset(reason.text)}
+          {typeset(reason.text.startsWith(`${source.name}, `) ? reason.text.slice(source.name.length + 2) : reason.text)}
         </li>
       ))}
     </ul>
