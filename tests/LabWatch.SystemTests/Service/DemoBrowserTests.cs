@@ -21,6 +21,8 @@ public sealed class DemoBrowserTests
         await using Browser browser = await Browser.StartAsync();
         IPage page = await browser.OpenAsync(service.Address, width, height);
         await Assertions.Expect(page.GetByText("Rowan").First).ToBeVisibleAsync(Browser.Patient);
+        // A temperature is shown once the simulated laboratory runs; before that it takes no fault.
+        await Assertions.Expect(page.Locator("#panel-rowan .measured .number")).ToBeVisibleAsync(new() { Timeout = 120_000 });
 
         await Poll.UntilAsync(
             "the fault is injected",
