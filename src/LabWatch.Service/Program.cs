@@ -13,4 +13,6 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     CheckConfigCommand.Create(),
     CalcCommand.Create(),
 };
-return await root.Parse(args).InvokeAsync();
+
+// The host hears SIGTERM and Ctrl-C itself and takes its own time to end; a second listener would cut it off after two seconds, with exit code 143.
+return await root.Parse(args).InvokeAsync(new InvocationConfiguration { ProcessTerminationTimeout = null });
