@@ -10,6 +10,10 @@ export function Dialog({ title, onClose, children }: { title: string; onClose: (
     const element = dialog.current!;
     const onEscape = (): void => close.current();
     element.showModal();
+    // The first field can lie far below: a dialog that asks for nothing starts at its title.
+    if (element.querySelector("[autofocus]") === null) {
+      element.querySelector("h2")?.focus();
+    }
     element.addEventListener("close", onEscape);
     return () => {
       // A dialog that is only taken off the page does not give the focus back.
@@ -19,7 +23,7 @@ export function Dialog({ title, onClose, children }: { title: string; onClose: (
   }, []);
   return (
     <dialog ref={dialog} aria-labelledby="dialog-title">
-      <h2 id="dialog-title">{title}</h2>
+      <h2 id="dialog-title" tabIndex={-1}>{title}</h2>
       {children}
     </dialog>
   );
