@@ -3,6 +3,7 @@ using System.Text;
 using LabWatch.Intake.Options;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
+using LabWatch.Service.Configuration;
 using LabWatch.Service.Hosting;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
@@ -31,20 +32,20 @@ internal static class DemoCommand
     {
         TextWriter error = parsed.InvocationConfiguration.Error;
         double speed = parsed.GetValue(Speed);
-        (ServiceStart? prepared, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
+        (ServiceStart? start, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
             parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch-demo"),
             parsed.GetValue(CommonOptions.Config)?.FullName,
             parsed.GetValue(CommonOptions.Urls)!,
             data => DemoClock.Resume(data.Path, speed, TimeProvider.System),
-            LoadLab);
-        if (prepared is null)
+            LoadLab,
+            settings => ForDemo(settings, BrokerPort(parsed)));
+        if (start is null)
         {
             FindingPrinter.Write(error, findings);
             return ExitCode.BadInput;
         }
 
-        EmbeddedBrokerOptions broker = (prepared.Settings.Intake.EmbeddedBroker ?? new EmbeddedBrokerOptions()) with { Address = "127.0.0.1", Port = (int)parsed.GetValue(Port) };
-        ServiceStart start = prepared with { Settings = prepared.Settings with { Intake = prepared.Settings.Intake with { EmbeddedBroker = broker, ExternalBroker = null } } };
+        EmbeddedBrokerOptions broker = start.Settings.Intake.EmbeddedBroker!;
         DemoOptions demo = new((int)parsed.GetValue(Days), (long)parsed.GetValue(Seed), broker.Address, broker.Port, start.Data.Path) { TopicRoot = start.Settings.Intake.Root };
         using (start.Data)
         {
@@ -58,6 +59,28 @@ internal static class DemoCommand
                 error,
                 cancellationToken);
         }
+    }
+
+    private const int UnsealedReadings = 400_000;
+
+    // The simulated devices publish to the embedded broker, on this machine alone. A history of weeks arrives in minutes: a low bound
+    // on what waits unsealed keeps the memory of the demo small.
+    private static ServiceSettings ForDemo(ServiceSettings settings, int port) => settings with
+    {
+        Intake = settings.Intake with
+        {
+            EmbeddedBroker = (settings.Intake.EmbeddedBroker ?? new EmbeddedBrokerOptions()) with { Address = "127.0.0.1", Port = port },
+            ExternalBroker = null,
+        },
+        Readings = settings.Readings with { UnsealedReadingsLimit = UnsealedReadings },
+    };
+
+    // A machine with a broker of its own has the usual port taken; the demo then takes a free one, unless a port was asked for.
+    private static int BrokerPort(ParseResult parsed)
+    {
+        int port = (int)parsed.GetValue(Port);
+        bool isAskedFor = parsed.GetResult(Port) is { Implicit: false };
+        return isAskedFor || PortProbe.IsFree(System.Net.IPAddress.Loopback, port) ? port : PortProbe.FreePort();
     }
 
     // The first start writes the lab file for its day; later starts go on with the one in force.
@@ -74,6 +97,7 @@ internal static class DemoCommand
         output.WriteLine();
         output.WriteLine($"  {start.Lab.Current.Site.Name}: an invented laboratory, its telemetry simulated{(speed == 1 ? string.Empty : FormattableString.Invariant($", {speed} times faster than the clock"))}.");
         output.WriteLine($"  Open  {string.Join("  or  ", urls)}");
+        output.WriteLine($"  MQTT  127.0.0.1:{start.Settings.Intake.EmbeddedBroker!.Port}");
         output.WriteLine($"  Data  {start.Data.Path}  (a later start goes on from there)");
         output.WriteLine("  LabWatch is not a protective device. Ctrl-C ends it.");
         output.WriteLine();

@@ -12,12 +12,14 @@ internal static class StartPreparation
     /// <param name="loadLab">Gives the lab, once the data directory is there.</param>
     /// <param name="makeClock">Gives the clock, once the data directory is there.</param>
     /// <param name="urls">Where pages and API are served.</param>
+    /// <param name="adapt">Changes the options that were read, for commands that fix some of them.</param>
     public static (ServiceStart? Start, IReadOnlyList<Finding> Findings) Prepare(
         string dataPath,
         string? configFile,
         string urls,
         Func<DataDirectory, TimeProvider> makeClock,
-        Func<DataDirectory, TimeProvider, (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings)> loadLab)
+        Func<DataDirectory, TimeProvider, (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings)> loadLab,
+        Func<ServiceSettings, ServiceSettings>? adapt = null)
     {
         (IConfigurationRoot? configuration, IReadOnlyList<Finding> unreadable) = SettingsReader.Load(configFile);
         (DataDirectory? data, Finding? finding) = DataDirectory.Open(dataPath);
@@ -30,7 +32,8 @@ internal static class StartPreparation
         TimeProvider clock = makeClock(data);
         (LabSnapshotSource? lab, IReadOnlyList<Finding> labFindings) = loadLab(data, clock);
         (ServiceSettings settings, IReadOnlyList<Finding> optionFindings) = SettingsReader.Read(configuration, data.Path, InstallationId.Of(data.Path));
-        IReadOnlyList<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. labFindings];
+        settings = adapt?.Invoke(settings) ?? settings;
+        IReadOnlyList<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. labFindings, .. PortFindings(settings)];
         if (findings.Count > 0 || lab is null)
         {
             data.Dispose();
@@ -40,18 +43,37 @@ internal static class StartPreparation
         return (new ServiceStart(data, lab, settings, configuration, urls, clock), []);
     }
 
+    private static IEnumerable<Finding> PortFindings(ServiceSettings settings) => settings.Intake.EmbeddedBroker is { } broker
+        ? PortProbe.CheckBroker("Intake:EmbeddedBroker:Port", broker.Address, broker.Port)
+        : [];
+
     private static IEnumerable<Finding> UrlFindings(string urls)
     {
         string[] all = urls.Split(';', StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries);
         if (all.Length == 0)
         {
-            yield return new Finding("bad-address", "--urls", "No address is given.", urls, $"Use for example {Commands.CommonOptions.DefaultUrls}.");
+            return [BadAddress("No address is given.", urls)];
         }
 
-        foreach (string url in all.Where(url => !Uri.TryCreate(url.Replace("*", "any", StringComparison.Ordinal).Replace("+", "any", StringComparison.Ordinal), UriKind.Absolute, out Uri? parsed)
-            || (parsed.Scheme != Uri.UriSchemeHttp && parsed.Scheme != Uri.UriSchemeHttps)))
+        List<Finding> findings = [];
+        List<Uri> usable = [];
+        foreach (string url in all)
         {
-            yield return new Finding("bad-address", "--urls", "This is not an http or https address.", Finding.Quote(url), $"Use for example {Commands.CommonOptions.DefaultUrls}.");
+            // A star or plus stands for every address of the machine.
+            string readable = url.Replace("//*", "//0.0.0.0", StringComparison.Ordinal).Replace("//+", "//0.0.0.0", StringComparison.Ordinal);
+            if (Uri.TryCreate(readable, UriKind.Absolute, out Uri? parsed) && (parsed.Scheme == Uri.UriSchemeHttp || parsed.Scheme == Uri.UriSchemeHttps))
+            {
+                usable.Add(parsed);
+            }
+            else
+            {
+                findings.Add(BadAddress("This is not an http or https address.", url));
+            }
         }
+
+        return [.. findings, .. PortProbe.CheckUrls(usable)];
     }
+
+    private static Finding BadAddress(string message, string value) =>
+        new("bad-address", "--urls", message, Finding.Quote(value), $"Use for example {Commands.CommonOptions.DefaultUrls}.");
 }

@@ -8,12 +8,13 @@ using MQTTnet.Exceptions;
 namespace LabWatch.Simulator.Demo;
 
 /// <summary>
-/// Publishes the demo lab over MQTT: history as fast as the broker acknowledges, and live packs once a second beside it, each over a connection of its own.
+/// Publishes the demo lab over MQTT: history as fast as the broker acknowledges, and live packs once a second beside it over a connection of their own.
 /// </summary>
 [SuppressMessage("Performance", "CA1812", Justification = "Made by the container.")]
 internal sealed class DemoPublisher(DemoOptions options, DemoEngine engine, TimeProvider clock, ILogger<DemoPublisher> logger) : BackgroundService
 {
     private const int HistoryChunkSecond = 1200;
+    private const int HistoryConnections = 16;
     private static readonly TimeSpan FirstPause = TimeSpan.FromMilliseconds(500);
     private static readonly TimeSpan LongestPause = TimeSpan.FromSeconds(10);
     private static readonly TimeSpan KeepLiveEvery = TimeSpan.FromSeconds(30);
@@ -31,12 +32,12 @@ internal sealed class DemoPublisher(DemoOptions options, DemoEngine engine, Time
         }
 
         return Task.WhenAll(
-            Task.Run(() => KeepAlive("demo-live", LiveAsync, stoppingToken), stoppingToken),
-            Task.Run(() => KeepAlive("demo-history", HistoryAsync, stoppingToken), stoppingToken));
+            Task.Run(() => KeepAlive("demo-live", 1, LiveAsync, stoppingToken), stoppingToken),
+            Task.Run(() => KeepAlive("demo-history", HistoryConnections, HistoryAsync, stoppingToken), stoppingToken));
     }
 
     // The outermost loop: whatever ends a session is logged, and the next one starts from what was acknowledged. Nothing is lost.
-    private async Task KeepAlive(string clientId, Func<PackPublisher, CancellationToken, Task> session, CancellationToken stopping)
+    private async Task KeepAlive(string clientId, int connections, Func<PackPublisher, CancellationToken, Task> session, CancellationToken stopping)
     {
         TimeSpan pause = FirstPause;
         while (!stopping.IsCancellationRequested)
@@ -44,7 +45,7 @@ internal sealed class DemoPublisher(DemoOptions options, DemoEngine engine, Time
             long began = clock.GetTimestamp();
             try
             {
-                await using PackPublisher publisher = await PackPublisher.ConnectAsync(options, clientId, clock, stopping);
+                await using PackPublisher publisher = await PackPublisher.ConnectAsync(options, clientId, connections, clock, stopping);
                 Log.Connected(logger, clientId, options.Host, options.Port);
                 await session(publisher, stopping);
                 return;
