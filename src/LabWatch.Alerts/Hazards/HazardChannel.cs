@@ -23,12 +23,8 @@ internal sealed class HazardChannel(ReferenceSource source, Channel channel, Sur
     /// <summary>How raw becomes temperature now; replaced when another certificate comes into force.</summary>
     public SurfaceThermometer Thermometer { get; set; }
 
-    /// <summary>Whether a channel is a surface that somebody can touch.</summary>
-    public static bool IsSurface(Channel channel) =>
-        channel.Contact is not null || channel.Quantity is ChannelQuantity.OuterSurface or ChannelQuantity.ApertureLip;
-
     /// <summary>Whether silence of a channel is a hazard.</summary>
-    public static bool IsWatched(Channel channel) => channel.IsHazardChannel || IsSurface(channel);
+    public static bool IsWatched(Channel channel) => channel.IsHazardChannel || channel.IsTouchable;
 
     /// <summary>Whether a raw value is one that the sensor can give.</summary>
     public bool IsPossible(double raw) =>

@@ -39,7 +39,7 @@ internal sealed class HazardMap
                     .. source.Channels.Where(HazardChannel.IsWatched).Select(channel => new HazardChannel(
                         source,
                         channel,
-                        HazardChannel.IsSurface(channel) ? SurfaceLimit.For(channel.Contact) : null,
+                        channel.IsTouchable ? SurfaceLimit.For(channel.Contact) : null,
                         silence(channel),
                         before.Find(channel.Key)?.State ?? newState(channel))),
                 ])));

@@ -28,6 +28,12 @@ public sealed record Channel(ChannelKey Key, string Name, ChannelQuantity Quanti
     /// <summary>How a touchable surface can hurt; null where the channel is no touchable surface.</summary>
     public SurfaceContact? Contact { get; init; }
 
+    /// <summary>
+    /// Whether the channel is a surface that somebody can touch: every outer surface, and an aperture lip where a <see cref="Contact"/> is
+    /// stated (a lip is hot in use and commonly out of reach behind the aperture plate).
+    /// </summary>
+    public bool IsTouchable => Contact is not null || Quantity == ChannelQuantity.OuterSurface;
+
     /// <summary>Whether silence of this channel is itself a hazard. True for every channel with a <see cref="Contact"/>.</summary>
     public bool IsHazardChannel { get; init; }
 

@@ -49,13 +49,15 @@ public sealed class HotSurfaceTests
         Assert.Equal(limit, Assert.Single(bench.Conditions.Found).Limit);
     }
 
-    [Fact]
-    public void Lip_and_case_without_a_stated_contact_are_watched_as_unknown()
+    [Theory]
+    [InlineData(ChannelQuantity.OuterSurface, true)]
+    [InlineData(ChannelQuantity.ApertureLip, false)]
+    public void Without_a_stated_contact_an_outer_surface_is_watched_as_unknown_and_a_lip_is_not(ChannelQuantity quantity, bool isWatched)
     {
-        Channel lip = new(new ChannelKey(TestSite.Rowan, "lip"), "Lip", ChannelQuantity.ApertureLip, "Cel", TimeSpan.FromSeconds(1));
-        WatchBench bench = new(TestSite.Lab(TestSite.Source(TestSite.Rowan, lip)));
-        bench.Send(48, channel: "lip");
-        Assert.Equal([Raised], bench.Edges);
+        Channel surface = new(new ChannelKey(TestSite.Rowan, "surface"), "Surface", quantity, "Cel", TimeSpan.FromSeconds(1));
+        WatchBench bench = new(TestSite.Lab(TestSite.Source(TestSite.Rowan, surface)));
+        bench.Send(48, channel: "surface");
+        Assert.Equal(isWatched, bench.Edges.Count > 0);
     }
 
     [Fact]

@@ -55,8 +55,8 @@ internal static class SourceViews
         channel.Interval.TotalSeconds,
         channel.AxialPositionMillimetre,
         channel.IsReference,
-        TouchLimits.IsTouchable(channel),
-        channel.IsHazardChannel || TouchLimits.IsTouchable(channel),
+        channel.IsTouchable,
+        channel.IsHazardChannel || channel.IsTouchable,
         channel.Band,
         TouchLimits.HotCelsius(channel));
 
