@@ -72,8 +72,8 @@ internal sealed class HazardMap
                 "surface-not-evaluable", channel.Key.ToString(),
                 "A raw reading in this unit means no temperature without a certificate in force, so this surface is watched for silence only.",
                 channel.Channel.Unit, "Install an instrument with a certificate for this unit, or read the channel in Cel.")),
-        .. Snapshot.Sources.Where(source => !source.Channels.Any(HazardChannel.IsSurface)).Select(source => new Finding(
+        .. Snapshot.Sources.Where(source => !source.Channels.Any(channel => channel.IsTouchable)).Select(source => new Finding(
             "no-surface-channel", source.Key.ToString(), "No touchable surface of this source has a sensor, so a hot surface of it cannot be noticed.",
-            null, "Add a channel with a contact, or one for the outer surface or the aperture lip.")),
+            null, "Add a channel for the outer surface, or a contact to the one of the aperture lip.")),
     ];
 }
