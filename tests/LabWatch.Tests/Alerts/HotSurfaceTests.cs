@@ -57,7 +57,7 @@ public sealed class HotSurfaceTests
         Channel surface = new(new ChannelKey(TestSite.Rowan, "surface"), "Surface", quantity, "Cel", TimeSpan.FromSeconds(1));
         WatchBench bench = new(TestSite.Lab(TestSite.Source(TestSite.Rowan, surface)));
         bench.Send(48, channel: "surface");
-        Assert.Equal(isWatched, bench.Edges.Count > 0);
+        Assert.Equal(isWatched, bench.Edges.Any());
     }
 
     [Fact]
