@@ -6,18 +6,18 @@ namespace LabWatch.Readings;
 /// <summary>Seals hours in the background: every few seconds what is due, at once where memory or journal are at their limit.</summary>
 internal sealed class SealingService(IReadingSealer sealer, IReadingStoreHealth store, TimeProvider clock, ILogger<SealingService> log) : BackgroundService
 {
-    private static readonly TimeSpan _look = TimeSpan.FromMilliseconds(250);
-    private static readonly TimeSpan _turn = TimeSpan.FromSeconds(5);
+    private static readonly TimeSpan Look = TimeSpan.FromMilliseconds(250);
+    private static readonly TimeSpan Turn = TimeSpan.FromSeconds(5);
 
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
         await Task.Yield();
         long last = clock.GetTimestamp();
         await TryAsync(() => store.OpenAsync(stoppingToken).AsTask(), stoppingToken);
-        using PeriodicTimer timer = new(_look, clock);
+        using PeriodicTimer timer = new(Look, clock);
         while (await TickAsync(timer, stoppingToken))
         {
-            if (sealer.NeedsSealing || clock.GetElapsedTime(last) >= _turn)
+            if (sealer.NeedsSealing || clock.GetElapsedTime(last) >= Turn)
             {
                 last = clock.GetTimestamp();
                 await TryAsync(() => sealer.SealDueAsync(stoppingToken), stoppingToken);

@@ -10,9 +10,9 @@ internal static class DecimalGrid
 
     private const double MaximumWhole = 9007199254740992.0;
 
-    private static readonly double[] _powers = [1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12];
+    private static readonly double[] Powers = [1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12];
 
-    public static double Power(int exponent) => _powers[exponent];
+    public static double Power(int exponent) => Powers[exponent];
 
     /// <summary>Whether a value lies on the grid, and its whole number. NaN, infinities and negative zero never do.</summary>
     public static bool TryWhole(double value, double power, out long whole)
@@ -38,7 +38,7 @@ internal static class DecimalGrid
         exceptions = 0;
         foreach (double value in values)
         {
-            if (TryWhole(value, _powers[exponent], out _))
+            if (TryWhole(value, Powers[exponent], out _))
             {
                 continue;
             }
@@ -66,7 +66,7 @@ internal static class DecimalGrid
 
         for (int e = exponent + 1; e <= MaximumExponent; e++)
         {
-            if (TryWhole(value, _powers[e], out _))
+            if (TryWhole(value, Powers[e], out _))
             {
                 return e;
             }

@@ -10,7 +10,7 @@ internal static class SealPolicy
     private const int SupplementPatience = 5;
 
     /// <summary>Hours that took a reading within this time are left alone while others can make room.</summary>
-    private static readonly TimeSpan _busy = TimeSpan.FromSeconds(5);
+    private static readonly TimeSpan Busy = TimeSpan.FromSeconds(5);
 
     public static IReadOnlyList<SealCandidate> Choose(
         IReadOnlyList<SealCandidate> candidates, ReadingsOptions options, long journalBytes, long floor, long change)
@@ -37,7 +37,7 @@ internal static class SealPolicy
     private static void MakeRoom(IReadOnlyList<SealCandidate> candidates, HashSet<SealCandidate> chosen, long unsealed, long target)
     {
         IEnumerable<SealCandidate> quietestFirst = candidates
-            .OrderByDescending(one => one.Quiet >= _busy ? one.Quiet : TimeSpan.Zero)
+            .OrderByDescending(one => one.Quiet >= Busy ? one.Quiet : TimeSpan.Zero)
             .ThenBy(one => one.Hour.Hour);
         foreach (SealCandidate one in quietestFirst)
         {

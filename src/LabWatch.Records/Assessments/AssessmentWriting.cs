@@ -55,7 +55,12 @@ internal static class AssessmentWriting
         {
             head = new AssessmentHeadRow
             {
-                Site = row.Site, Source = row.Source, Criterion = row.Criterion, Scope = row.Scope, AssessmentId = row.Id, WindowEnd = long.MinValue,
+                Site = row.Site,
+                Source = row.Source,
+                Criterion = row.Criterion,
+                Scope = row.Scope,
+                AssessmentId = row.Id,
+                WindowEnd = long.MinValue,
             };
             context.AssessmentHeads.Add(head);
         }

@@ -24,7 +24,12 @@ internal sealed class LabImportLedger(RecordsDatabase database) : ILabImportLedg
 
                 LabImportRow row = new()
                 {
-                    Site = site, Sequence = (latest?.Sequence ?? 0) + 1, Digest = digest, Document = document, At = at.Microseconds, By = by,
+                    Site = site,
+                    Sequence = (latest?.Sequence ?? 0) + 1,
+                    Digest = digest,
+                    Document = document,
+                    At = at.Microseconds,
+                    By = by,
                 };
                 context.LabImports.Add(row);
                 return ToImport(row);

@@ -13,7 +13,7 @@ namespace LabWatch.Benchmarks.Readings;
 internal static class StoreBenchmark
 {
     private const int Sources = 20;
-    private static readonly Instant _start = Instant.FromUnixSeconds(1_764_547_200);
+    private static readonly Instant Start = Instant.FromUnixSeconds(1_764_547_200);
 
     public static async Task<int> RunAsync(string[] args)
     {
@@ -78,15 +78,15 @@ internal static class StoreBenchmark
         for (int hour = 0; hour < 24 * days; hour++)
         {
             await store.AppendAsync(
-                [.. Enumerable.Range(0, 3600 / stepSeconds).Select(i => telemetry.Pack(source, 0, _start + TimeSpan.FromSeconds((hour * 3600) + (i * stepSeconds))))],
+                [.. Enumerable.Range(0, 3600 / stepSeconds).Select(i => telemetry.Pack(source, 0, Start + TimeSpan.FromSeconds((hour * 3600) + (i * stepSeconds))))],
                 default);
         }
 
         await store.SealEverythingAsync(default);
         long readings = 24L * days * 3600 / stepSeconds * 12;
         Print($"{name}: {Size(folder, readings)}");
-        TimeWindow day = new(_start, _start + TimeSpan.FromHours(24));
-        TimeWindow half = new(_start + TimeSpan.FromHours(7.7), _start + TimeSpan.FromHours(8.2));
+        TimeWindow day = new(Start, Start + TimeSpan.FromHours(24));
+        TimeWindow half = new(Start + TimeSpan.FromHours(7.7), Start + TimeSpan.FromHours(8.2));
         string[] all = [.. (await store.NewestAsync(source, default)).Select(one => one.Channel)];
         await TimeAsync($"{name}: one channel, 24 h raw", async () => (await store.ReadAsync(source, ["well-front"], day, default)).Series[0].Count);
         await TimeAsync($"{name}: one channel, 30 min raw", async () => (await store.ReadAsync(source, ["well-front"], half, default)).Series[0].Count);
@@ -146,7 +146,7 @@ internal static class StoreBenchmark
         List<ReadingPack> packs = [];
         for (int i = 0; i < readings / width; i++)
         {
-            packs.Add(telemetry.Pack(sources[i % Sources], i % Sources, _start + TimeSpan.FromSeconds(i / Sources), width));
+            packs.Add(telemetry.Pack(sources[i % Sources], i % Sources, Start + TimeSpan.FromSeconds(i / Sources), width));
         }
 
         return [.. packs.Chunk(packsACommit)];

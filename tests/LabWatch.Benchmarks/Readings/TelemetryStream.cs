@@ -11,7 +11,7 @@ namespace LabWatch.Benchmarks.Readings;
 internal sealed class TelemetryStream(int seed)
 {
     /// <summary>Channel, level, resolution, noise as one standard deviation, ripple amplitude; all in the channel's unit.</summary>
-    private static readonly (string Name, double Level, double Resolution, double Noise, double Ripple)[] _channels =
+    private static readonly (string Name, double Level, double Resolution, double Noise, double Ripple)[] Channels =
     [
         ("well-front", 138.5055, 1e-4, 3e-4, 2e-3),
         ("well-middle", 138.5102, 1e-4, 3e-4, 2e-3),
@@ -47,10 +47,10 @@ internal sealed class TelemetryStream(int seed)
         double phase = time.Microseconds / 1e6 * 2 * Math.PI / 600;
         for (int i = 0; i < width; i++)
         {
-            var channel = _channels[i % _channels.Length];
+            var channel = Channels[i % Channels.Length];
             drift[i] += 0.02 * channel.Noise * Normal();
             double value = channel.Level + drift[i] + (channel.Ripple * Math.Sin(phase + i)) + (channel.Noise * Normal());
-            string name = i < _channels.Length ? channel.Name : Names.Of(channel.Name, i / _channels.Length);
+            string name = i < Channels.Length ? channel.Name : Names.Of(channel.Name, i / Channels.Length);
             readings[i] = new Reading(name, time, Rounded(value, channel.Resolution));
         }
 
@@ -67,13 +67,13 @@ internal sealed class TelemetryStream(int seed)
 
     private static class Names
     {
-        private static readonly Dictionary<(string, int), string> _names = [];
+        private static readonly Dictionary<(string, int), string> KnownNames = [];
 
         public static string Of(string name, int number)
         {
-            if (!_names.TryGetValue((name, number), out string? known))
+            if (!KnownNames.TryGetValue((name, number), out string? known))
             {
-                _names.Add((name, number), known = FormattableString.Invariant($"{name}-{number}"));
+                KnownNames.Add((name, number), known = FormattableString.Invariant($"{name}-{number}"));
             }
 
             return known;

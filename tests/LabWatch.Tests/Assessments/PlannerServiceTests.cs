@@ -62,7 +62,9 @@ public sealed class PlannerServiceTests
             ["Assessments:WakeInterval", "Assessments:HourQuiet", "Assessments:Stability:Every", "Assessments:Concurrency"],
             new AssessmentsOptions
             {
-                WakeInterval = TimeSpan.Zero, HourQuiet = TimeSpan.FromDays(1), Concurrency = 0,
+                WakeInterval = TimeSpan.Zero,
+                HourQuiet = TimeSpan.FromDays(1),
+                Concurrency = 0,
                 Stability = StabilityCriterion.DefaultSchedule with { Every = TimeSpan.FromHours(1) },
             }.Validate().Select(finding => finding.Where));
 

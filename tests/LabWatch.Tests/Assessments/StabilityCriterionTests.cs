@@ -185,7 +185,8 @@ public sealed class StabilityCriterionTests
     {
         Certificate next = TestLab.IndicatorCertificate with
         {
-            Id = "cal-next", ValidFrom = Window.Start + TimeSpan.FromMinutes(15),
+            Id = "cal-next",
+            ValidFrom = Window.Start + TimeSpan.FromMinutes(15),
             Characteristic = new CorrectionTableCharacteristic(0.03, 2, [new CorrectionPoint(300, 0.1)]),
         };
         AssertNotDecided(

@@ -30,7 +30,8 @@ internal static class TestLab
 
     public static Certificate ResistanceCertificate { get; } = IndicatorCertificate with
     {
-        Id = "cal-prt", Characteristic = new CallendarVanDusenCharacteristic(0.03, 2, 100, 3.9083e-3, -5.775e-7, -4.183e-12),
+        Id = "cal-prt",
+        Characteristic = new CallendarVanDusenCharacteristic(0.03, 2, 100, 3.9083e-3, -5.775e-7, -4.183e-12),
     };
 
     public static AcceptanceLimit Limit { get; } = new(

@@ -12,7 +12,7 @@ namespace LabWatch.Tests.Readings;
 public sealed class BlockCodecTests
 {
     private const long Hour = 1_764_590_400L * Instant.MicrosecondsPerSecond;
-    private static readonly BlockHeader _header = new(new SourceKey("hollin-vale", "fir"), Hour, 0, new byte[32]);
+    private static readonly BlockHeader SampleHeader = new(new SourceKey("hollin-vale", "fir"), Hour, 0, new byte[32]);
 
     [Property(MaxTest = 300)]
     public void Any_bit_patterns_come_back(long[] bits) => RoundTrip([.. bits.Select(BitConverter.Int64BitsToDouble)]);
@@ -83,8 +83,8 @@ public sealed class BlockCodecTests
     public void Values_of_one_instant_in_many_channels_share_their_times()
     {
         long[] times = [.. Enumerable.Range(0, 3600).Select(i => Hour + (i * 1_000_000L) + (i * 7919L % 2000))];
-        byte[] one = new BlockEncoder().Encode(_header, [Series("a", times, new double[3600])]);
-        byte[] twelve = new BlockEncoder().Encode(_header, [.. Enumerable.Range(0, 12).Select(i => Series($"c{i:D2}", [.. times], new double[3600]))]);
+        byte[] one = new BlockEncoder().Encode(SampleHeader, [Series("a", times, new double[3600])]);
+        byte[] twelve = new BlockEncoder().Encode(SampleHeader, [.. Enumerable.Range(0, 12).Select(i => Series($"c{i:D2}", [.. times], new double[3600]))]);
         Assert.InRange(twelve.Length, one.Length, one.Length + 600);
     }
 
@@ -92,7 +92,7 @@ public sealed class BlockCodecTests
     public void The_header_and_directory_say_what_is_inside()
     {
         byte[] previous = [.. Enumerable.Range(0, 32).Select(i => (byte)i)];
-        BlockHeader header = _header with { Part = 3, PreviousDigest = previous };
+        BlockHeader header = SampleHeader with { Part = 3, PreviousDigest = previous };
         SealedBlock block = SealedBlock.Open(new BlockEncoder().Encode(header, [Series("a", [Hour + 5], [1]), Series("b", [Hour + 5, Hour + 3_599_999_999], [1, 2])]));
         Assert.Equal((header.Source, Hour, 3, 3), (block.Header.Source, block.Header.Hour, block.Header.Part, block.Readings));
         Assert.Equal(previous, block.Header.PreviousDigest.ToArray());
@@ -105,7 +105,7 @@ public sealed class BlockCodecTests
     {
         ReadingSeries[] series = [Series("a", [Hour, Hour + 1], [0.5, 0.25])];
         BlockEncoder encoder = new();
-        Assert.Equal(encoder.Encode(_header, series), encoder.Encode(_header, series));
+        Assert.Equal(encoder.Encode(SampleHeader, series), encoder.Encode(SampleHeader, series));
     }
 
     private static void RoundTrip(double[] values)
@@ -123,7 +123,7 @@ public sealed class BlockCodecTests
             return;
         }
 
-        SealedBlock block = SealedBlock.Open(new BlockEncoder().Encode(_header, series));
+        SealedBlock block = SealedBlock.Open(new BlockEncoder().Encode(SampleHeader, series));
         Assert.Equal(series.Select(one => one.Channel), block.Channels.Select(one => one.Name));
         for (int i = series.Count - 1; i >= 0; i--)
         {

@@ -28,7 +28,11 @@ public abstract class AlertLedgerContract : IAsyncLifetime
         Alert raised = Sample.Alert(Sample.Fir, Guid.CreateVersion7(), Sample.Noon);
         Alert acknowledged = raised with
         {
-            State = AlertState.RaisedAcknowledged, AcknowledgedAt = Sample.Noon + TimeSpan.FromMinutes(1), AcknowledgedBy = "kim", AcknowledgeNote = "seen", Value = 60,
+            State = AlertState.RaisedAcknowledged,
+            AcknowledgedAt = Sample.Noon + TimeSpan.FromMinutes(1),
+            AcknowledgedBy = "kim",
+            AcknowledgeNote = "seen",
+            Value = 60,
         };
         Alert normal = acknowledged with { State = AlertState.Normal, ReturnedAt = Sample.Noon + TimeSpan.FromMinutes(5), Headline = "over", Value = null };
         await Ledger.RecordAsync(Sample.Raised(raised), [], Token);
@@ -92,7 +96,8 @@ public abstract class AlertLedgerContract : IAsyncLifetime
         for (int index = 0; index < 5; index++)
         {
             Alert alert = Sample.Alert(index == 2 ? Sample.Yew : Sample.Fir, Guid.CreateVersion7(), Sample.Noon + TimeSpan.FromSeconds(index / 2))
-                with { Subject = $"s{index}", State = index == 0 ? AlertState.Normal : AlertState.RaisedUnacknowledged };
+                with
+            { Subject = $"s{index}", State = index == 0 ? AlertState.Normal : AlertState.RaisedUnacknowledged };
             await Ledger.RecordAsync(Sample.Raised(alert), [], Token);
         }
 

@@ -38,7 +38,11 @@ public abstract class AssessmentLedgerContract : IAsyncLifetime
     {
         Assessment written = Sample.Assessment(Sample.Fir, 0) with
         {
-            Value = Estimate.None, CoverageFactor = double.NaN, Decision = Decision.NotDecided, ConformityProbability = null, Limit = null,
+            Value = Estimate.None,
+            CoverageFactor = double.NaN,
+            Decision = Decision.NotDecided,
+            ConformityProbability = null,
+            Limit = null,
         };
         await Ledger.RecordAsync(written, Token);
         AssertSame(written, await Ledger.FindAsync(written.Id, Token));
