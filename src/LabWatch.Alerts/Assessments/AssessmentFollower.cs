@@ -28,6 +28,7 @@ internal sealed class AssessmentFollower(
 
     private readonly Dictionary<(SourceKey, string, string), DecidedWindow> _decided = [];
     private long _position;
+    private long _recorded;
     private bool _positioned;
 
     /// <summary>Takes over what the journal holds.</summary>
@@ -53,7 +54,7 @@ internal sealed class AssessmentFollower(
             }
             catch (Exception exception) when (!stopping.IsCancellationRequested)
             {
-                // Nothing is lost: the position has not moved. Hazards do not come this way.
+                // Nothing is lost: what was not handed to the desk is asked for again, and the journal keeps the rest. Hazards do not come this way.
                 wait = TimeSpan.FromSeconds(Math.Clamp(wait.TotalSeconds * 2, 1, LongestWait.TotalSeconds));
                 Log.FollowFailed(logger, wait, exception);
             }
@@ -69,9 +70,12 @@ internal sealed class AssessmentFollower(
         using CancellationTokenSource both = CancellationTokenSource.CreateLinkedTokenSource(timeout.Token, stopping);
         if (!_positioned)
         {
-            _position = Math.Max(_position, await ledger.PositionAsync(Reader, both.Token));
+            _recorded = await ledger.PositionAsync(Reader, both.Token);
+            _position = Math.Max(_position, _recorded);
             _positioned = true;
         }
+
+        await RecordPositionAsync(both.Token);
 
         IReadOnlyList<(long Sequence, Assessment Assessment)> batch = await assessments.QueuedAsync(_position, BatchSize, both.Token);
         if (batch.Count == 0)
@@ -81,8 +85,7 @@ internal sealed class AssessmentFollower(
 
         _position = batch[^1].Sequence;
         Hand(batch);
-        await DoneAsync(both.Token);
-        await ledger.SetPositionAsync(Reader, _position, both.Token);
+        await RecordPositionAsync(both.Token);
         return batch.Count == BatchSize;
     }
 
@@ -105,6 +108,17 @@ internal sealed class AssessmentFollower(
         }
 
         desk.Post(new DeskWork.Follow(found, new FollowedPosition(_position, changed)));
+    }
+
+    // Made up for at the next look where a call before it failed.
+    private async Task RecordPositionAsync(CancellationToken cancellationToken)
+    {
+        if (_recorded < _position)
+        {
+            await DoneAsync(cancellationToken);
+            await ledger.SetPositionAsync(Reader, _position, cancellationToken);
+            _recorded = _position;
+        }
     }
 
     // The position in the ledger must not run ahead of the journal.

@@ -76,7 +76,7 @@ public sealed class AlertEndpointsTests
         }
 
         JsonElement first = (await host.GetAsync("/api/v1/alerts?count=2&source=hollin-vale.rowan&open=true")).Json;
-        JsonElement second = (await host.GetAsync("/api/v1/alerts?count=2&after=" + first.GetProperty("next").GetString())).Json;
+        JsonElement second = (await host.GetAsync("/api/v1/alerts?count=2&open=true&after=" + first.GetProperty("next").GetString())).Json;
 
         Assert.Equal(2, first.GetProperty("items").GetArrayLength());
         Assert.Equal(1, second.GetProperty("items").GetArrayLength());

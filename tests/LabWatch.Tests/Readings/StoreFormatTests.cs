@@ -1,4 +1,3 @@
-using System.Runtime.CompilerServices;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
@@ -34,12 +33,9 @@ public sealed class StoreFormatTests
     [Fact]
     public void The_page_shows_the_reader_that_is_tested()
     {
-        string folder = Path.GetDirectoryName(ThisFile())!;
-        string page = Path.Combine(folder, "../../../docs/reference/store-format.md");
-        Assert.SkipUnless(File.Exists(page), "The sources are not beside the tests.");
-        string code = File.ReadAllText(Path.Combine(folder, "StoreFormatReader.cs"));
+        string code = File.ReadAllText(RepositoryFiles.PathOf("tests", "LabWatch.Tests", "Readings", "StoreFormatReader.cs"));
         string shown = code[code.IndexOf("internal static class", StringComparison.Ordinal)..].Trim();
-        Assert.Contains(shown, File.ReadAllText(page), StringComparison.Ordinal);
+        Assert.Contains(shown, File.ReadAllText(RepositoryFiles.PathOf("docs", "reference", "store-format.md")), StringComparison.Ordinal);
     }
 
     private static double Value(int channel, int i, Random random) => channel switch
@@ -54,6 +50,4 @@ public sealed class StoreFormatTests
         7 => double.NaN,
         _ => random.Next(),
     };
-
-    private static string ThisFile([CallerFilePath] string path = "") => path;
 }
