@@ -51,7 +51,7 @@ internal static class OptionBinder
             return;
         }
 
-        findings.Add(new Finding("bad-option", child.Path, $"The value is not {Describe(type)}.", Finding.Quote(child.Value), "Correct the value; docs/reference/options.md lists all options."));
+        findings.Add(new Finding("bad-option", child.Path, $"The value is not {Describe(type)}.", Finding.Quote(child.Value), "Correct the value; the pages in docs/reference list the options of each section."));
     }
 
     private static bool TryConvert(string? text, Type type, out object? value)

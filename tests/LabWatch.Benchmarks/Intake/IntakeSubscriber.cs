@@ -60,6 +60,9 @@ internal sealed class IntakeSubscriber : ISubscriber
             await disposable.DisposeAsync();
         }
 
-        Directory.Delete(_directory, recursive: true);
+        if (Directory.Exists(_directory))
+        {
+            Directory.Delete(_directory, recursive: true);
+        }
     }
 }
