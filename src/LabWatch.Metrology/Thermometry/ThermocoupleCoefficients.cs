@@ -2,7 +2,7 @@ namespace LabWatch.Metrology.Thermometry;
 
 /// <summary>
 /// Coefficients of the reference functions of IEC 60584-1:2013, the same as in NIST Monograph 175 (1993): emf in millivolt as a polynomial
-/// of the temperature in degree Celsius, reference junction at 0 degC. The transcription is confirmed by the table values of both.
+/// of the temperature in degree Celsius, reference junction at 0 degC. The copied values are confirmed by the table values of both.
 /// </summary>
 internal static class ThermocoupleCoefficients
 {
