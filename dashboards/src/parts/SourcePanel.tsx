@@ -5,13 +5,14 @@ import { clockTime, span } from "../format/time";
 import { unitText } from "../format/units";
 import { decisionWord, figureWord, kindWord, readinessMeaning, readinessWord, typeset, words } from "../format/words";
 import { gone, standing } from "../hazards/board";
+import { sourceAddress } from "../shell/routes";
 import { alerts, assessments, now, site } from "../state";
 import { ageOf, isCurrent } from "./freshness";
 import { Icon, readinessIcon } from "./Icon";
 import { panelId, presentState } from "./ReadinessStrip";
 
 /** One source: may it be calibrated with now, at what temperature, and what stands against it. */
-export function SourcePanel({ source, onShow }: { source: Source; onShow: (source: Source) => void }) {
+export function SourcePanel({ source, onShow }: { source: Source; onShow?: (source: Source) => void }) {
   const fresh = isCurrent(source);
   const state = presentState(source);
   const open = alerts.value.filter((alert) => alert.source === source.id);
@@ -22,7 +23,9 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
   return (
     <article id={panelId(source)} tabIndex={-1} class="panel source" aria-labelledby={heading}>
       <header>
-        <h3 id={heading}>{typeset(source.name)}</h3>
+        <h3 id={heading}>
+          <a href={sourceAddress(source.id)}>{typeset(source.name)}</a>
+        </h3>
         <p class="quiet">
           {kindWord[source.kind] ?? words(source.kind)}, {fixed(source.minimumCelsius, 0)} to {celsius(source.maximumCelsius, 0)}
         </p>
@@ -34,14 +37,14 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
       {hazards > 0 && (
         <p class="mark hazard">
           <Icon name="hazard" />
-          <a href="#hazards">
+          <a href="/#hazards">
             {hazards} standing hazard{hazards === 1 ? "" : "s"}
           </a>
         </p>
       )}
       {past > 0 && (
         <p class="quiet">
-          <a href="#gone">
+          <a href="/#gone">
             {past} hazard{past === 1 ? "" : "s"} gone, not yet acknowledged
           </a>
         </p>
@@ -49,7 +52,7 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
       {others > 0 && (
         <p class="mark deviation">
           <Icon name="deviation" />
-          <a href="#alerts">
+          <a href="/#alerts">
             {others} other open alert{others === 1 ? "" : "s"}
           </a>
         </p>
@@ -58,11 +61,13 @@ export function SourcePanel({ source, onShow }: { source: Source; onShow: (sourc
       <CavitySection source={source} isCurrent={fresh} />
       <Reasons source={source} fresh={fresh} />
       <Stability assessment={latestStability(source)} />
-      <footer>
-        <button type="button" onClick={() => onShow(source)}>
-          Show in chart<span class="hidden"> {source.name}</span>
-        </button>
-      </footer>
+      {onShow !== undefined && (
+        <footer>
+          <button type="button" onClick={() => onShow(source)}>
+            Show in chart<span class="hidden"> {source.name}</span>
+          </button>
+        </footer>
+      )}
     </article>
   );
 }

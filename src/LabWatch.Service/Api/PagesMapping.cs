@@ -10,6 +10,9 @@ internal static class PagesMapping
     private const string ForEver = "public, max-age=31536000, immutable";
     private const string AskAgain = "no-cache";
 
+    // Every address at which a page of dashboards/src/shell/routes.ts opens.
+    private static readonly string[] Pages = ["/", "/sources/{id}", "/sign-in", "/set-up", "/trail", "/people", "/me"];
+
     /// <summary>Serves the built pages, or a page that says how to build them.</summary>
     public static WebApplication MapLabWatchPages(this WebApplication app)
     {
@@ -33,10 +36,26 @@ internal static class PagesMapping
             },
         };
         app.UseStaticFiles(options);
-        app.MapFallbackToFile("/", "index.html", options);
-        app.MapFallbackToFile("/sources/{**rest}", "index.html", options);
+        foreach (string page in Pages)
+        {
+            app.MapFallbackToFile(page, "index.html", options);
+        }
+
+        MapUnknown(app, options.FileProvider.GetFileInfo("index.html"));
         return app;
     }
+
+    // An address that leads nowhere: a person gets a page that says so, a program the plain status.
+    private static void MapUnknown(WebApplication app, IFileInfo index) => app.MapFallback(async context =>
+    {
+        context.Response.StatusCode = StatusCodes.Status404NotFound;
+        if (context.Request.Headers.Accept.ToString().Contains("text/html", StringComparison.OrdinalIgnoreCase))
+        {
+            context.Response.ContentType = "text/html; charset=utf-8";
+            context.Response.Headers[HeaderNames.CacheControl] = AskAgain;
+            await context.Response.SendFileAsync(index, context.RequestAborted);
+        }
+    });
 
     private const string Unbuilt = """
         <!doctype html>
