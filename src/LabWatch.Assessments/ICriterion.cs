@@ -17,6 +17,17 @@ public interface ICriterion
     /// <summary>Ids of the channels whose raw readings it needs; empty where it does not apply to a source.</summary>
     IReadOnlyList<string> Channels(ReferenceSource source);
 
-    /// <summary>Judges one window: one result a scope, at least one. Called only for windows in which some needed channel has a reading.</summary>
+    /// <summary>
+    /// The working band that a scope is about, so that the limit of that band goes before one for all bands; null where a scope is about none.
+    /// A scope is empty, the id of a working band, or the id of a channel of the source.
+    /// </summary>
+    string? BandOf(string scope) => null;
+
+    /// <summary>
+    /// Judges one window: one result a scope, at least one. Called only for windows in which some needed channel has a reading. Which scopes
+    /// there are follows from the source alone, never from the readings: a scope about which nothing can be said is not decided. The limit is
+    /// looked up by the side result <see cref="FigureName.SetPoint"/> (else <see cref="FigureName.Mean"/>) where there is one, the band of
+    /// the scope, and the end of the window; whoever looks later whether another limit is in force goes by the same.
+    /// </summary>
     IReadOnlyList<CriterionResult> Evaluate(CriterionInput input);
 }
