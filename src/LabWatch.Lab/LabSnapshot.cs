@@ -62,8 +62,31 @@ public sealed class LabSnapshot
     /// <summary>The ways to tell somebody.</summary>
     public IReadOnlyList<Notifier> Notifiers { get; }
 
+    /// <summary>Earlier revisions of the sources, and the last ones of sources that were withdrawn. None of them is watched.</summary>
+    public IReadOnlyList<ReferenceSource> FormerSources { get; init; } = [];
+
     /// <summary>The source of a key; null where there is none.</summary>
     public ReferenceSource? FindSource(SourceKey key) => _sources.GetValueOrDefault(key);
+
+    /// <summary>
+    /// The revision of a source in force at an instant: of those effective from then or before the latest, in its highest revision. Before
+    /// the first revision's date that one holds: nothing older is known. Null where the source was never on record.
+    /// </summary>
+    public ReferenceSource? SourceInForce(SourceKey key, Instant at)
+    {
+        if (FormerSources.Count == 0)
+        {
+            return FindSource(key);
+        }
+
+        IEnumerable<ReferenceSource> revisions = Sources.Concat(FormerSources).Where(source => source.Key == key);
+        return revisions
+            .Where(source => source.EffectiveFrom <= at)
+            .OrderByDescending(source => source.EffectiveFrom)
+            .ThenByDescending(source => source.Revision)
+            .FirstOrDefault()
+            ?? revisions.MinBy(source => source.Revision);
+    }
 
     /// <summary>The channel of a key; null where there is none.</summary>
     public Channel? FindChannel(ChannelKey key) => _channels.GetValueOrDefault(key);

@@ -11,4 +11,8 @@ public sealed record Provenance(
     IReadOnlyList<SourceHourRead> Hours,
     IReadOnlyList<string> Certificates,
     string? Limit,
-    string ProgramVersion);
+    string ProgramVersion)
+{
+    /// <summary>Revision of the source's description that was judged, as <c>id@revision</c>; null on record from before sources had revisions.</summary>
+    public string? Source { get; init; }
+}

@@ -1,4 +1,5 @@
 using LabWatch.Lab.Identity;
+using LabWatch.Lab.Time;
 
 namespace LabWatch.Lab.Sources;
 
@@ -23,6 +24,15 @@ public sealed record ReferenceSource(
     IReadOnlyList<WorkingBand> Bands,
     IReadOnlyList<Channel> Channels)
 {
+    /// <summary>1 for the first description of the source on record, one more for each later one.</summary>
+    public int Revision { get; init; } = 1;
+
+    /// <summary>First instant at which this revision holds. The first revision holds for everything before it, too.</summary>
+    public Instant EffectiveFrom { get; init; } = Instant.MinValue;
+
+    /// <summary>How an assessment names what it judged: <c>id@revision</c>.</summary>
+    public string Reference => $"{Key.Source}@{Revision}";
+
     /// <summary>Gas that the cavity is purged with, in words; null where it is not purged.</summary>
     public string? PurgeGas { get; init; }
 

@@ -27,7 +27,8 @@ internal static class StoredDocuments
                 [.. provenance.Hours.Select(hour => new StoredHour(hour.Hour, hour.Revision))],
                 [.. provenance.Certificates],
                 provenance.Limit,
-                provenance.ProgramVersion),
+                provenance.ProgramVersion,
+                provenance.Source),
             StoredDocumentsContext.Default.StoredProvenance);
 
     public static IReadOnlyList<AssessmentFigure> ReadFigures(string json) =>
@@ -44,7 +45,10 @@ internal static class StoredDocuments
             [.. stored.Hours.Select(hour => new SourceHourRead(hour.Hour, hour.Revision))],
             stored.Certificates,
             stored.Limit,
-            stored.ProgramVersion);
+            stored.ProgramVersion)
+        {
+            Source = stored.Source,
+        };
     }
 
     public static double? NotANumberToNull(double value) => double.IsNaN(value) ? null : value;

@@ -36,5 +36,6 @@ internal static class AssessmentViews
         [.. provenance.Hours.Select(hour => new HourReadView(hour.Hour, hour.Revision))],
         provenance.Certificates,
         provenance.Limit,
-        provenance.ProgramVersion);
+        provenance.ProgramVersion,
+        provenance.Source);
 }

@@ -8,4 +8,5 @@ internal sealed record ProvenanceView(
     [property: Description("The source-hours read.")] IReadOnlyList<HourReadView> Hours,
     [property: Description("Certificates used, as id@revision.")] IReadOnlyList<string> Certificates,
     [property: Description("Limit used, as id@revision; null where there was none.")] string? Limit,
-    [property: Description("Version of the program that computed it.")] string ProgramVersion);
+    [property: Description("Version of the program that computed it.")] string ProgramVersion,
+    [property: Description("Revision of the source's description that was judged, as id@revision; null on record from before sources had revisions.")] string? Source);
