@@ -22,5 +22,11 @@ internal abstract class RecordsContext(DbContextOptions options) : DbContext(opt
 
     public DbSet<LabImportRow> LabImports => Set<LabImportRow>();
 
+    public DbSet<RevisionRow> Revisions => Set<RevisionRow>();
+
+    public DbSet<RunRow> Runs => Set<RunRow>();
+
+    public DbSet<RunStepRow> RunSteps => Set<RunStepRow>();
+
     protected override void OnModelCreating(ModelBuilder modelBuilder) => RecordsModel.Build(modelBuilder);
 }

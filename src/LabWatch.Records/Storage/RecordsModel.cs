@@ -13,7 +13,29 @@ internal static class RecordsModel
         Alerts(model);
         model.Entity<PositionRow>(table => table.ToTable("positions").HasKey(row => new { row.Site, row.Reader }));
         model.Entity<LabImportRow>(table => table.ToTable("lab_imports").HasKey(row => new { row.Site, row.Sequence }));
+        Lab(model);
         NameColumns(model);
+    }
+
+    private static void Lab(ModelBuilder model)
+    {
+        model.Entity<RevisionRow>(table =>
+        {
+            table.ToTable("revisions").HasKey(row => new { row.Site, row.Kind, row.Id, row.Revision });
+            table.HasIndex(row => new { row.Site, row.Sequence }).IsUnique();
+        });
+        model.Entity<RunRow>(table =>
+        {
+            table.ToTable("runs").HasKey(row => row.Id);
+            table.HasIndex(row => row.Number).IsUnique();
+            table.HasIndex(row => new { row.StartedAt, row.Number });
+            table.HasIndex(row => new { row.Site, row.Source }).IsUnique().HasFilter("ended_at IS NULL AND cancelled_at IS NULL");
+        });
+        model.Entity<RunStepRow>(table =>
+        {
+            table.ToTable("run_steps").HasKey(row => new { row.RunId, row.Number });
+            table.HasIndex(row => new { row.Site, row.By, row.RequestKey }).IsUnique().HasFilter("request_key IS NOT NULL");
+        });
     }
 
     private static void Assessments(ModelBuilder model)

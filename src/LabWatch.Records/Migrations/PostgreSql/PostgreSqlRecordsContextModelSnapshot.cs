@@ -385,6 +385,10 @@ namespace LabWatch.Records.Migrations.PostgreSql
                         .HasColumnType("text")
                         .HasColumnName("document");
 
+                    b.Property<string>("Reason")
+                        .HasColumnType("text")
+                        .HasColumnName("reason");
+
                     b.HasKey("Site", "Sequence");
 
                     b.ToTable("lab_imports", (string)null);
@@ -466,6 +470,208 @@ namespace LabWatch.Records.Migrations.PostgreSql
                     b.HasKey("Site", "Reader");
 
                     b.ToTable("positions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RevisionRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Kind")
+                        .HasColumnType("text")
+                        .HasColumnName("kind");
+
+                    b.Property<string>("Id")
+                        .HasColumnType("text")
+                        .HasColumnName("id");
+
+                    b.Property<int>("Revision")
+                        .HasColumnType("integer")
+                        .HasColumnName("revision");
+
+                    b.Property<string>("Author")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("author");
+
+                    b.Property<string>("Content")
+                        .HasColumnType("text")
+                        .HasColumnName("content");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("EffectiveFrom")
+                        .HasColumnType("bigint")
+                        .HasColumnName("effective_from");
+
+                    b.Property<int?>("Import")
+                        .HasColumnType("integer")
+                        .HasColumnName("import");
+
+                    b.Property<string>("Reason")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("reason");
+
+                    b.Property<long>("RecordedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("recorded_at");
+
+                    b.Property<long>("Sequence")
+                        .HasColumnType("bigint")
+                        .HasColumnName("sequence");
+
+                    b.HasKey("Site", "Kind", "Id", "Revision");
+
+                    b.HasIndex("Site", "Sequence")
+                        .IsUnique();
+
+                    b.ToTable("revisions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RunRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("uuid")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Band")
+                        .HasColumnType("text")
+                        .HasColumnName("band");
+
+                    b.Property<long?>("CancelledAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("cancelled_at");
+
+                    b.Property<long?>("EndedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("ended_at");
+
+                    b.Property<string>("EndedBy")
+                        .HasColumnType("text")
+                        .HasColumnName("ended_by");
+
+                    b.Property<string>("Item")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("item");
+
+                    b.Property<string>("JobNumber")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("job_number");
+
+                    b.Property<string>("Note")
+                        .HasColumnType("text")
+                        .HasColumnName("note");
+
+                    b.Property<long>("Number")
+                        .HasColumnType("bigint")
+                        .HasColumnName("number");
+
+                    b.Property<string>("OverrideReason")
+                        .HasColumnType("text")
+                        .HasColumnName("override_reason");
+
+                    b.Property<string>("ReadinessAtStart")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("readiness_at_start");
+
+                    b.Property<double>("SetPointCelsius")
+                        .HasColumnType("double precision")
+                        .HasColumnName("set_point_celsius");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Source")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("source");
+
+                    b.Property<long>("StartedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("started_at");
+
+                    b.Property<string>("StartedBy")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("started_by");
+
+                    b.Property<int>("Step")
+                        .HasColumnType("integer")
+                        .HasColumnName("step");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Number")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Source")
+                        .IsUnique()
+                        .HasFilter("ended_at IS NULL AND cancelled_at IS NULL");
+
+                    b.HasIndex("StartedAt", "Number");
+
+                    b.ToTable("runs", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RunStepRow", b =>
+                {
+                    b.Property<Guid>("RunId")
+                        .HasColumnType("uuid")
+                        .HasColumnName("run_id");
+
+                    b.Property<int>("Number")
+                        .HasColumnType("integer")
+                        .HasColumnName("number");
+
+                    b.Property<long>("At")
+                        .HasColumnType("bigint")
+                        .HasColumnName("at");
+
+                    b.Property<string>("By")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("by");
+
+                    b.Property<string>("Content")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("content");
+
+                    b.Property<string>("Reason")
+                        .HasColumnType("text")
+                        .HasColumnName("reason");
+
+                    b.Property<string>("RequestKey")
+                        .HasColumnType("text")
+                        .HasColumnName("request_key");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<string>("What")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("what");
+
+                    b.HasKey("RunId", "Number");
+
+                    b.HasIndex("Site", "By", "RequestKey")
+                        .IsUnique()
+                        .HasFilter("request_key IS NOT NULL");
+
+                    b.ToTable("run_steps", (string)null);
                 });
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>

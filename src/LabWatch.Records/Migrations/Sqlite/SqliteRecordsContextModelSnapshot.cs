@@ -380,6 +380,10 @@ namespace LabWatch.Records.Migrations.Sqlite
                         .HasColumnType("TEXT")
                         .HasColumnName("document");
 
+                    b.Property<string>("Reason")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("reason");
+
                     b.HasKey("Site", "Sequence");
 
                     b.ToTable("lab_imports", (string)null);
@@ -461,6 +465,208 @@ namespace LabWatch.Records.Migrations.Sqlite
                     b.HasKey("Site", "Reader");
 
                     b.ToTable("positions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RevisionRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Kind")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("kind");
+
+                    b.Property<string>("Id")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("id");
+
+                    b.Property<int>("Revision")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("revision");
+
+                    b.Property<string>("Author")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("author");
+
+                    b.Property<string>("Content")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("content");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("EffectiveFrom")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("effective_from");
+
+                    b.Property<int?>("Import")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("import");
+
+                    b.Property<string>("Reason")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("reason");
+
+                    b.Property<long>("RecordedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("recorded_at");
+
+                    b.Property<long>("Sequence")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("sequence");
+
+                    b.HasKey("Site", "Kind", "Id", "Revision");
+
+                    b.HasIndex("Site", "Sequence")
+                        .IsUnique();
+
+                    b.ToTable("revisions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RunRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Band")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("band");
+
+                    b.Property<long?>("CancelledAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("cancelled_at");
+
+                    b.Property<long?>("EndedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("ended_at");
+
+                    b.Property<string>("EndedBy")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("ended_by");
+
+                    b.Property<string>("Item")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("item");
+
+                    b.Property<string>("JobNumber")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("job_number");
+
+                    b.Property<string>("Note")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("note");
+
+                    b.Property<long>("Number")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("number");
+
+                    b.Property<string>("OverrideReason")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("override_reason");
+
+                    b.Property<string>("ReadinessAtStart")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("readiness_at_start");
+
+                    b.Property<double>("SetPointCelsius")
+                        .HasColumnType("REAL")
+                        .HasColumnName("set_point_celsius");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Source")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("source");
+
+                    b.Property<long>("StartedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("started_at");
+
+                    b.Property<string>("StartedBy")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("started_by");
+
+                    b.Property<int>("Step")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("step");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Number")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Source")
+                        .IsUnique()
+                        .HasFilter("ended_at IS NULL AND cancelled_at IS NULL");
+
+                    b.HasIndex("StartedAt", "Number");
+
+                    b.ToTable("runs", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.RunStepRow", b =>
+                {
+                    b.Property<Guid>("RunId")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("run_id");
+
+                    b.Property<int>("Number")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("number");
+
+                    b.Property<long>("At")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("at");
+
+                    b.Property<string>("By")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("by");
+
+                    b.Property<string>("Content")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("content");
+
+                    b.Property<string>("Reason")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("reason");
+
+                    b.Property<string>("RequestKey")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("request_key");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<string>("What")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("what");
+
+                    b.HasKey("RunId", "Number");
+
+                    b.HasIndex("Site", "By", "RequestKey")
+                        .IsUnique()
+                        .HasFilter("request_key IS NOT NULL");
+
+                    b.ToTable("run_steps", (string)null);
                 });
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>

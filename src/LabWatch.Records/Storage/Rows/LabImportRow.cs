@@ -14,4 +14,7 @@ internal sealed class LabImportRow
     public long At { get; set; }
 
     public required string By { get; set; }
+
+    /// <summary>Why; null on record from before a reason was kept.</summary>
+    public string? Reason { get; set; }
 }
