@@ -69,6 +69,26 @@ public sealed class AssessmentEndpointsTests
         Assert.Equal(HttpStatusCode.NotFound, (await host.GetAsync("/api/v1/assessments/0")).Status);
     }
 
+    [Fact]
+    public async Task Superseded_revisions_are_reached_from_any_of_them()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+        Assessment first = Stability(host, new Estimate(6.1, 0.6));
+        Assessment second = first with { Revision = 2, Value = new Estimate(6.3, 0.6), SupersedeReason = "Late readings." };
+        host.Rooms.Assessments.Add(second);
+        host.Rooms.Assessments.Add(first);
+
+        foreach (string id in (string[])[first.Id, second.Id])
+        {
+            JsonElement[] revisions = [.. (await host.GetAsync($"/api/v1/assessments/{id}/revisions")).Json.EnumerateArray()];
+
+            Assert.Equal([1, 2], revisions.Select(revision => revision.GetProperty("revision").GetInt32()));
+            Assert.Equal("Late readings.", revisions[1].GetProperty("supersedeReason").GetString());
+        }
+
+        Assert.Equal(HttpStatusCode.NotFound, (await host.GetAsync("/api/v1/assessments/0/revisions")).Status);
+    }
+
     private static Assessment Stability(ApiHost host, Estimate value) => new(
         SampleLab.Rowan, "stability", "well-a", new TimeWindow(host.Now - TimeSpan.FromMinutes(30), host.Now), 1, value, "mK", 7, 2,
         Decision.ConditionalPass, 0.9, [], "Half-range 6.1 mK.", new Provenance("00", [], ["cert-rowan-well-a@2"], null, "0.1.0"), host.Now, null);

@@ -14,6 +14,7 @@ public sealed class ServiceEndpointsTests
         "get /api/v1/alerts/{id}",
         "get /api/v1/assessments",
         "get /api/v1/assessments/{id}",
+        "get /api/v1/assessments/{id}/revisions",
         "get /api/v1/demo/faults",
         "get /api/v1/sources",
         "get /api/v1/sources/{id}",

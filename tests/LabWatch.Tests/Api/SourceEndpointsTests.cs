@@ -25,6 +25,20 @@ public sealed class SourceEndpointsTests
     }
 
     [Fact]
+    public async Task A_cavity_is_told_with_the_optics_of_its_wall_in_each_band()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+
+        JsonElement coating = (await host.GetAsync("/api/v1/sources/hollin-vale.fir")).Json
+            .GetProperty("source").GetProperty("cavity").GetProperty("coating")[0];
+
+        Assert.Equal("lwir", coating.GetProperty("band").GetString());
+        Assert.InRange(coating.GetProperty("emissivity").GetDouble(), 0.5, 1);
+        Assert.True(coating.GetProperty("emissivityStandardUncertainty").GetDouble() > 0);
+        Assert.InRange(coating.GetProperty("diffuseFraction").GetDouble(), 0, 1);
+    }
+
+    [Fact]
     public async Task Without_readings_a_source_is_unknown_and_says_why()
     {
         await using ApiHost host = await ApiHost.StartAsync();

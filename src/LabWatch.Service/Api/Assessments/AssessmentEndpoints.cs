@@ -1,3 +1,4 @@
+using LabWatch.Lab.Assessments;
 using LabWatch.Records.Assessments;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
@@ -23,6 +24,11 @@ internal static class AssessmentEndpoints
         group.MapGet("{id}", FindAsync)
             .WithName("GetAssessment")
             .WithSummary("One assessment, any revision, with its provenance")
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapGet("{id}/revisions", RevisionsAsync)
+            .WithName("ListAssessmentRevisions")
+            .WithSummary("Every revision of the assessment of the same source, criterion, scope and window, first revision first")
+            .WithDescription("The id may be that of any of the revisions.")
             .ProducesProblem(StatusCodes.Status404NotFound);
     }
 
@@ -50,5 +56,29 @@ internal static class AssessmentEndpoints
         string id, IAssessmentLedger ledger, CancellationToken cancellationToken) =>
         await ledger.FindAsync(id, cancellationToken) is { } assessment
             ? TypedResults.Ok(AssessmentViews.Of(assessment))
-            : Refusals.NotFound("assessment", id, "GET /api/v1/assessments lists the assessments.");
+            : Missing(id);
+
+    /// <summary>Revisions have ids that follow from their number, and are counted from 1 without a gap.</summary>
+    private static async Task<Results<Ok<IReadOnlyList<AssessmentView>>, ProblemHttpResult>> RevisionsAsync(
+        string id, IAssessmentLedger ledger, CancellationToken cancellationToken)
+    {
+        if (await ledger.FindAsync(id, cancellationToken) is not { } asked)
+        {
+            return Missing(id);
+        }
+
+        List<AssessmentView> revisions = [];
+        while (await ledger.FindAsync(IdOf(asked, revisions.Count + 1), cancellationToken) is { } revision)
+        {
+            revisions.Add(AssessmentViews.Of(revision));
+        }
+
+        return TypedResults.Ok<IReadOnlyList<AssessmentView>>(revisions);
+    }
+
+    private static string IdOf(Assessment assessment, int revision) =>
+        Assessment.IdOf(assessment.Source, assessment.Criterion, assessment.Scope, assessment.Window, revision);
+
+    private static ProblemHttpResult Missing(string id) =>
+        Refusals.NotFound("assessment", id, "GET /api/v1/assessments lists the assessments.");
 }

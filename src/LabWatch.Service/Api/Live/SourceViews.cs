@@ -45,7 +45,15 @@ internal static class SourceViews
     ];
 
     private static CavityView Of(Cavity cavity) => new(
-        Names.Of(cavity.Shape), cavity.RadiusMillimetre, cavity.LengthMillimetre, cavity.ConeHalfAngleDegree, cavity.ApertureRadiusMillimetre);
+        Names.Of(cavity.Shape), cavity.RadiusMillimetre, cavity.LengthMillimetre, cavity.ConeHalfAngleDegree, cavity.ApertureRadiusMillimetre,
+        [.. cavity.Coating.Select(Of)]);
+
+    private static CoatingView Of(CoatingOptics coating) => new(
+        coating.Band,
+        coating.Emissivity.Value,
+        Numbers.OrNull(coating.Emissivity.StandardUncertainty),
+        coating.DiffuseFraction.Value,
+        Numbers.OrNull(coating.DiffuseFraction.StandardUncertainty));
 
     private static ChannelView Of(Channel channel) => new(
         channel.Id,

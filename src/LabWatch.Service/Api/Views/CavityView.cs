@@ -8,4 +8,5 @@ internal sealed record CavityView(
     [property: Description("Inner radius, millimetres.")] double RadiusMillimetre,
     [property: Description("Length of the cylindrical part or height of a plain cone, millimetres.")] double LengthMillimetre,
     [property: Description("Half-angle of the conical bottom or cone, degrees.")] double? ConeHalfAngleDegree,
-    [property: Description("Radius of the opening, millimetres.")] double ApertureRadiusMillimetre);
+    [property: Description("Radius of the opening, millimetres.")] double ApertureRadiusMillimetre,
+    [property: Description("Wall optics, one entry a working band.")] IReadOnlyList<CoatingView> Coating);

@@ -38,7 +38,7 @@ internal sealed class SampleLab : ILabSnapshotSource
     {
         ReferenceSource[] sources =
         [
-            Source("fir", "Fir", SourceKind.StirredBath, TraceabilityRoute.Contact, -20, 90, new(CavityShape.CylinderInwardCone, 30, 230, 60, 25, []), "Ohm", [225, 120, 30], "dry nitrogen", "lwir"),
+            Source("fir", "Fir", SourceKind.StirredBath, TraceabilityRoute.Contact, -20, 90, new(CavityShape.CylinderInwardCone, 30, 230, 60, 25, [new("lwir", new(0.955, 0.006), new(0.94, 0.03))]), "Ohm", [225, 120, 30], "dry nitrogen", "lwir"),
             Source("rowan", "Rowan", SourceKind.BlockFurnace, TraceabilityRoute.Contact, 100, 500, new(CavityShape.CylinderOutwardCone, 25, 200, 60, 20, []), "Ohm", [195, 110, 30], null, "lwir"),
             Source("yew", "Yew", SourceKind.GraphiteTube, TraceabilityRoute.Radiometric, 800, 1500, new(CavityShape.Cylinder, 15, 260, null, 10, []), "Cel", [250, 140, 40], "argon", "nir"),
             Source("hazel", "Hazel", SourceKind.FixedReference, TraceabilityRoute.Contact, 36, 38, new(CavityShape.Sphere, 30, 0, null, 10, []), "Ohm", [55, 10], null, "lwir"),
