@@ -1,3 +1,4 @@
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Alerts;
 using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Demo;
@@ -21,6 +22,9 @@ internal static class ApiMapping
         SecurityHeaders.Use(app);
         FailureAnswers.Use(app);
         CrossSiteGuard.Use(app);
+        PagesMapping.ServeFiles(app);
+        app.UseAuthentication();
+        app.UseAuthorization();
         RouteGroupBuilder api = app.MapGroup("/api/v1");
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
@@ -33,8 +37,8 @@ internal static class ApiMapping
 
         api.Map("{**rest}", (string? rest) => Refusals.NotFound("endpoint", rest, "/openapi/v1.json lists the endpoints.")).ExcludeFromDescription();
         HealthEndpoints.Map(app);
-        app.MapOpenApi();
-        app.MapPrometheusScrapingEndpoint("/metrics");
+        app.MapOpenApi().AllowStrangers();
+        app.MapPrometheusScrapingEndpoint("/metrics").Allow(Permission.Read);
         return app;
     }
 }

@@ -1,6 +1,7 @@
 using System.IO.Compression;
 using System.Text.Json.Serialization;
 using LabWatch.Lab.Readings;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
 using LabWatch.Service.Api.Live;
@@ -53,6 +54,7 @@ internal static class ApiRegistration
 
     private static void AddHttp(IServiceCollection services)
     {
+        AccessRegistration.Add(services);
         services.AddProblemDetails();
         services.ConfigureHttpJsonOptions(options =>
         {

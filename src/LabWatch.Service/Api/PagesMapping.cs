@@ -1,3 +1,4 @@
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Hosting;
 using Microsoft.Extensions.FileProviders;
 using Microsoft.Net.Http.Headers;
@@ -13,6 +14,16 @@ internal static class PagesMapping
     // Every address at which a page of dashboards/src/shell/routes.ts opens.
     private static readonly string[] Pages = ["/", "/sources/{id}", "/sign-in", "/set-up", "/trail", "/people", "/me"];
 
+    /// <summary>Serves the files of the pages, to strangers too: they hold no data. Call it before what asks who calls.</summary>
+    public static void ServeFiles(WebApplication app)
+    {
+        PagesFolder folder = app.Services.GetRequiredService<PagesFolder>();
+        if (folder.IsBuilt)
+        {
+            app.UseStaticFiles(Options(folder));
+        }
+    }
+
     /// <summary>Serves the built pages, or a page that says how to build them.</summary>
     public static WebApplication MapLabWatchPages(this WebApplication app)
     {
@@ -21,11 +32,22 @@ internal static class PagesMapping
         if (!folder.IsBuilt)
         {
             ApiLog.PagesMissing(app.Logger, folder.Path);
-            app.MapGet("/", () => TypedResults.Content(Unbuilt, "text/html; charset=utf-8")).ExcludeFromDescription();
+            app.MapGet("/", () => TypedResults.Content(Unbuilt, "text/html; charset=utf-8")).ExcludeFromDescription().AllowStrangers();
             return app;
         }
 
-        StaticFileOptions options = new()
+        StaticFileOptions options = Options(folder);
+        foreach (string page in Pages)
+        {
+            app.MapFallbackToFile(page, "index.html", options).AllowStrangers();
+        }
+
+        MapUnknown(app, folder);
+        return app;
+    }
+
+    private static StaticFileOptions Options(PagesFolder folder) =>
+        new()
         {
             FileProvider = new PhysicalFileProvider(folder.Path),
             OnPrepareResponse = static context =>
@@ -35,27 +57,18 @@ internal static class PagesMapping
                 context.Context.Response.Headers[HeaderNames.CacheControl] = isHashed ? ForEver : AskAgain;
             },
         };
-        app.UseStaticFiles(options);
-        foreach (string page in Pages)
-        {
-            app.MapFallbackToFile(page, "index.html", options);
-        }
-
-        MapUnknown(app, options.FileProvider.GetFileInfo("index.html"));
-        return app;
-    }
 
     // An address that leads nowhere: a person gets a page that says so, a program the plain status.
-    private static void MapUnknown(WebApplication app, IFileInfo index) => app.MapFallback(async context =>
+    private static void MapUnknown(WebApplication app, PagesFolder folder) => app.MapFallback(async context =>
     {
         context.Response.StatusCode = StatusCodes.Status404NotFound;
         if (context.Request.Headers.Accept.ToString().Contains("text/html", StringComparison.OrdinalIgnoreCase))
         {
             context.Response.ContentType = "text/html; charset=utf-8";
             context.Response.Headers[HeaderNames.CacheControl] = AskAgain;
-            await context.Response.SendFileAsync(index, context.RequestAborted);
+            await context.Response.SendFileAsync(Path.Combine(folder.Path, "index.html"), context.RequestAborted);
         }
-    });
+    }).AllowStrangers();
 
     private const string Unbuilt = """
         <!doctype html>

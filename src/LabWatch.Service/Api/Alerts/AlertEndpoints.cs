@@ -2,6 +2,7 @@ using LabWatch.Alerts;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
 using LabWatch.Records.Alerts;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
@@ -20,14 +21,17 @@ internal static class AlertEndpoints
     {
         RouteGroupBuilder group = api.MapGroup("alerts").WithTags("Alerts");
         group.MapGet(string.Empty, ListAsync)
+            .Allow(Permission.Read)
             .WithName("ListAlerts")
             .WithSummary("Alerts, newest raised first")
             .ProducesProblem(StatusCodes.Status400BadRequest);
         group.MapGet("{id}", FindAsync)
+            .Allow(Permission.Read)
             .WithName("GetAlert")
             .WithSummary("One alert with every step of its life")
             .ProducesProblem(StatusCodes.Status404NotFound);
         group.MapPost("{id}/acknowledge", AcknowledgeAsync)
+            .Allow(Permission.Acknowledge)
             .WithName("AcknowledgeAlert")
             .WithSummary("Acknowledge an alert")
             .WithDescription(

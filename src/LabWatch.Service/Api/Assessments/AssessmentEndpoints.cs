@@ -1,5 +1,6 @@
 using LabWatch.Lab.Assessments;
 using LabWatch.Records.Assessments;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
@@ -16,7 +17,7 @@ internal static class AssessmentEndpoints
     /// <summary>Maps the endpoints into the group of the API's version.</summary>
     public static void Map(RouteGroupBuilder api)
     {
-        RouteGroupBuilder group = api.MapGroup("assessments").WithTags("Assessments");
+        RouteGroupBuilder group = api.MapGroup("assessments").WithTags("Assessments").Allow(Permission.Read);
         group.MapGet(string.Empty, ListAsync)
             .WithName("ListAssessments")
             .WithSummary("Assessments, newest window first, highest revisions only")

@@ -1,5 +1,6 @@
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
 using LabWatch.Simulator;
@@ -16,13 +17,16 @@ internal static class FaultEndpoints
     {
         RouteGroupBuilder group = api.MapGroup("demo/faults").WithTags("Demo");
         group.MapGet(string.Empty, List)
+            .Allow(Permission.Read)
             .WithName("ListFaults")
             .WithSummary("Demo only: kinds of fault, and the faults in force");
         group.MapPost(string.Empty, Inject)
+            .Allow(Permission.InjectFaults)
             .WithName("InjectFault")
             .WithSummary("Demo only: inject a fault into the simulated laboratory")
             .ProducesProblem(StatusCodes.Status400BadRequest);
         group.MapDelete("{id}", Clear)
+            .Allow(Permission.InjectFaults)
             .WithName("ClearFault")
             .WithSummary("Demo only: repair an injected fault")
             .ProducesProblem(StatusCodes.Status400BadRequest);

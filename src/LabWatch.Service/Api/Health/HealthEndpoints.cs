@@ -1,3 +1,4 @@
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Views;
 using Microsoft.AspNetCore.Http.HttpResults;
@@ -12,7 +13,7 @@ internal static class HealthEndpoints
     /// <summary>Maps the endpoints.</summary>
     public static void Map(IEndpointRouteBuilder app)
     {
-        RouteGroupBuilder group = app.MapGroup("health").WithTags("Health");
+        RouteGroupBuilder group = app.MapGroup("health").WithTags("Health").AllowStrangers();
         group.MapGet("live", Live)
             .WithName("Live")
             .WithSummary("Whether the process answers");

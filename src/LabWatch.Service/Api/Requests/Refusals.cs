@@ -27,6 +27,10 @@ internal static class Refusals
     public static ProblemHttpResult Forbidden(string code, string message, string? value, string cure) =>
         Refuse(StatusCodes.Status403Forbidden, code, message, value, cure);
 
+    /// <summary>Nobody is signed in.</summary>
+    public static ProblemHttpResult NotSignedIn() =>
+        Refuse(StatusCodes.Status401Unauthorized, "not-signed-in", "Nobody is signed in.", null, "Sign in on the pages, or send a token: Authorization: Bearer lw_...");
+
     /// <summary>The request could not be read at all.</summary>
     public static ProblemHttpResult Malformed(int status) =>
         Refuse(status, "malformed", "The request could not be read.", null, "Send JSON with Content-Type: application/json, as /openapi/v1.json describes it.");

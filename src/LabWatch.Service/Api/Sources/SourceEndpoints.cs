@@ -1,6 +1,7 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
@@ -14,7 +15,7 @@ internal static class SourceEndpoints
     /// <summary>Maps the endpoints into the group of the API's version.</summary>
     public static void Map(RouteGroupBuilder api)
     {
-        RouteGroupBuilder group = api.MapGroup("sources").WithTags("Sources");
+        RouteGroupBuilder group = api.MapGroup("sources").WithTags("Sources").Allow(Permission.Read);
         group.MapGet(string.Empty, ListAsync)
             .WithName("ListSources")
             .WithSummary("All sources with readiness, newest readings, open alerts");

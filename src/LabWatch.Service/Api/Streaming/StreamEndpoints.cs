@@ -1,4 +1,5 @@
 using System.Buffers.Text;
+using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Views;
@@ -13,6 +14,7 @@ internal static class StreamEndpoints
     /// <summary>Maps the endpoint into the group of the API's version.</summary>
     public static void Map(RouteGroupBuilder api) =>
         api.MapGet("stream", ListenAsync)
+            .Allow(Permission.Read)
             .WithTags("Stream")
             .WithName("Listen")
             .WithSummary("Changes as server-sent events: a snapshot, then every change")
