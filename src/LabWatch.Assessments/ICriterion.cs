@@ -18,10 +18,10 @@ public interface ICriterion
     IReadOnlyList<string> Channels(ReferenceSource source);
 
     /// <summary>
-    /// The working band that a scope is about, so that the limit of that band goes before one for all bands; null where a scope is about none.
+    /// The working band that a scope of a source is about, so that the limit of that band goes before one for all bands; null where a scope is about none.
     /// A scope is empty, the id of a working band, or the id of a channel of the source.
     /// </summary>
-    string? BandOf(string scope) => null;
+    string? BandOf(ReferenceSource source, string scope) => null;
 
     /// <summary>
     /// Judges one window: one result a scope, at least one. Called only for windows in which some needed channel has a reading. Which scopes

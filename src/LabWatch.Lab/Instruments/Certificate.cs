@@ -1,3 +1,4 @@
+using LabWatch.Lab.Identity;
 using LabWatch.Lab.Time;
 
 namespace LabWatch.Lab.Instruments;
@@ -27,6 +28,9 @@ public sealed record Certificate(
 {
     /// <summary>The R(TPW) in force, where a resistance thermometer has a recorded triple-point check; the snapshot sets it, not the certificate.</summary>
     public TriplePointCheck? TriplePoint { get; init; }
+
+    /// <summary>Source that a comparator was calibrated against: of that source it can show change only. Null where its traceability is independent.</summary>
+    public SourceKey? CalibratedAgainst { get; init; }
 
     /// <summary>How an evaluation names what it used: <c>id@revision</c>, with a triple-point check <c>id@revision+check@revision</c>.</summary>
     public string Reference => TriplePoint is { } check ? $"{Id}@{Revision}+{check.Id}@{check.Revision}" : $"{Id}@{Revision}";

@@ -22,7 +22,7 @@ internal static class InstrumentSection
             Instrument instrument = new(item.Id("id"), item.Text("serialNumber"), item.Text("description"));
             instruments.Add(instrument);
             installations.AddRange(item.Items("installations", required: false).Select(stay => new Placed<Installation>(Stay(stay, instrument.Id, site), stay.Pointer)));
-            certificates.AddRange(item.Items("certificates", required: false).Select(certificate => new Placed<Certificate>(Certificate(certificate, instrument.Id), certificate.Pointer)));
+            certificates.AddRange(item.Items("certificates", required: false).Select(certificate => new Placed<Certificate>(Certificate(certificate, instrument.Id, site), certificate.Pointer)));
             checks.AddRange(item.Items("triplePointChecks", required: false).Select(check => TriplePoint(check, instrument.Id)));
         }
 
@@ -49,9 +49,9 @@ internal static class InstrumentSection
         return stay;
     }
 
-    private static Certificate Certificate(JsonCursor item, string instrument)
+    private static Certificate Certificate(JsonCursor item, string instrument, string site)
     {
-        item.OnlyMembers("id", "revision", "number", "issuer", "validFrom", "dueAt", "range", "characteristic");
+        item.OnlyMembers("id", "revision", "number", "issuer", "validFrom", "dueAt", "range", "characteristic", "calibratedAgainst");
         (double minimum, double maximum) = SourceSection.Range(item) ?? (double.NaN, double.NaN);
         Certificate certificate = new(
             item.Id("id"),
@@ -63,7 +63,10 @@ internal static class InstrumentSection
             item.OptionalTime("dueAt"),
             minimum,
             maximum,
-            CharacteristicSection.Read(item));
+            CharacteristicSection.Read(item))
+        {
+            CalibratedAgainst = item.OptionalText("calibratedAgainst") is null ? null : new SourceKey(site, item.Id("calibratedAgainst")),
+        };
         if (certificate.DueAt <= certificate.ValidFrom)
         {
             item.Report("empty-range", "The certificate is due before it is valid.", "Correct one of the two times.", "dueAt");

@@ -52,12 +52,28 @@ internal static class LabFileChecks
             CheckChannel(findings, source, i, pointer, bands, bandCure);
         }
 
+        CheckRadiance(findings, source, pointer, bands, bandCure);
         int references = source.Channels.Count(channel => channel.IsReference);
         if (references > 1 || (references == 0 && source.Route == TraceabilityRoute.Contact))
         {
             findings.Add(new Finding(
                 "reference-channel", pointer + "/channels", "Exactly one well thermometer must be the reference on the contact route, at most one on the radiometric route.",
                 FormattableString.Invariant($"{references}"), "Set \"reference\": true on the one that gives the source's temperature."));
+        }
+    }
+
+    private static void CheckRadiance(List<Finding> findings, ReferenceSource source, string pointer, HashSet<string> bands, string bandCure)
+    {
+        for (int i = 0; i < source.Baselines.Count; i++)
+        {
+            Known(findings, bands, source.Baselines[i].Band, $"{pointer}/baselines/{i}/band", "band", bandCure);
+        }
+
+        if (source.View is { } view && source.Cavity.Shape != CavityShape.FlatPlate && view.SpotRadiusMillimetre > source.Cavity.ApertureRadiusMillimetre)
+        {
+            findings.Add(new Finding(
+                "spot-too-wide", pointer + "/view/spotRadiusMillimetre", "The spot is wider than the aperture.", FormattableString.Invariant($"{view.SpotRadiusMillimetre}"),
+                "Give the radius of what the detector sees in the aperture plane, at most that of the aperture."));
         }
     }
 
@@ -97,6 +113,14 @@ internal static class LabFileChecks
         foreach (Channel channel in sources.SelectMany(source => source.Channels))
         {
             channels.TryAdd(channel.Key, channel);
+        }
+
+        foreach ((Certificate certificate, string pointer) in instruments.Certificates.Select(placed => (placed.Value, placed.Pointer)))
+        {
+            if (certificate.CalibratedAgainst is { } against && !sources.Any(source => source.Key == against))
+            {
+                findings.Add(new Finding("unknown-reference", pointer + "/calibratedAgainst", "This source does not exist.", against.Source, "Use the id of a source of this file, or leave it out."));
+            }
         }
 
         foreach ((Installation stay, string pointer) in instruments.Installations.Select(placed => (placed.Value, placed.Pointer)))

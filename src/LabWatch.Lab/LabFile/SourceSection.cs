@@ -14,7 +14,8 @@ internal static class SourceSection
 
     public static ReferenceSource Read(JsonCursor item, string site)
     {
-        item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels");
+        item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
+            "view", "baselines", "surroundings", "wellToWallDrop");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(
@@ -29,6 +30,10 @@ internal static class SourceSection
             [.. item.Items("channels").Select(channel => ChannelSection.Read(channel, key))])
         {
             PurgeGas = item.OptionalText("purgeGas"),
+            View = RadianceSection.View(item),
+            Baselines = [.. item.Items("baselines", required: false).Select(RadianceSection.Baseline)],
+            SurroundingsOffsetKelvin = RadianceSection.Surroundings(item),
+            WellToWallDrop = RadianceSection.Drop(item),
         };
     }
 

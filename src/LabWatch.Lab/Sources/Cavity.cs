@@ -15,4 +15,11 @@ public sealed record Cavity(
     double LengthMillimetre,
     double? ConeHalfAngleDegree,
     double ApertureRadiusMillimetre,
-    IReadOnlyList<CoatingOptics> Coating);
+    IReadOnlyList<CoatingOptics> Coating)
+{
+    /// <summary>Surfaces with an emissivity of their own.</summary>
+    public SecondSurface SecondMaterial { get; init; }
+
+    /// <summary>The wells that are compared for axial uniformity; null for all.</summary>
+    public AxialRange? UniformZone { get; init; }
+}

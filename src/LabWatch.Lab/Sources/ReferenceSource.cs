@@ -1,5 +1,6 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Time;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Lab.Sources;
 
@@ -35,6 +36,24 @@ public sealed record ReferenceSource(
 
     /// <summary>Gas that the cavity is purged with, in words; null where it is not purged.</summary>
     public string? PurgeGas { get; init; }
+
+    /// <summary>How it is looked at; null for <see cref="ApertureView.Usual"/>.</summary>
+    public ApertureView? View { get; init; }
+
+    /// <summary>Effective emissivities that a drift is told from; empty where none is on record.</summary>
+    public IReadOnlyList<EmissivityBaseline> Baselines { get; init; } = [];
+
+    /// <summary>Radiance temperature of the surroundings minus the air temperature, kelvin.</summary>
+    public Estimate SurroundingsOffsetKelvin { get; init; } = UsualSurroundingsOffsetKelvin;
+
+    /// <summary>Temperature of a well minus that of the wall beside it, as a part of the difference between well and room.</summary>
+    public Estimate WellToWallDrop { get; init; } = UsualWellToWallDrop;
+
+    /// <summary>Taken where nothing is stated about the surroundings (common practice, no source).</summary>
+    public static Estimate UsualSurroundingsOffsetKelvin { get; } = new(0, 1.5);
+
+    /// <summary>Taken where nothing is stated about the drop (common practice, no source).</summary>
+    public static Estimate UsualWellToWallDrop { get; } = new(0, 1e-4);
 
     /// <summary>The well thermometer that the source's temperature is taken from; null on a radiometric route without one.</summary>
     public Channel? ReferenceChannel => Channels.FirstOrDefault(channel => channel.IsReference);
