@@ -28,5 +28,13 @@ internal abstract class RecordsContext(DbContextOptions options) : DbContext(opt
 
     public DbSet<RunStepRow> RunSteps => Set<RunStepRow>();
 
+    public DbSet<AccountRow> Accounts => Set<AccountRow>();
+
+    public DbSet<AccountUseRow> AccountUse => Set<AccountUseRow>();
+
+    public DbSet<SessionRow> Sessions => Set<SessionRow>();
+
+    public DbSet<TokenRow> Tokens => Set<TokenRow>();
+
     protected override void OnModelCreating(ModelBuilder modelBuilder) => RecordsModel.Build(modelBuilder);
 }

@@ -14,6 +14,7 @@ internal static class RecordsModel
         model.Entity<PositionRow>(table => table.ToTable("positions").HasKey(row => new { row.Site, row.Reader }));
         model.Entity<LabImportRow>(table => table.ToTable("lab_imports").HasKey(row => new { row.Site, row.Sequence }));
         Lab(model);
+        People(model);
         NameColumns(model);
     }
 
@@ -35,6 +36,24 @@ internal static class RecordsModel
         {
             table.ToTable("run_steps").HasKey(row => new { row.RunId, row.Number });
             table.HasIndex(row => new { row.Site, row.By, row.RequestKey }).IsUnique().HasFilter("request_key IS NOT NULL");
+        });
+    }
+
+    private static void People(ModelBuilder model)
+    {
+        model.Entity<AccountRow>(table => table.ToTable("accounts").HasKey(row => new { row.Site, row.Name, row.Revision }));
+        model.Entity<AccountUseRow>(table => table.ToTable("account_use").HasKey(row => new { row.Site, row.Name }));
+        model.Entity<SessionRow>(table =>
+        {
+            table.ToTable("sessions").HasKey(row => row.Id);
+            table.HasIndex(row => row.Digest).IsUnique();
+            table.HasIndex(row => new { row.Site, row.Account });
+        });
+        model.Entity<TokenRow>(table =>
+        {
+            table.ToTable("tokens").HasKey(row => row.Id);
+            table.HasIndex(row => row.Digest).IsUnique();
+            table.HasIndex(row => new { row.Site, row.Account });
         });
     }
 

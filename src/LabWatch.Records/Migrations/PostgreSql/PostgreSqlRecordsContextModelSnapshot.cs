@@ -22,6 +22,83 @@ namespace LabWatch.Records.Migrations.PostgreSql
 
             NpgsqlModelBuilderExtensions.UseIdentityByDefaultColumns(modelBuilder);
 
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AccountRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Name")
+                        .HasColumnType("text")
+                        .HasColumnName("name");
+
+                    b.Property<int>("Revision")
+                        .HasColumnType("integer")
+                        .HasColumnName("revision");
+
+                    b.Property<long>("At")
+                        .HasColumnType("bigint")
+                        .HasColumnName("at");
+
+                    b.Property<string>("By")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("by");
+
+                    b.Property<bool>("Disabled")
+                        .HasColumnType("boolean")
+                        .HasColumnName("disabled");
+
+                    b.Property<string>("DisplayName")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("display_name");
+
+                    b.Property<bool>("MustChangePassword")
+                        .HasColumnType("boolean")
+                        .HasColumnName("must_change_password");
+
+                    b.Property<string>("Password")
+                        .HasColumnType("text")
+                        .HasColumnName("password");
+
+                    b.Property<string>("Roles")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("roles");
+
+                    b.HasKey("Site", "Name", "Revision");
+
+                    b.ToTable("accounts", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AccountUseRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Name")
+                        .HasColumnType("text")
+                        .HasColumnName("name");
+
+                    b.Property<int>("Failures")
+                        .HasColumnType("integer")
+                        .HasColumnName("failures");
+
+                    b.Property<long?>("LastFailureAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("last_failure_at");
+
+                    b.Property<long?>("LastSignInAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("last_sign_in_at");
+
+                    b.HasKey("Site", "Name");
+
+                    b.ToTable("account_use", (string)null);
+                });
+
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertRow", b =>
                 {
                     b.Property<Guid>("Id")
@@ -672,6 +749,124 @@ namespace LabWatch.Records.Migrations.PostgreSql
                         .HasFilter("request_key IS NOT NULL");
 
                     b.ToTable("run_steps", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.SessionRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("uuid")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Account")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("account");
+
+                    b.Property<string>("Address")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("address");
+
+                    b.Property<string>("Agent")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("agent");
+
+                    b.Property<long>("ConfirmedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("confirmed_at");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("ExpiresAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("expires_at");
+
+                    b.Property<long>("LastUsedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("last_used_at");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<long>("StartedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("started_at");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Digest")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Account");
+
+                    b.ToTable("sessions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.TokenRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("uuid")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Account")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("account");
+
+                    b.Property<long>("CreatedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("created_at");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("ExpiresAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("expires_at");
+
+                    b.Property<long?>("LastUsedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("last_used_at");
+
+                    b.Property<string>("Name")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("name");
+
+                    b.Property<long?>("RevokedAt")
+                        .HasColumnType("bigint")
+                        .HasColumnName("revoked_at");
+
+                    b.Property<string>("RevokedBy")
+                        .HasColumnType("text")
+                        .HasColumnName("revoked_by");
+
+                    b.Property<string>("Roles")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("roles");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Digest")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Account");
+
+                    b.ToTable("tokens", (string)null);
                 });
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>

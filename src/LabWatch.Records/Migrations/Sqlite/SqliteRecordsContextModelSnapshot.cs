@@ -17,6 +17,83 @@ namespace LabWatch.Records.Migrations.Sqlite
 #pragma warning disable 612, 618
             modelBuilder.HasAnnotation("ProductVersion", "10.0.15");
 
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AccountRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Name")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("name");
+
+                    b.Property<int>("Revision")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("revision");
+
+                    b.Property<long>("At")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("at");
+
+                    b.Property<string>("By")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("by");
+
+                    b.Property<bool>("Disabled")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("disabled");
+
+                    b.Property<string>("DisplayName")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("display_name");
+
+                    b.Property<bool>("MustChangePassword")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("must_change_password");
+
+                    b.Property<string>("Password")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("password");
+
+                    b.Property<string>("Roles")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("roles");
+
+                    b.HasKey("Site", "Name", "Revision");
+
+                    b.ToTable("accounts", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AccountUseRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<string>("Name")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("name");
+
+                    b.Property<int>("Failures")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("failures");
+
+                    b.Property<long?>("LastFailureAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("last_failure_at");
+
+                    b.Property<long?>("LastSignInAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("last_sign_in_at");
+
+                    b.HasKey("Site", "Name");
+
+                    b.ToTable("account_use", (string)null);
+                });
+
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.AlertRow", b =>
                 {
                     b.Property<Guid>("Id")
@@ -667,6 +744,124 @@ namespace LabWatch.Records.Migrations.Sqlite
                         .HasFilter("request_key IS NOT NULL");
 
                     b.ToTable("run_steps", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.SessionRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Account")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("account");
+
+                    b.Property<string>("Address")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("address");
+
+                    b.Property<string>("Agent")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("agent");
+
+                    b.Property<long>("ConfirmedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("confirmed_at");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("ExpiresAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("expires_at");
+
+                    b.Property<long>("LastUsedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("last_used_at");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<long>("StartedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("started_at");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Digest")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Account");
+
+                    b.ToTable("sessions", (string)null);
+                });
+
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.TokenRow", b =>
+                {
+                    b.Property<Guid>("Id")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("id");
+
+                    b.Property<string>("Account")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("account");
+
+                    b.Property<long>("CreatedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("created_at");
+
+                    b.Property<string>("Digest")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("digest");
+
+                    b.Property<long>("ExpiresAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("expires_at");
+
+                    b.Property<long?>("LastUsedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("last_used_at");
+
+                    b.Property<string>("Name")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("name");
+
+                    b.Property<long?>("RevokedAt")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("revoked_at");
+
+                    b.Property<string>("RevokedBy")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("revoked_by");
+
+                    b.Property<string>("Roles")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("roles");
+
+                    b.Property<string>("Site")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.HasKey("Id");
+
+                    b.HasIndex("Digest")
+                        .IsUnique();
+
+                    b.HasIndex("Site", "Account");
+
+                    b.ToTable("tokens", (string)null);
                 });
 
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.WatermarkRow", b =>
