@@ -102,7 +102,7 @@ public sealed class LabSnapshot
         Certificate? certificate = stay is null
             ? null
             : Certificates
-                .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal) && certificate.ValidFrom <= at)
+                .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal) && certificate.ValidFrom <= at && !(certificate.WithdrawnFrom <= at))
                 .OrderByDescending(certificate => certificate.ValidFrom)
                 .ThenByDescending(certificate => certificate.Revision)
                 .FirstOrDefault();
@@ -116,7 +116,7 @@ public sealed class LabSnapshot
     /// </summary>
     public TriplePointCheck? TriplePointInForce(string instrument, Instant at) =>
         TriplePointChecks
-            .Where(check => string.Equals(check.Instrument, instrument, StringComparison.Ordinal) && check.At <= at)
+            .Where(check => string.Equals(check.Instrument, instrument, StringComparison.Ordinal) && check.At <= at && !(check.WithdrawnFrom <= at))
             .OrderByDescending(check => check.At)
             .ThenByDescending(check => check.Revision)
             .FirstOrDefault();
@@ -130,6 +130,7 @@ public sealed class LabSnapshot
             .Where(limit => limit.Source == source
                 && string.Equals(limit.Criterion, criterion, StringComparison.Ordinal)
                 && limit.EffectiveFrom <= at
+                && !(limit.WithdrawnFrom <= at)
                 && (limit.Band is null || string.Equals(limit.Band, band, StringComparison.Ordinal))
                 && (limit.MinimumCelsius is not { } minimum || setPointCelsius >= minimum)
                 && (limit.MaximumCelsius is not { } maximum || setPointCelsius <= maximum))

@@ -32,6 +32,9 @@ public sealed record Certificate(
     /// <summary>Source that a comparator was calibrated against: of that source it can show change only. Null where its traceability is independent.</summary>
     public SourceKey? CalibratedAgainst { get; init; }
 
+    /// <summary>First instant at which the certificate is withdrawn: what was before stays judged by it. Null while it is not.</summary>
+    public Instant? WithdrawnFrom { get; init; }
+
     /// <summary>How an evaluation names what it used: <c>id@revision</c>, with a triple-point check <c>id@revision+check@revision</c>.</summary>
     public string Reference => TriplePoint is { } check ? $"{Id}@{Revision}+{check.Id}@{check.Revision}" : $"{Id}@{Revision}";
 }

@@ -12,4 +12,8 @@ namespace LabWatch.Lab.Instruments;
 /// <param name="Instrument">Id of the instrument.</param>
 /// <param name="At">When it was measured: in force from then on.</param>
 /// <param name="TriplePointOhm">R(273.16 K) with its standard uncertainty, ohm.</param>
-public sealed record TriplePointCheck(string Id, int Revision, string Instrument, Instant At, Estimate TriplePointOhm);
+public sealed record TriplePointCheck(string Id, int Revision, string Instrument, Instant At, Estimate TriplePointOhm)
+{
+    /// <summary>First instant at which the check is withdrawn: what was before stays judged by it. Null while it is not.</summary>
+    public Instant? WithdrawnFrom { get; init; }
+}

@@ -12,6 +12,7 @@ internal static class LabFileChecks
 {
     public static void Run(
         IReadOnlyList<ReferenceSource> sources,
+        IReadOnlyList<Placed<ReferenceSource>> formerSources,
         InstrumentSection.Instruments instruments,
         IReadOnlyList<AcceptanceLimit> limits,
         IReadOnlyList<Notifier> notifiers,
@@ -22,13 +23,21 @@ internal static class LabFileChecks
         Unique(findings, "/limits", limits.Select(limit => $"{limit.Id}@{limit.Revision}"));
         Unique(findings, "/notifiers", notifiers.Select(notifier => notifier.Id));
         UniqueCertificates(findings, instruments);
+        Unique(findings, "/instruments/*/triplePointChecks", instruments.TriplePointChecks.Select(check => $"{check.Id}@{check.Revision}"));
         for (int i = 0; i < sources.Count; i++)
         {
             CheckSource(findings, sources[i], $"/sources/{i}");
         }
 
-        CheckInstruments(findings, sources, instruments);
-        CheckLimits(findings, sources, limits);
+        foreach ((ReferenceSource former, string pointer) in formerSources)
+        {
+            CheckSource(findings, former, pointer);
+        }
+
+        // What is on record may refer to what a source was before.
+        IReadOnlyList<ReferenceSource> known = [.. sources, .. formerSources.Select(former => former.Value)];
+        CheckInstruments(findings, known, instruments);
+        CheckLimits(findings, known, limits);
     }
 
     private static void CheckSource(List<Finding> findings, ReferenceSource source, string pointer)
@@ -109,11 +118,7 @@ internal static class LabFileChecks
 
     private static void CheckInstruments(List<Finding> findings, IReadOnlyList<ReferenceSource> sources, InstrumentSection.Instruments instruments)
     {
-        Dictionary<ChannelKey, Channel> channels = [];
-        foreach (Channel channel in sources.SelectMany(source => source.Channels))
-        {
-            channels.TryAdd(channel.Key, channel);
-        }
+        ILookup<ChannelKey, Channel> channels = sources.SelectMany(source => source.Channels).ToLookup(channel => channel.Key);
 
         foreach ((Certificate certificate, string pointer) in instruments.Certificates.Select(placed => (placed.Value, placed.Pointer)))
         {
@@ -125,9 +130,9 @@ internal static class LabFileChecks
 
         foreach ((Installation stay, string pointer) in instruments.Installations.Select(placed => (placed.Value, placed.Pointer)))
         {
-            if (channels.TryGetValue(stay.Channel, out Channel? channel))
+            if (channels.Contains(stay.Channel))
             {
-                CheckUnits(findings, instruments, stay.Instrument, channel);
+                CheckUnits(findings, instruments, stay.Instrument, stay.Channel, [.. channels[stay.Channel].Select(channel => channel.Unit).Distinct()]);
             }
             else
             {
@@ -146,17 +151,17 @@ internal static class LabFileChecks
         }
     }
 
-    private static void CheckUnits(List<Finding> findings, InstrumentSection.Instruments instruments, string instrument, Channel channel)
+    private static void CheckUnits(List<Finding> findings, InstrumentSection.Instruments instruments, string instrument, ChannelKey channel, string[] units)
     {
         foreach ((Certificate certificate, string pointer) in instruments.Certificates.Select(placed => (placed.Value, placed.Pointer)))
         {
             bool isOther = !string.Equals(certificate.Instrument, instrument, StringComparison.Ordinal);
             bool isUnread = double.IsNaN(certificate.Characteristic.CoverageFactor);
-            if (!isOther && !isUnread && !string.Equals(certificate.Characteristic.RawUnit, channel.Unit, StringComparison.Ordinal))
+            if (!isOther && !isUnread && !units.Contains(certificate.Characteristic.RawUnit, StringComparer.Ordinal))
             {
                 findings.Add(new Finding(
-                    "unit-mismatch", pointer + "/characteristic", $"The characteristic takes {certificate.Characteristic.RawUnit}, but {channel.Key} is read in {channel.Unit}.",
-                    channel.Unit, "Correct the channel's unit or the certificate's characteristic."));
+                    "unit-mismatch", pointer + "/characteristic", $"The characteristic takes {certificate.Characteristic.RawUnit}, but {channel} is read in {units[0]}.",
+                    units[0], "Correct the channel's unit or the certificate's characteristic."));
             }
         }
     }
@@ -178,14 +183,14 @@ internal static class LabFileChecks
         for (int i = 0; i < limits.Count; i++)
         {
             AcceptanceLimit limit = limits[i];
-            ReferenceSource? source = sources.FirstOrDefault(candidate => candidate.Key == limit.Source);
-            if (source is null)
+            ReferenceSource[] revisions = [.. sources.Where(candidate => candidate.Key == limit.Source)];
+            if (revisions.Length == 0)
             {
                 findings.Add(new Finding("unknown-reference", $"/limits/{i}/source", "This source does not exist.", limit.Source.Source, "Use the id of a source of this file."));
             }
             else if (limit.Band is not null)
             {
-                Known(findings, [.. source.Bands.Select(band => band.Id)], limit.Band, $"/limits/{i}/band", "band", "Use one of the source's bands.");
+                Known(findings, [.. revisions.SelectMany(source => source.Bands).Select(band => band.Id)], limit.Band, $"/limits/{i}/band", "band", "Use one of the source's bands.");
             }
         }
     }

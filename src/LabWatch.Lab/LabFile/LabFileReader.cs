@@ -19,6 +19,10 @@ public static class LabFileReader
     /// <summary>Largest lab file, bytes.</summary>
     public const int MaximumLength = 16 * 1024 * 1024;
 
+    /// <summary>How the text is read: comments and trailing commas are allowed, a member given twice is not.</summary>
+    internal static readonly JsonDocumentOptions JsonOptions =
+        new() { CommentHandling = JsonCommentHandling.Skip, AllowTrailingCommas = true, AllowDuplicateProperties = false, MaxDepth = 32 };
+
     /// <summary>The published JSON Schema of the lab file.</summary>
     public static string Schema
     {
@@ -44,10 +48,9 @@ public static class LabFileReader
             return new LabFileResult(null, [new Finding("not-utf8", string.Empty, "The file is not UTF-8 text.", null, "Save it as UTF-8.")]);
         }
 
-        JsonDocumentOptions options = new() { CommentHandling = JsonCommentHandling.Skip, AllowTrailingCommas = true, AllowDuplicateProperties = false, MaxDepth = 32 };
         try
         {
-            using JsonDocument document = JsonDocument.Parse(text, options);
+            using JsonDocument document = JsonDocument.Parse(text, JsonOptions);
             return Read(document.RootElement);
         }
         catch (InvalidOperationException)
@@ -72,7 +75,7 @@ public static class LabFileReader
             return new LabFileResult(null, findings);
         }
 
-        top.OnlyMembers("$schema", "format", "site", "sources", "instruments", "limits", "notifiers");
+        top.OnlyMembers("$schema", "format", "site", "sources", "instruments", "limits", "notifiers", RecordedSection.Member);
         if (!string.Equals(top.Text("format"), Format, StringComparison.Ordinal))
         {
             top.Report("unknown-format", "This format of lab file is not known.", $"Write \"{Format}\", or use the program that wrote the file.", "format");
@@ -84,20 +87,23 @@ public static class LabFileReader
         IReadOnlyList<AcceptanceLimit> limits = [.. top.Items("limits", required: false).Select(item => LimitSection.Read(item, site.Id))];
         IReadOnlyList<Notifier> notifiers = [.. top.Items("notifiers", required: false).Select(NotifierSection.Read)];
 
-        LabFileChecks.Run(sources, instruments, limits, notifiers, findings);
+        RecordedSection recorded = RecordedSection.Read(top, site.Id);
+
+        LabFileChecks.Run(sources, recorded.FormerSources, instruments, limits, notifiers, findings);
         LabSnapshot? snapshot = findings.Count > 0
             ? null
             : new LabSnapshot(
                 site,
-                sources,
-                instruments.All,
+                [.. sources.Select(recorded.Apply)],
+                [.. instruments.All.Select(recorded.Apply)],
                 [.. instruments.Installations.Select(stay => stay.Value)],
-                [.. instruments.Certificates.Select(certificate => certificate.Value)],
-                limits,
+                [.. instruments.Certificates.Select(certificate => recorded.Apply(certificate.Value))],
+                [.. limits.Select(recorded.Apply)],
                 notifiers)
             {
-                TriplePointChecks = instruments.TriplePointChecks,
+                FormerSources = [.. recorded.FormerSources.Select(source => source.Value)],
+                TriplePointChecks = [.. instruments.TriplePointChecks.Select(recorded.Apply)],
             };
-        return new LabFileResult(snapshot, findings);
+        return new LabFileResult(snapshot, findings) { Recorded = recorded.Recorded };
     }
 }

@@ -1,5 +1,6 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
 
 namespace LabWatch.Lab.LabFile;
 
@@ -15,7 +16,7 @@ internal static class SourceSection
     public static ReferenceSource Read(JsonCursor item, string site)
     {
         item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
-            "view", "baselines", "surroundings", "wellToWallDrop");
+            "view", "baselines", "surroundings", "wellToWallDrop", "effectiveFrom");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(
@@ -34,6 +35,7 @@ internal static class SourceSection
             Baselines = [.. item.Items("baselines", required: false).Select(RadianceSection.Baseline)],
             SurroundingsOffsetKelvin = RadianceSection.Surroundings(item),
             WellToWallDrop = RadianceSection.Drop(item),
+            EffectiveFrom = item.OptionalTime("effectiveFrom") ?? Instant.MinValue,
         };
     }
 

@@ -24,4 +24,7 @@ public sealed record AcceptanceLimit(
 
     /// <summary>Working band it applies to; null for all.</summary>
     public string? Band { get; init; }
+
+    /// <summary>First instant at which the limit is withdrawn: what was before stays judged by it. Null while it is not.</summary>
+    public Instant? WithdrawnFrom { get; init; }
 }
