@@ -20,17 +20,22 @@ internal sealed class PositionLedger(RecordsDatabase database) : IPositionLedger
         await database.WriteAsync(
             async context =>
             {
-                PositionRow? row = await context.Positions.FindAsync([AllSites, reader], cancellationToken);
-                if (row is null)
-                {
-                    context.Positions.Add(new PositionRow { Site = AllSites, Reader = reader, Position = position });
-                }
-                else
-                {
-                    row.Position = position;
-                }
-
+                await MoveAsync(context, reader, position, cancellationToken);
                 return 0;
             },
             cancellationToken);
+
+    /// <summary>Stores a position inside the caller's transaction.</summary>
+    public static async Task MoveAsync(RecordsContext context, string reader, long position, CancellationToken cancellationToken)
+    {
+        PositionRow? row = await context.Positions.FindAsync([AllSites, reader], cancellationToken);
+        if (row is null)
+        {
+            context.Positions.Add(new PositionRow { Site = AllSites, Reader = reader, Position = position });
+        }
+        else
+        {
+            row.Position = position;
+        }
+    }
 }

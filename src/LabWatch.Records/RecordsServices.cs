@@ -1,6 +1,7 @@
 using LabWatch.Lab.Findings;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
+using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
 using LabWatch.Records.Storage;
 using Microsoft.Extensions.DependencyInjection;
@@ -33,6 +34,7 @@ public static class RecordsServices
         services.TryAddSingleton<RecordsMigrator>();
         services.TryAddSingleton<RecordsDatabase>();
         services.TryAddSingleton<IPositionLedger, PositionLedger>();
+        services.TryAddSingleton<IAuditLedger, AuditLedger>();
         services.TryAddSingleton<IAssessmentLedger, AssessmentLedger>();
         services.TryAddSingleton<IAlertLedger, AlertLedger>();
         services.TryAddSingleton<ILabImportLedger, LabImportLedger>();

@@ -47,7 +47,7 @@ public static class CanonicalJson
         foreach ((string name, JsonNode? value) in members.OrderBy(member => member.Key, StringComparer.Ordinal))
         {
             Separate(output, ref isFirst);
-            WriteText(output, name);
+            CanonicalUtf8.WriteText(output, name);
             output.Write(":"u8);
             WriteNode(output, value);
         }
@@ -83,60 +83,8 @@ public static class CanonicalJson
                 output.Write(Encoding.ASCII.GetBytes(CanonicalNumber.Write(number)));
                 break;
             default:
-                WriteText(output, value.GetValue<string>());
+                CanonicalUtf8.WriteText(output, value.GetValue<string>());
                 break;
-        }
-    }
-
-    private static void WriteText(ArrayBufferWriter<byte> output, string text)
-    {
-        output.Write("\""u8);
-        foreach (Rune rune in Runes(text))
-        {
-            WriteRune(output, rune);
-        }
-
-        output.Write("\""u8);
-    }
-
-    private static IEnumerable<Rune> Runes(string text)
-    {
-        for (int i = 0; i < text.Length;)
-        {
-            if (!Rune.TryGetRuneAt(text, i, out Rune rune))
-            {
-                throw new ArgumentException("A text holds half of a surrogate pair, which has no canonical form.", nameof(text));
-            }
-
-            i += rune.Utf16SequenceLength;
-            yield return rune;
-        }
-    }
-
-    private static void WriteRune(ArrayBufferWriter<byte> output, Rune rune)
-    {
-        ReadOnlySpan<byte> escaped = rune.Value switch
-        {
-            '"' => "\\\""u8,
-            '\\' => "\\\\"u8,
-            '\b' => "\\b"u8,
-            '\t' => "\\t"u8,
-            '\n' => "\\n"u8,
-            '\f' => "\\f"u8,
-            '\r' => "\\r"u8,
-            _ => default,
-        };
-        if (escaped.Length > 0)
-        {
-            output.Write(escaped);
-        }
-        else if (rune.Value < 0x20)
-        {
-            output.Write(Encoding.ASCII.GetBytes(FormattableString.Invariant($"\\u{rune.Value:x4}")));
-        }
-        else
-        {
-            output.Advance(rune.EncodeToUtf8(output.GetSpan(4)));
         }
     }
 

@@ -1,3 +1,4 @@
+using LabWatch.Records.Audit;
 using LabWatch.Records.Storage.Rows;
 using Microsoft.EntityFrameworkCore;
 
@@ -35,6 +36,11 @@ internal abstract class RecordsContext(DbContextOptions options) : DbContext(opt
     public DbSet<SessionRow> Sessions => Set<SessionRow>();
 
     public DbSet<TokenRow> Tokens => Set<TokenRow>();
+
+    public DbSet<AuditEntryRow> AuditEntries => Set<AuditEntryRow>();
+
+    /// <summary>Ends of the audit chains that this context has read or made, by site.</summary>
+    public Dictionary<string, AuditHead> ChainHeads { get; } = new(StringComparer.Ordinal);
 
     protected override void OnModelCreating(ModelBuilder modelBuilder) => RecordsModel.Build(modelBuilder);
 }

@@ -13,6 +13,7 @@ internal static class RecordsModel
         Alerts(model);
         model.Entity<PositionRow>(table => table.ToTable("positions").HasKey(row => new { row.Site, row.Reader }));
         model.Entity<LabImportRow>(table => table.ToTable("lab_imports").HasKey(row => new { row.Site, row.Sequence }));
+        model.Entity<AuditEntryRow>(table => table.ToTable("audit_entries").HasKey(row => new { row.Site, row.Sequence }));
         Lab(model);
         People(model);
         NameColumns(model);

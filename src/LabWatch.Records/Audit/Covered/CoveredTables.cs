@@ -1,0 +1,23 @@
+using LabWatch.Records.Storage.Rows;
+
+namespace LabWatch.Records.Audit.Covered;
+
+/// <summary>
+/// Every table that the audit trail covers. To cover a table: add a line here, and call <see cref="AuditChain.CoverAsync"/> for each row
+/// that is added (or changed) in the transaction that writes it. No two tables may share a form of subject.
+/// </summary>
+internal static class CoveredTables
+{
+    /// <summary>The tables.</summary>
+    public static IReadOnlyList<CoveredTable> All { get; } =
+    [
+        CoveredTable.AppendOnly<AssessmentRow>("assessment/{id}"),
+        CoveredTable.AppendOnly<AlertTransitionRow>("alert/{alert_id}/{sequence}"),
+        CoveredTable.AppendOnly<LabImportRow>("lab-import/{sequence}"),
+    ];
+
+    /// <summary>The description of a row's table.</summary>
+    /// <exception cref="ArgumentException">The trail does not cover rows of this type.</exception>
+    public static CoveredTable Of(Type row) =>
+        All.FirstOrDefault(table => table.Row == row) ?? throw new ArgumentException($"The audit trail does not cover {row.Name}.", nameof(row));
+}
