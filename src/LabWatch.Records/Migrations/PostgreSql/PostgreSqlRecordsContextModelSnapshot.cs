@@ -433,6 +433,59 @@ namespace LabWatch.Records.Migrations.PostgreSql
                     b.ToTable("assessments", (string)null);
                 });
 
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AuditEntryRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("text")
+                        .HasColumnName("site");
+
+                    b.Property<long>("Sequence")
+                        .HasColumnType("bigint")
+                        .HasColumnName("sequence");
+
+                    b.Property<string>("Action")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("action");
+
+                    b.Property<string>("Actor")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("actor");
+
+                    b.Property<long>("At")
+                        .HasColumnType("bigint")
+                        .HasColumnName("at");
+
+                    b.Property<string>("Content")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("content");
+
+                    b.Property<byte[]>("Digest")
+                        .IsRequired()
+                        .HasColumnType("bytea")
+                        .HasColumnName("digest");
+
+                    b.Property<byte[]>("Previous")
+                        .IsRequired()
+                        .HasColumnType("bytea")
+                        .HasColumnName("previous");
+
+                    b.Property<byte[]>("RecordDigest")
+                        .HasColumnType("bytea")
+                        .HasColumnName("record_digest");
+
+                    b.Property<string>("Subject")
+                        .IsRequired()
+                        .HasColumnType("text")
+                        .HasColumnName("subject");
+
+                    b.HasKey("Site", "Sequence");
+
+                    b.ToTable("audit_entries", (string)null);
+                });
+
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.LabImportRow", b =>
                 {
                     b.Property<string>("Site")

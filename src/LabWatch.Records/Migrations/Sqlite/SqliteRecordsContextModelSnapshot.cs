@@ -428,6 +428,59 @@ namespace LabWatch.Records.Migrations.Sqlite
                     b.ToTable("assessments", (string)null);
                 });
 
+            modelBuilder.Entity("LabWatch.Records.Storage.Rows.AuditEntryRow", b =>
+                {
+                    b.Property<string>("Site")
+                        .HasColumnType("TEXT")
+                        .HasColumnName("site");
+
+                    b.Property<long>("Sequence")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("sequence");
+
+                    b.Property<string>("Action")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("action");
+
+                    b.Property<string>("Actor")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("actor");
+
+                    b.Property<long>("At")
+                        .HasColumnType("INTEGER")
+                        .HasColumnName("at");
+
+                    b.Property<string>("Content")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("content");
+
+                    b.Property<byte[]>("Digest")
+                        .IsRequired()
+                        .HasColumnType("BLOB")
+                        .HasColumnName("digest");
+
+                    b.Property<byte[]>("Previous")
+                        .IsRequired()
+                        .HasColumnType("BLOB")
+                        .HasColumnName("previous");
+
+                    b.Property<byte[]>("RecordDigest")
+                        .HasColumnType("BLOB")
+                        .HasColumnName("record_digest");
+
+                    b.Property<string>("Subject")
+                        .IsRequired()
+                        .HasColumnType("TEXT")
+                        .HasColumnName("subject");
+
+                    b.HasKey("Site", "Sequence");
+
+                    b.ToTable("audit_entries", (string)null);
+                });
+
             modelBuilder.Entity("LabWatch.Records.Storage.Rows.LabImportRow", b =>
                 {
                     b.Property<string>("Site")
