@@ -22,6 +22,9 @@ public sealed record AssessmentsOptions
     /// <summary>Windows of the criterion <c>stability</c>.</summary>
     public CriterionSchedule Stability { get; init; } = StabilityCriterion.DefaultSchedule;
 
+    /// <summary>Windows of the criterion <c>data-health</c>.</summary>
+    public CriterionSchedule DataHealth { get; init; } = DataHealthCriterion.DefaultSchedule;
+
     /// <summary>Version that provenance names.</summary>
     public string ProgramVersion { get; init; } =
         typeof(AssessmentsOptions).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
@@ -32,10 +35,8 @@ public sealed record AssessmentsOptions
         List<Finding> findings = [];
         Check(findings, nameof(WakeInterval), WakeInterval, TimeSpan.FromSeconds(1), TimeSpan.FromMinutes(10));
         Check(findings, nameof(HourQuiet), HourQuiet, TimeSpan.FromSeconds(1), TimeSpan.FromHours(1));
-        Check(findings, "Stability:Window", Stability.Window, TimeSpan.FromMinutes(1), TimeSpan.FromHours(24));
-        Check(findings, "Stability:Every", Stability.Every, TimeSpan.FromMinutes(1), Stability.Window);
-        Check(findings, "Stability:LeadIn", Stability.LeadIn, TimeSpan.FromMinutes(1), TimeSpan.FromHours(24));
-        Check(findings, "Stability:Grace", Stability.Grace, TimeSpan.Zero, TimeSpan.FromMinutes(10));
+        Check(findings, nameof(Stability), Stability, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(DataHealth), DataHealth, leastLeadIn: TimeSpan.Zero);
         if (Concurrency is < 1 or > 64)
         {
             findings.Add(new Finding(
@@ -44,6 +45,14 @@ public sealed record AssessmentsOptions
         }
 
         return findings;
+    }
+
+    private static void Check(List<Finding> findings, string criterion, CriterionSchedule schedule, TimeSpan leastLeadIn)
+    {
+        Check(findings, $"{criterion}:Window", schedule.Window, TimeSpan.FromMinutes(1), TimeSpan.FromHours(24));
+        Check(findings, $"{criterion}:Every", schedule.Every, TimeSpan.FromMinutes(1), schedule.Window);
+        Check(findings, $"{criterion}:LeadIn", schedule.LeadIn, leastLeadIn, TimeSpan.FromHours(24));
+        Check(findings, $"{criterion}:Grace", schedule.Grace, TimeSpan.Zero, TimeSpan.FromMinutes(10));
     }
 
     private static void Check(List<Finding> findings, string name, TimeSpan value, TimeSpan least, TimeSpan most)

@@ -29,6 +29,7 @@ public static class AssessmentsServices
         services.TryAddSingleton(TimeProvider.System);
         services.TryAddSingleton(options);
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, StabilityCriterion>(_ => new StabilityCriterion(options.Stability)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, DataHealthCriterion>(_ => new DataHealthCriterion(options.DataHealth)));
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();

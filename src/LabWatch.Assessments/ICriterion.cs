@@ -18,6 +18,11 @@ public interface ICriterion
     IReadOnlyList<string> Channels(ReferenceSource source);
 
     /// <summary>
+    /// Whether it turns readings into temperatures, so that another certificate in force makes another result. False where it looks at raw readings alone.
+    /// </summary>
+    bool RestsOnCertificates => true;
+
+    /// <summary>
     /// The working band that a scope of a source is about, so that the limit of that band goes before one for all bands; null where a scope is about none.
     /// A scope is empty, the id of a working band, or the id of a channel of the source.
     /// </summary>

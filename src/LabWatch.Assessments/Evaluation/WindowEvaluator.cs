@@ -24,8 +24,9 @@ internal sealed class WindowEvaluator(LabSnapshot snapshot, ReferenceSource sour
     public IReadOnlyList<string> Channels => _channels;
 
     /// <summary>The certificates in force for a window, as <c>id@revision</c> in ordinal order.</summary>
-    public IReadOnlyList<string> CertificatesInForce(TimeWindow window) =>
-        [.. _channels
+    public IReadOnlyList<string> CertificatesInForce(TimeWindow window) => !criterion.RestsOnCertificates
+        ? []
+        : [.. _channels
             .Select(id => source.FindChannel(id))
             .OfType<Channel>()
             .SelectMany(channel => CertificateTimeline.Of(snapshot, channel.Key, criterion.Schedule.SpanOf(window)).References)
@@ -37,9 +38,8 @@ internal sealed class WindowEvaluator(LabSnapshot snapshot, ReferenceSource sour
     {
         double setPoint = CriterionResult.Figure(assessment.Figures, FigureName.SetPoint);
         double nominal = double.IsNaN(setPoint) ? CriterionResult.Figure(assessment.Figures, FigureName.Mean) : setPoint;
-        AcceptanceLimit? limit = double.IsNaN(nominal)
-            ? null
-            : snapshot.LimitInForce(source.Key, criterion.Code, nominal, band: null, assessment.Window.End);
+        AcceptanceLimit? limit = LimitLookup.InForce(
+            snapshot, source.Key, criterion.Code, nominal, criterion.BandOf(source, assessment.Scope), assessment.Window.End);
         return !string.Equals(assessment.Provenance.Limit, ReferenceTo(limit), StringComparison.Ordinal)
             || !assessment.Provenance.Certificates.SequenceEqual(CertificatesInForce(assessment.Window), StringComparer.Ordinal);
     }

@@ -48,7 +48,10 @@ public sealed class PlannerServiceTests
         {
             Assert.Equal(3, provider.GetServices<IHostedService>().Count());
             Assert.Same(PlannerStatus.None, provider.GetRequiredService<IPlannerState>().Current);
-            Assert.Equal("stability", Assert.Single(provider.GetServices<ICriterion>()).Code);
+            string[] codes = [.. provider.GetServices<ICriterion>().Select(criterion => criterion.Code)];
+            Assert.Contains("stability", codes);
+            Assert.Contains("data-health", codes);
+            Assert.Equal(codes.Distinct(), codes);
             Assert.Empty(await provider.GetRequiredService<IAssessmentLedger>().LatestAsync(Token));
         }
 

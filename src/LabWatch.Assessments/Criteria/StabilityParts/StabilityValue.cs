@@ -1,3 +1,4 @@
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Instruments;
 using LabWatch.Metrology.Statistics;
 using LabWatch.Metrology.Uncertainty;
@@ -35,7 +36,7 @@ internal sealed record StabilityValue(StabilityResult Statistics, double Samplin
         return new(
             statistics,
             statistics.HalfRange.StandardUncertainty,
-            SmallestStep(celsius) / Math.Sqrt(24),
+            ReadingNoise.SmallestStep(celsius) / Math.Sqrt(24),
             double.IsFinite(relative) ? relative * statistics.HalfRange.Value : 0);
     }
 
@@ -47,23 +48,5 @@ internal sealed record StabilityValue(StabilityResult Statistics, double Samplin
         return halfRange.HasValue
             ? new(halfRange.Value * factor, halfRange.StandardUncertainty * factor, halfRange.DegreesOfFreedom)
             : Estimate.None;
-    }
-
-    /// <summary>
-    /// The resolution as the readings show it: the smallest difference between two that differ, kelvin; zero where all are equal, because
-    /// then nothing shows it. Unrounded readings give a value that is negligibly small, as it should be.
-    /// </summary>
-    internal static double SmallestStep(ReadOnlySpan<double> celsius)
-    {
-        double[] sorted = celsius.ToArray();
-        Array.Sort(sorted);
-        double smallest = double.PositiveInfinity;
-        for (int i = 1; i < sorted.Length; i++)
-        {
-            double step = sorted[i] - sorted[i - 1];
-            smallest = step > 0 ? Math.Min(smallest, step) : smallest;
-        }
-
-        return double.IsFinite(smallest) ? smallest : 0;
     }
 }

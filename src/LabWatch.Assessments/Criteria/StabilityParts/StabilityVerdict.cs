@@ -1,3 +1,4 @@
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Limits;
 using LabWatch.Metrology.Uncertainty;
 
@@ -16,11 +17,8 @@ internal sealed record StabilityVerdict(string Unit, AcceptanceLimit? Limit, Con
 
     public static StabilityVerdict Of(StabilityEvidence evidence, StabilityValue value)
     {
-        double nominal = evidence.NominalCelsius;
-        AcceptanceLimit? limit = double.IsNaN(nominal)
-            ? null
-            : evidence.Input.Snapshot.LimitInForce(
-                evidence.Input.Source.Key, CriterionCode.Stability, nominal, band: null, evidence.Window.End);
+        AcceptanceLimit? limit = LimitLookup.InForce(
+            evidence.Input.Snapshot, evidence.Input.Source.Key, CriterionCode.Stability, evidence.NominalCelsius, band: null, evidence.Window.End);
         bool comparable = limit is not null && double.IsFinite(StabilityUnit.PerKelvin(limit.Unit));
         string unit = comparable ? limit!.Unit : StabilityUnit.Millikelvin;
         ConformityResult conformity = Compare(value.In(unit), comparable ? limit : null);
