@@ -16,6 +16,13 @@ internal static class LimitSection
             item.Report("unknown-choice", "This criterion is not known.", $"Use one of: {string.Join(", ", CriterionCode.All)}.", "criterion");
         }
 
+        string unit = item.Text("unit");
+        IReadOnlyList<string> units = LimitUnits.Of(criterion);
+        if (unit.Length > 0 && units.Count > 0 && !units.Contains(unit, StringComparer.Ordinal))
+        {
+            item.Report("unit-mismatch", $"The criterion {criterion} gives no value in this unit.", $"Use one of: {string.Join(", ", units)}.", "unit");
+        }
+
         (double Minimum, double Maximum)? range = SourceSection.Range(item, required: false);
         return new AcceptanceLimit(
             item.Id("id"),
@@ -23,7 +30,7 @@ internal static class LimitSection
             new SourceKey(site, item.Id("source")),
             criterion,
             item.Number("maximum", 1e-12, 1e12),
-            item.Text("unit"),
+            unit,
             item.Choice<DecisionRule>("rule"),
             item.Time("effectiveFrom"))
         {

@@ -38,6 +38,7 @@ public sealed class LabFileReaderTests
         { "unit-mismatch", "/instruments/0/certificates/0/characteristic", false, file => file["sources"]![0]!["channels"]![0]!["unit"] = "mV" },
         { "not-rising", "/instruments/1/certificates/0/characteristic/points/1/indicatedCelsius", false, file => file["instruments"]![1]!["certificates"]![0]!["characteristic"]!["points"]![1]!["indicatedCelsius"] = -20 },
         { "unknown-choice", "/limits/0/criterion", true, file => file["limits"]![0]!["criterion"] = "beauty" },
+        { "unit-mismatch", "/limits/0/unit", false, file => file["limits"]![0]!["unit"] = "%" },
         { "unknown-reference", "/limits/0/source", false, file => file["limits"]![0]!["source"] = "oak" },
         { "not-whole", "/limits/0/revision", true, file => file["limits"]![0]!["revision"] = 1.5 },
         { "bad-address", "/notifiers/0/address", true, file => file["notifiers"]![0]!["address"] = "ftp://messages.example" },
