@@ -15,6 +15,9 @@ internal sealed class Sealer(
 {
     private const int BatchBytes = 1 << 20;
 
+    /// <summary>Each is one short transaction, so that commits come in between.</summary>
+    private const int ReleasesPerPass = 16;
+
     private readonly SemaphoreSlim _passing = new(1, 1);
     private readonly PartSealer _sealer = new();
 
@@ -43,6 +46,11 @@ internal sealed class Sealer(
             }
 
             while (chosen.Count > 0 && await WriteAsync(Drop, cancellationToken))
+            {
+                cancellationToken.ThrowIfCancellationRequested();
+            }
+
+            for (int turn = 0; turn < ReleasesPerPass && await WriteAsync(writer => writer.ReleaseSpace(), cancellationToken); turn++)
             {
                 cancellationToken.ThrowIfCancellationRequested();
             }

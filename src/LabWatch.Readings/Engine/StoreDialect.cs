@@ -94,6 +94,12 @@ internal abstract class StoreDialect
     /// <summary>Whether an error of the database says that what it stores is damaged (otherwise it is taken as unavailable).</summary>
     public abstract bool SaysDamaged(DbException error);
 
+    /// <summary>
+    /// Gives a bounded piece of the space that dropped rows left behind back to the disk; true while there is more of it than is worth
+    /// keeping for new rows. Called between commits, so it takes a few milliseconds at most.
+    /// </summary>
+    public abstract bool ReleaseSpace(StoreConnection connection);
+
     /// <summary>Moves a database that cannot be opened at all out of the way, so that a new one can take readings; gives where it went.</summary>
     public abstract string SetWholeAside(string stamp);
 }

@@ -96,6 +96,9 @@ internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connecti
         return more;
     }
 
+    /// <summary>Gives some of the space of dropped rows back to the disk; true while there is more.</summary>
+    public bool ReleaseSpace() => dialect.ReleaseSpace(connection);
+
     public void Dispose() => connection.Dispose();
 
     private bool DropJournal(DbTransaction transaction, long floor)

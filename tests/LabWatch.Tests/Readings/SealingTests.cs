@@ -51,6 +51,28 @@ public sealed class SealingTests
     }
 
     [Fact]
+    public async Task Space_of_sealed_readings_goes_back_to_the_disk_but_for_a_reserve()
+    {
+        const long Reserve = 4096;
+        await using StoreBench bench = new();
+        Random random = new(7);
+        for (int second = 0; second < 1_600; second++)
+        {
+            await bench.AppendAsync(second, [.. Enumerable.Range(0, 1_000).Select(_ => random.NextDouble())]);
+        }
+
+        Assert.True(bench.Number("SELECT SUM(LENGTH(data)) FROM journal") > Reserve * 2048 * 1.2);
+        await bench.Store.SealEverythingAsync(Token);
+        await bench.Store.SealDueAsync(Token);
+        double[] values = await bench.ValuesAsync("t999");
+        await bench.Store.DisposeAsync();
+
+        Assert.Equal(1_600, values.Length);
+        Assert.InRange(bench.Number("SELECT freelist_count FROM pragma_freelist_count"), 1, Reserve);
+        Assert.Equal(0, bench.Number("SELECT COUNT(*) FROM pragma_integrity_check WHERE integrity_check <> 'ok'"));
+    }
+
+    [Fact]
     public async Task History_in_order_beside_live_packs_makes_one_part_an_hour_and_a_bounded_head()
     {
         await using StoreBench bench = new(new ReadingsOptions { DataDirectory = "", UnsealedReadingsLimit = 10_000, JournalBytesLimit = 1 << 20 });

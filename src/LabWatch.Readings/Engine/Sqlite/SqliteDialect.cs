@@ -8,6 +8,11 @@ namespace LabWatch.Readings.Engine.Sqlite;
 internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWriterOpened = null) : StoreDialect
 {
     private const int Corrupt = 11;
+
+    /// <summary>Free pages that stay for new rows (8 MiB): the journal of some hours comes and goes without the file growing and shrinking.</summary>
+    private const int FreePagesKept = 4096;
+
+    private const string ReleasePages = "PRAGMA incremental_vacuum(256)";
     private const int NotADatabase = 26;
 
     private const string Tables =
@@ -56,6 +61,17 @@ internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWri
     public override DbConnection OpenReader() => Open(SqliteOpenMode.ReadOnly);
 
     public override bool SaysDamaged(DbException error) => error is SqliteException { SqliteErrorCode: Corrupt or NotADatabase };
+
+    public override bool ReleaseSpace(StoreConnection connection)
+    {
+        if (connection.Number(null, "PRAGMA freelist_count") <= FreePagesKept)
+        {
+            return false;
+        }
+
+        connection.Execute(null, ReleasePages);
+        return true;
+    }
 
     public override string SetWholeAside(string stamp)
     {
