@@ -30,11 +30,14 @@ public static class IntakeCode
     /// <summary>The payload is not UTF-8.</summary>
     public const string NotUtf8 = "not-utf-8";
 
-    /// <summary>The payload is neither SenML JSON nor, on a channel's topic, a bare number.</summary>
+    /// <summary>The payload is neither SenML (JSON or CBOR) nor, on a channel's topic, a bare number.</summary>
     public const string NotSenml = "not-senml";
 
     /// <summary>The payload breaks the grammar of JSON or is nested too deeply.</summary>
     public const string MalformedJson = "malformed-json";
+
+    /// <summary>The payload breaks the grammar of CBOR or is nested too deeply.</summary>
+    public const string MalformedCbor = "malformed-cbor";
 
     /// <summary>The pack holds more records than the limit.</summary>
     public const string TooManyRecords = "too-many-records";

@@ -1,4 +1,5 @@
 using System.Buffers;
+using System.Globalization;
 using System.Text.Unicode;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
@@ -43,6 +44,11 @@ internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, 
 
     private static DecodedMessage Decode(ReadOnlySpan<byte> bytes, in DecodeContext context)
     {
+        if (SenmlCborTranscoder.IsCbor(bytes))
+        {
+            return DecodeCbor(bytes, context);
+        }
+
         ReadOnlySpan<byte> utf8 = bytes.StartsWith("\uFEFF"u8) ? bytes[3..] : bytes;
         int start = utf8.IndexOfAnyExcept(" \t\r\n"u8);
         if (start < 0)
@@ -59,6 +65,28 @@ internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, 
         return json || context.Route.Channel is not null
             ? Decode(utf8, json, context)
             : Refuse(IntakeCode.NotSenml, "The payload is no SenML pack; bare numbers go to a channel's topic.", "Send a JSON array of SenML records.");
+    }
+
+    private static DecodedMessage DecodeCbor(ReadOnlySpan<byte> bytes, in DecodeContext context)
+    {
+        byte[] rented = ArrayPool<byte>.Shared.Rent(bytes.Length);
+        try
+        {
+            bytes.CopyTo(rented);
+            var json = new ArrayBufferWriter<byte>(Math.Max(256, 2 * bytes.Length));
+            return SenmlCborTranscoder.TryWrite(rented.AsMemory(0, bytes.Length), context.Limits.MaximumDepth, json, out int at)
+                ? Decode(json.WrittenSpan, json: true, context)
+                : new DecodedMessage(null, [new Finding(
+                    IntakeCode.MalformedCbor,
+                    string.Create(CultureInfo.InvariantCulture, $"byte {at}"),
+                    "The payload breaks the grammar of CBOR or is nested too deeply.",
+                    Finding.Quote(Convert.ToHexStringLower(bytes[at..Math.Min(bytes.Length, at + 16)])),
+                    "Send a SenML pack as CBOR or JSON.")]);
+        }
+        finally
+        {
+            ArrayPool<byte>.Shared.Return(rented);
+        }
     }
 
     private static DecodedMessage Decode(ReadOnlySpan<byte> utf8, bool json, in DecodeContext context)

@@ -49,6 +49,38 @@ public class FuzzTests
         }
     }
 
+    [Theory]
+    [InlineData(11)]
+    [InlineData(12)]
+    public void Mutated_packs_in_cbor_give_readings_or_findings(int seed)
+    {
+        var random = new Random(seed);
+        PayloadDecoder decoder = DecodingBench.Decoder();
+        byte[][] seeds = [CborPack.Rfc8428Section6, CborPack.Of(("well-1", 107.793, 1_796_112_930), ("well-2", 107.8, 1_796_112_931), ("power", 55, 1_796_112_932))];
+        for (int i = 0; i < 10_000; i++)
+        {
+            byte[] payload = Mutate(seeds[random.Next(seeds.Length)], random);
+            long before = GC.GetAllocatedBytesForCurrentThread();
+            DecodedMessage decoded = DecodingBench.Decode(payload, IntakeLab.Topic, false, decoder);
+            long allocated = GC.GetAllocatedBytesForCurrentThread() - before;
+            Assert.True(allocated < 64_000 + (64 * payload.Length), $"{allocated} bytes for {Convert.ToHexString(payload)}");
+            Check(decoded, payload);
+        }
+    }
+
+    [Fact]
+    public void Every_cut_of_a_pack_in_cbor_is_refused_whole()
+    {
+        byte[] payload = CborPack.Of(("well-1", 107.793, 1_796_112_930), ("power", 55, 1_796_112_932));
+        PayloadDecoder decoder = DecodingBench.Decoder();
+        for (int length = 0; length < payload.Length; length++)
+        {
+            DecodedMessage decoded = DecodingBench.Decode(payload[..length], IntakeLab.Topic, false, decoder);
+            Assert.Null(decoded.Pack);
+            Assert.NotEmpty(decoded.Findings);
+        }
+    }
+
     [Fact]
     public void Random_bytes_give_findings()
     {
