@@ -16,4 +16,13 @@ internal static partial class AssessmentsLog
 
     [LoggerMessage(3003, LogLevel.Information, "Assessments: planner started with {Criteria} criteria; it looks for due windows every {Seconds} s.")]
     public static partial void Started(ILogger logger, int criteria, double seconds);
+
+    [LoggerMessage(3010, LogLevel.Warning, "Assessments: the kept trace {Path} is damaged or foreign; it is traced again.")]
+    public static partial void TraceDamaged(ILogger logger, string path);
+
+    [LoggerMessage(3011, LogLevel.Warning, "Assessments: the trace {Path} could not be read or kept: {Reason}")]
+    public static partial void TraceNotKept(ILogger logger, string path, string reason);
+
+    [LoggerMessage(3012, LogLevel.Error, "Assessments: the cavity model of {Source} could not be made.")]
+    public static partial void WarmUpFailed(ILogger logger, Exception exception, string source);
 }

@@ -13,10 +13,16 @@ public sealed class HitCounts
     private readonly long _rays;
 
     internal HitCounts(HitTally tally, CavityMethod method, double diffuseFraction, double relativeError, long rays = 0)
+        : this(tally.Grid, method, diffuseFraction, relativeError, rays, tally.Second, tally.Orders, tally.MeanHits(), tally.Escapes)
     {
-        (Grid, Method, DiffuseFraction, RelativeError) = (tally.Grid, method, diffuseFraction, relativeError);
-        (_orders, _hits, _escapes, Second, _rays) = (tally.Orders, tally.MeanHits(), tally.Escapes, tally.Second, rays);
-        _isSecond = [.. Grid.Zones.Select(zone => tally.IsSecond(zone.Surface))];
+    }
+
+    internal HitCounts(
+        ZoneGrid grid, CavityMethod method, double diffuseFraction, double relativeError, long rays, SecondMaterial second, HitOrder[] orders, double[][] hits, double[][] escapes)
+    {
+        (Grid, Method, DiffuseFraction, RelativeError) = (grid, method, diffuseFraction, relativeError);
+        (_orders, _hits, _escapes, Second, _rays) = (orders, hits, escapes, second, rays);
+        _isSecond = [.. Grid.Zones.Select(zone => HitTally.IsSecond(second, zone.Surface))];
         Depth = _orders[^1].Total + 1;
     }
 
@@ -38,8 +44,15 @@ public sealed class HitCounts
     /// <summary>Number of reflections followed; later ones go on in a fixed ratio.</summary>
     public int Depth { get; }
 
+    /// <summary>Number of rays traced; zero for the deterministic methods.</summary>
+    public long Rays => _rays;
+
     /// <summary>The orders that hits are counted by.</summary>
     public IReadOnlyList<HitOrder> Orders => _orders;
+
+    internal double[][] AllHits => _hits;
+
+    internal double[][] AllEscapes => _escapes;
 
     /// <summary>Mean hits in each zone, for one order.</summary>
     public ReadOnlySpan<double> Hits(int order) => _hits[order];

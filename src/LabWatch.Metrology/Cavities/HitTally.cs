@@ -6,15 +6,9 @@ internal sealed class HitTally
     public HitTally(ZoneGrid grid, SecondMaterial second, int depth, int replicates)
     {
         (Grid, Second, Depth) = (grid, second, depth);
-        List<HitOrder> orders = [];
-        for (int total = 0; total < depth; total++)
-        {
-            for (int b = 0; b <= (second == SecondMaterial.None ? 0 : total); b++) orders.Add(new HitOrder(total - b, b));
-        }
-
-        Orders = [.. orders];
-        Hits = [.. Enumerable.Range(0, replicates).Select(_ => new double[orders.Count * grid.Zones.Count])];
-        Escapes = [.. Enumerable.Range(0, replicates).Select(_ => new double[orders.Count * 2])];
+        Orders = OrdersOf(second, depth);
+        Hits = [.. Enumerable.Range(0, replicates).Select(_ => new double[Orders.Length * grid.Zones.Count])];
+        Escapes = [.. Enumerable.Range(0, replicates).Select(_ => new double[Orders.Length * 2])];
     }
 
     public ZoneGrid Grid { get; }
@@ -31,12 +25,26 @@ internal sealed class HitTally
     /// <summary>By replicate: twice the order, plus one where the last reflection was on the second material.</summary>
     public double[][] Escapes { get; }
 
-    public bool IsSecond(CavitySurface surface) => surface switch
+    public bool IsSecond(CavitySurface surface) => IsSecond(Second, surface);
+
+    public static bool IsSecond(SecondMaterial second, CavitySurface surface) => surface switch
     {
-        CavitySurface.Bottom => Second.HasFlag(SecondMaterial.Bottom),
-        CavitySurface.Plate => Second.HasFlag(SecondMaterial.Plate),
+        CavitySurface.Bottom => second.HasFlag(SecondMaterial.Bottom),
+        CavitySurface.Plate => second.HasFlag(SecondMaterial.Plate),
         _ => false,
     };
+
+    /// <summary>All orders of a depth, by total and then by reflections on the second material.</summary>
+    public static HitOrder[] OrdersOf(SecondMaterial second, int depth)
+    {
+        List<HitOrder> orders = [];
+        for (int total = 0; total < depth; total++)
+        {
+            for (int b = 0; b <= (second == SecondMaterial.None ? 0 : total); b++) orders.Add(new HitOrder(total - b, b));
+        }
+
+        return [.. orders];
+    }
 
     /// <summary>Index of the order with a number of reflections, some of them on the second material.</summary>
     public int IndexOf(int total, int onSecond) => Second == SecondMaterial.None ? total : total * (total + 1) / 2 + onSecond;

@@ -64,7 +64,8 @@ internal static class StabilityObstacles
         }
     }
 
-    private static IEnumerable<string> SetPoint(StabilityEvidence evidence)
+    /// <summary>The set point is unknown or changed.</summary>
+    public static IEnumerable<string> SetPoint(StabilityEvidence evidence)
     {
         if (evidence.HasSetPointChannel && !(evidence.SetPoint.LastReading >= evidence.Window.Start))
         {
@@ -77,7 +78,8 @@ internal static class StabilityObstacles
         }
     }
 
-    private static IEnumerable<string> Approach(StabilityEvidence evidence, AcceptanceLimit? limit)
+    /// <summary>The source is not at its set point, or was still approaching it.</summary>
+    public static IEnumerable<string> Approach(StabilityEvidence evidence, AcceptanceLimit? limit)
     {
         if (evidence.Before.Count == 0 || Coverage(evidence) < LeastLeadInCoverage)
         {
