@@ -25,6 +25,15 @@ public sealed record AssessmentsOptions
     /// <summary>Windows of the criterion <c>data-health</c>.</summary>
     public CriterionSchedule DataHealth { get; init; } = DataHealthCriterion.DefaultSchedule;
 
+    /// <summary>Windows of the criterion <c>axial-uniformity</c>.</summary>
+    public CriterionSchedule AxialUniformity { get; init; } = AxialUniformityCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>effective-emissivity</c>.</summary>
+    public CriterionSchedule EffectiveEmissivity { get; init; } = EffectiveEmissivityCriterion.DefaultSchedule;
+
+    /// <summary>Folder in which traces of cavities are kept, so that a start need not trace again; null for memory alone. It can be deleted at any time.</summary>
+    public string? TraceDirectory { get; init; }
+
     /// <summary>Version that provenance names.</summary>
     public string ProgramVersion { get; init; } =
         typeof(AssessmentsOptions).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()?.InformationalVersion ?? "unknown";
@@ -37,6 +46,8 @@ public sealed record AssessmentsOptions
         Check(findings, nameof(HourQuiet), HourQuiet, TimeSpan.FromSeconds(1), TimeSpan.FromHours(1));
         Check(findings, nameof(Stability), Stability, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(DataHealth), DataHealth, leastLeadIn: TimeSpan.Zero);
+        Check(findings, nameof(AxialUniformity), AxialUniformity, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(EffectiveEmissivity), EffectiveEmissivity, leastLeadIn: TimeSpan.FromMinutes(1));
         if (Concurrency is < 1 or > 64)
         {
             findings.Add(new Finding(

@@ -1,3 +1,4 @@
+using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Clock;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Assessments.Planning;
@@ -5,6 +6,7 @@ using LabWatch.Lab.Findings;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.DependencyInjection.Extensions;
 using Microsoft.Extensions.Hosting;
+using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Assessments;
 
@@ -30,6 +32,13 @@ public static class AssessmentsServices
         services.TryAddSingleton(options);
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, StabilityCriterion>(_ => new StabilityCriterion(options.Stability)));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, DataHealthCriterion>(_ => new DataHealthCriterion(options.DataHealth)));
+        services.TryAddSingleton(provider => new CavityTraces(options.TraceDirectory, provider.GetRequiredService<ILogger<CavityTraces>>()));
+        services.TryAddSingleton<ICavityModels, CavityModels>();
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, CavityWarmUp>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, AxialUniformityCriterion>(
+            provider => new AxialUniformityCriterion(options.AxialUniformity, provider.GetRequiredService<ICavityModels>())));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, EffectiveEmissivityCriterion>(
+            provider => new EffectiveEmissivityCriterion(options.EffectiveEmissivity, provider.GetRequiredService<ICavityModels>())));
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();

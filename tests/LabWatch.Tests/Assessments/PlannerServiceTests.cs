@@ -46,11 +46,13 @@ public sealed class PlannerServiceTests
         Assert.Equal(count, services.AddLabWatchAssessments(new AssessmentsOptions()).Count);
         await using (ServiceProvider provider = services.BuildServiceProvider())
         {
-            Assert.Equal(3, provider.GetServices<IHostedService>().Count());
+            Assert.Equal(4, provider.GetServices<IHostedService>().Count());
             Assert.Same(PlannerStatus.None, provider.GetRequiredService<IPlannerState>().Current);
             string[] codes = [.. provider.GetServices<ICriterion>().Select(criterion => criterion.Code)];
             Assert.Contains("stability", codes);
             Assert.Contains("data-health", codes);
+            Assert.Contains("axial-uniformity", codes);
+            Assert.Contains("effective-emissivity", codes);
             Assert.Equal(codes.Distinct(), codes);
             Assert.Empty(await provider.GetRequiredService<IAssessmentLedger>().LatestAsync(Token));
         }

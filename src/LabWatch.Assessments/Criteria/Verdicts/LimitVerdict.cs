@@ -33,9 +33,7 @@ internal sealed record LimitVerdict(Estimate Value, string Unit, AcceptanceLimit
         IReadOnlyList<(string Unit, double Factor)> units,
         IEnumerable<string> obstacles)
     {
-        AcceptanceLimit? limit = double.IsNaN(nominalCelsius)
-            ? null
-            : input.Snapshot.LimitInForce(input.Source.Key, criterion, nominalCelsius, band, input.Window.End);
+        AcceptanceLimit? limit = LimitLookup.InForce(input.Snapshot, input.Source.Key, criterion, nominalCelsius, band, input.Window.End);
         int named = limit is null ? -1 : units.Select(unit => unit.Unit).ToList().IndexOf(limit.Unit);
         (string unit, double factor) = units[Math.Max(0, named)];
         Estimate scaled = value.HasValue ? new(value.Value * factor, value.StandardUncertainty * factor, value.DegreesOfFreedom) : Estimate.None;
@@ -47,9 +45,10 @@ internal sealed record LimitVerdict(Estimate Value, string Unit, AcceptanceLimit
 
     private static IEnumerable<string> AboutLimit(string criterion, string? band, double nominalCelsius, AcceptanceLimit? limit, bool comparable)
     {
-        if (limit is null && double.IsFinite(nominalCelsius))
+        if (limit is null)
         {
-            yield return $"no acceptance limit for {criterion}{(band is null ? string.Empty : " in the band " + band)} is in force at {VerdictText.Plain(nominalCelsius)} degC";
+            yield return $"no acceptance limit for {criterion}{(band is null ? string.Empty : " in the band " + band)} is in force"
+                + (double.IsFinite(nominalCelsius) ? $" at {VerdictText.Plain(nominalCelsius)} degC" : string.Empty);
         }
         else if (limit is not null && !comparable)
         {

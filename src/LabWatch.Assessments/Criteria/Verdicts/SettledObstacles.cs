@@ -18,9 +18,8 @@ internal static class SettledObstacles
         }
 
         StabilityEvidence evidence = StabilityEvidence.Of(input, schedule);
-        AcceptanceLimit? stability = double.IsNaN(evidence.NominalCelsius)
-            ? null
-            : input.Snapshot.LimitInForce(input.Source.Key, CriterionCode.Stability, evidence.NominalCelsius, band: null, input.Window.End);
+        AcceptanceLimit? stability = LimitLookup.InForce(
+            input.Snapshot, input.Source.Key, CriterionCode.Stability, evidence.NominalCelsius, band: null, input.Window.End);
         return (evidence.SetPoint, [.. StabilityObstacles.SetPoint(evidence), .. evidence.Within.Count > 0 ? StabilityObstacles.Approach(evidence, stability) : []]);
     }
 }
