@@ -3,6 +3,7 @@ using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
+using LabWatch.Records.Revisions;
 using LabWatch.Records.Storage;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.DependencyInjection.Extensions;
@@ -38,6 +39,7 @@ public static class RecordsServices
         services.TryAddSingleton<IAssessmentLedger, AssessmentLedger>();
         services.TryAddSingleton<IAlertLedger, AlertLedger>();
         services.TryAddSingleton<ILabImportLedger, LabImportLedger>();
+        services.TryAddSingleton<ILabRecords, LabRecords>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, RecordsStartup>());
         return services;
     }

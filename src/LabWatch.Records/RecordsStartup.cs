@@ -5,22 +5,26 @@ using Microsoft.Extensions.Logging;
 namespace LabWatch.Records;
 
 /// <summary>
-/// Prepares the database when the service starts. A database that cannot be reached does not hold the start up, because hazards are
-/// watched without it; one that is newer than the program ends it.
+/// Prepares the database beside the start of the service: hazards are watched without it, so that a locked file or a server that is away
+/// must not hold them up. A database that is newer than the program ends the service.
 /// </summary>
-internal sealed class RecordsStartup(RecordsDatabase database, ILogger<RecordsStartup> logger) : IHostedService
+internal sealed class RecordsStartup(RecordsDatabase database, ILogger<RecordsStartup> logger) : BackgroundService
 {
-    public async Task StartAsync(CancellationToken cancellationToken)
-    {
-        try
+    protected override Task ExecuteAsync(CancellationToken stoppingToken) => Task.Run(
+        async () =>
         {
-            await database.PrepareAsync(cancellationToken);
-        }
-        catch (RecordsUnavailableException exception)
-        {
-            RecordsLog.NotReady(logger, exception.Message);
-        }
-    }
-
-    public Task StopAsync(CancellationToken cancellationToken) => Task.CompletedTask;
+            try
+            {
+                await database.PrepareAsync(stoppingToken);
+            }
+            catch (RecordsUnavailableException exception)
+            {
+                RecordsLog.NotReady(logger, exception.Message);
+            }
+            catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)
+            {
+                // Stopping before it answered; whoever needs it prepares it.
+            }
+        },
+        stoppingToken);
 }

@@ -11,6 +11,7 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     DemoCommand.Create(),
     ServeCommand.Create(),
     CheckConfigCommand.Create(),
+    ImportCommand.Create(),
     CalcCommand.Create(),
 };
 

@@ -26,10 +26,10 @@ public sealed record CertificateTimeline(IReadOnlyList<CertificateStretch> Stret
         IEnumerable<Instant> changes = stays
             .SelectMany(stay => snapshot.Certificates
                 .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal))
-                .Select(certificate => certificate.ValidFrom)
+                .SelectMany(certificate => Edges(certificate.ValidFrom, certificate.WithdrawnFrom))
                 .Concat(snapshot.TriplePointChecks
                     .Where(check => string.Equals(check.Instrument, stay.Instrument, StringComparison.Ordinal))
-                    .Select(check => check.At))
+                    .SelectMany(check => Edges(check.At, check.WithdrawnFrom)))
                 .Append(stay.From)
                 .Append(stay.Until ?? span.End))
             .Where(instant => instant > span.Start && instant < span.End);
@@ -50,4 +50,6 @@ public sealed record CertificateTimeline(IReadOnlyList<CertificateStretch> Stret
 
         return new(stretches);
     }
+
+    private static IEnumerable<Instant> Edges(Instant from, Instant? withdrawn) => withdrawn is { } end ? [from, end] : [from];
 }

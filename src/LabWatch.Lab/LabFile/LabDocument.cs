@@ -31,25 +31,23 @@ public static class LabDocument
     public static IReadOnlyList<LabEntry> Split(JsonObject document)
     {
         ArgumentNullException.ThrowIfNull(document);
-        List<LabEntry> entries = [LabEntry.Of(LabRecordKind.Site, Copy(document["site"]))];
-        entries.AddRange(Items(document, "sources").Select(item => LabEntry.Of(LabRecordKind.Source, Copy(item))));
-        foreach (JsonObject item in Items(document, "instruments"))
+        List<LabEntry> entries = [LabEntry.Of(LabRecordKind.Site, Copy(document["site"])) with { Where = "/site" }, .. Entries(document, "sources", LabRecordKind.Source)];
+        foreach (LabEntry item in Entries(document, "instruments", LabRecordKind.Instrument))
         {
-            JsonObject instrument = Copy(item);
+            JsonObject instrument = item.Content;
             List<LabEntry> own = [];
             foreach ((string member, LabRecordKind kind) in OfInstrument)
             {
-                own.AddRange(Items(instrument, member).Select(child => LabEntry.Of(kind, Owned(instrument["id"]!.GetValue<string>(), child))));
+                own.AddRange(Items(instrument, member).Select((child, index) =>
+                    LabEntry.Of(kind, Owned(item.Id, child)) with { Where = FormattableString.Invariant($"{item.Where}/{member}/{index}") }));
                 instrument.Remove(member);
             }
 
-            entries.Add(LabEntry.Of(LabRecordKind.Instrument, instrument));
+            entries.Add(item);
             entries.AddRange(own);
         }
 
-        entries.AddRange(Items(document, "limits").Select(item => LabEntry.Of(LabRecordKind.Limit, Copy(item))));
-        entries.AddRange(Items(document, "notifiers").Select(item => LabEntry.Of(LabRecordKind.Notifier, Copy(item))));
-        return entries;
+        return [.. entries, .. Entries(document, "limits", LabRecordKind.Limit), .. Entries(document, "notifiers", LabRecordKind.Notifier)];
     }
 
     /// <summary>The lab file that holds some entries, in their order. What belongs to an instrument that is not among them is left out.</summary>
@@ -75,6 +73,9 @@ public static class LabDocument
 
         return document;
     }
+
+    private static IReadOnlyList<LabEntry> Entries(JsonObject document, string member, LabRecordKind kind) =>
+        [.. Items(document, member).Select((item, index) => LabEntry.Of(kind, Copy(item)) with { Where = FormattableString.Invariant($"/{member}/{index}") })];
 
     private static JsonObject Whole(LabEntry instrument, ILookup<LabRecordKind, LabEntry> byKind)
     {

@@ -1,4 +1,4 @@
-using System.Text.Json;
+using System.Globalization;
 using System.Text.Json.Nodes;
 using LabWatch.Lab.Time;
 
@@ -14,6 +14,9 @@ namespace LabWatch.Lab.LabFile;
 /// <param name="Content">The entry.</param>
 public sealed record LabEntry(LabRecordKind Kind, string Id, int? Revision, JsonObject Content)
 {
+    /// <summary>JSON Pointer of where the entry stood in the file it was taken from; empty where it was not taken from one.</summary>
+    public string Where { get; init; } = string.Empty;
+
     /// <summary>Whether entries of a kind carry their revision themselves, so that provenance can name them by <c>id@revision</c>.</summary>
     public static bool CarriesRevision(LabRecordKind kind) =>
         kind is LabRecordKind.Certificate or LabRecordKind.TriplePointCheck or LabRecordKind.Limit;
@@ -43,7 +46,7 @@ public sealed record LabEntry(LabRecordKind Kind, string Id, int? Revision, Json
         return new LabEntry(
             kind,
             kind == LabRecordKind.Installation ? StayId(content) : Text(content, "id"),
-            CarriesRevision(kind) ? (int)content["revision"]!.AsValue().GetValue<JsonElement>().GetDouble() : null,
+            CarriesRevision(kind) ? (int)double.Parse(content["revision"]!.ToJsonString(), CultureInfo.InvariantCulture) : null,
             content);
     }
 

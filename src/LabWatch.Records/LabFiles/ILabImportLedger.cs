@@ -1,15 +1,8 @@
-using LabWatch.Lab.Time;
-
 namespace LabWatch.Records.LabFiles;
 
-/// <summary>The lab files that were imported, all of them, unchanged.</summary>
+/// <summary>The lab files that were imported, all of them, unchanged. <see cref="Revisions.ILabRecords"/> imports them.</summary>
 public interface ILabImportLedger
 {
-    /// <summary>
-    /// Records a lab file. Where it is byte for byte the site's latest import, nothing is written and that one is returned.
-    /// </summary>
-    ValueTask<LabImport> RecordAsync(string site, string document, Instant at, string by, CancellationToken cancellationToken);
-
     /// <summary>The latest import of a site; null before the first.</summary>
     ValueTask<LabImport?> LatestAsync(string site, CancellationToken cancellationToken);
 

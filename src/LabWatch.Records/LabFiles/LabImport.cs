@@ -9,4 +9,8 @@ namespace LabWatch.Records.LabFiles;
 /// <param name="Document">The file, comments included.</param>
 /// <param name="At">When.</param>
 /// <param name="By">Who; <c>labwatch</c> for the service itself at start.</param>
-public sealed record LabImport(string Site, int Sequence, string Digest, string Document, Instant At, string By);
+public sealed record LabImport(string Site, int Sequence, string Digest, string Document, Instant At, string By)
+{
+    /// <summary>Why, in the words of who imported it; null where nobody said.</summary>
+    public string? Reason { get; init; }
+}

@@ -32,13 +32,14 @@ internal static class DemoCommand
     {
         TextWriter error = parsed.InvocationConfiguration.Error;
         double speed = parsed.GetValue(Speed);
-        (ServiceStart? start, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
+        (ServiceStart? start, IReadOnlyList<Finding> findings) = await StartPreparation.PrepareAsync(
             parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch-demo"),
             parsed.GetValue(CommonOptions.Config)?.FullName,
             parsed.GetValue(CommonOptions.Urls)!,
             data => DemoClock.Resume(data.Path, speed, TimeProvider.System),
-            LoadLab,
-            settings => ForDemo(settings, BrokerPort(parsed)));
+            GiveLab,
+            settings => ForDemo(settings, BrokerPort(parsed)),
+            cancellationToken);
         if (start is null)
         {
             FindingPrinter.Write(error, findings);
@@ -84,13 +85,8 @@ internal static class DemoCommand
     }
 
     // The first start writes the lab file for its day; later starts go on with the one in force.
-    private static (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings) LoadLab(DataDirectory data, TimeProvider clock)
-    {
-        string cache = LabSnapshotSource.CachePath(data.Path);
-        return File.Exists(cache)
-            ? LabSnapshotSource.Load(null, data.Path)
-            : LabSnapshotSource.Adopt(Encoding.UTF8.GetBytes(DemoLab.LabFileFor(Instant.Now(clock))), cache);
-    }
+    private static (LabOrder? Order, Finding? Finding) GiveLab(DataDirectory data, TimeProvider clock) =>
+        (new LabOrder(Encoding.UTF8.GetBytes(DemoLab.LabFileFor(Instant.Now(clock))), "the demo's lab file", "labwatch") { IsFirst = true }, null);
 
     private static void Greet(TextWriter output, IEnumerable<string> urls, ServiceStart start, double speed)
     {

@@ -10,17 +10,19 @@ internal static class ServeCommand
     public static Command Create()
     {
         Option<FileInfo> lab = new("--lab") { Description = "Lab file. Left out, the one in force since the last start goes on.", HelpName = "FILE" };
-        Command command = new("serve", "Watch a laboratory.") { lab, CommonOptions.Data, CommonOptions.Urls, CommonOptions.Config };
+        Command command = new("serve", "Watch a laboratory.") { lab, LabFileOptions.Accept, LabFileOptions.Reason, CommonOptions.Data, CommonOptions.Urls, CommonOptions.Config };
         command.SetAction(async (parsed, cancellationToken) =>
         {
             TextWriter output = parsed.InvocationConfiguration.Output;
             TextWriter error = parsed.InvocationConfiguration.Error;
-            (ServiceStart? start, IReadOnlyList<Finding> findings) = StartPreparation.Prepare(
+            (ServiceStart? start, IReadOnlyList<Finding> findings) = await StartPreparation.PrepareAsync(
                 parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch"),
                 parsed.GetValue(CommonOptions.Config)?.FullName,
                 parsed.GetValue(CommonOptions.Urls)!,
                 _ => TimeProvider.System,
-                (data, _) => LabSnapshotSource.Load(parsed.GetValue(lab)?.FullName, data.Path));
+                (_, _) => parsed.GetValue(lab) is { } file ? LabFileOptions.Read(file.FullName, parsed) : (null, null),
+                null,
+                cancellationToken);
             if (start is null)
             {
                 FindingPrinter.Write(error, findings);

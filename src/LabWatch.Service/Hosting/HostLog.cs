@@ -9,6 +9,9 @@ internal static partial class HostLog
     [LoggerMessage(7002, LogLevel.Warning, "The lab file in force is not on the record yet; trying again: {Reason}")]
     public static partial void LabNotRecorded(ILogger logger, string reason);
 
+    [LoggerMessage(7004, LogLevel.Error, "The lab file is not in force: {Finding}")]
+    public static partial void LabRefused(ILogger logger, Lab.Findings.Finding finding);
+
     [LoggerMessage(7003, LogLevel.Information, "Data in {Directory}")]
     public static partial void DataIn(ILogger logger, string directory);
 }

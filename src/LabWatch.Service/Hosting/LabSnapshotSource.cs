@@ -1,7 +1,7 @@
-using System.Security.Cryptography;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.LabFile;
+using LabWatch.Records.Revisions;
 
 namespace LabWatch.Service.Hosting;
 
@@ -9,66 +9,85 @@ namespace LabWatch.Service.Hosting;
 /// The snapshot in force. Its text is kept on disk beside the databases, so that hazards are watched from the first second even when no
 /// database answers and the lab file is out of reach.
 /// </summary>
-internal sealed class LabSnapshotSource : ILabSnapshotSource
+internal sealed class LabSnapshotSource : ILabSnapshotSource, ILabInForce
 {
-    private LabSnapshot _current;
+    private readonly Lock _gate = new();
+    private readonly string _cache;
+    private LabInForce _inForce;
 
-    private LabSnapshotSource(LabSnapshot snapshot, ReadOnlyMemory<byte> text)
-    {
-        _current = snapshot;
-        Text = text;
-    }
+    private LabSnapshotSource(LabInForce inForce, string cache) => (_inForce, _cache) = (inForce, cache);
 
     /// <inheritdoc/>
     public event EventHandler? Changed;
 
     /// <inheritdoc/>
-    public LabSnapshot Current => Volatile.Read(ref _current);
+    public LabSnapshot Current => Volatile.Read(ref _inForce).Snapshot;
 
-    /// <summary>The lab file that <see cref="Current"/> came from, UTF-8.</summary>
-    public ReadOnlyMemory<byte> Text { get; private set; }
+    /// <summary>The document in force, UTF-8.</summary>
+    public ReadOnlyMemory<byte> Text => Volatile.Read(ref _inForce).Text;
 
-    /// <summary>SHA-256 of <see cref="Text"/>, small hexadecimal digits.</summary>
-    public string Digest => Convert.ToHexStringLower(SHA256.HashData(Text.Span));
+    /// <summary>Number of the newest revision in force; 0 for a lab file that is not on record yet.</summary>
+    public long Sequence => Volatile.Read(ref _inForce).Recorded?.Sequence ?? 0;
+
+    /// <summary>A lab file that has still to be put on record; null where none has.</summary>
+    public LabOrder? Pending { get; init; }
 
     /// <summary>Where the text in force is kept in a data directory.</summary>
     public static string CachePath(string dataDirectory) => Path.Combine(dataDirectory, "lab-in-force.json");
 
-    /// <summary>Reads a lab file, or the one kept from the last start where none is named, and keeps it.</summary>
-    /// <param name="labFile">Path of the lab file; null to go on with the one in force.</param>
-    /// <param name="dataDirectory">The data directory.</param>
-    public static (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings) Load(string? labFile, string dataDirectory)
+    /// <summary>A source of a document. It is not kept yet.</summary>
+    public static (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings) Of(ReadOnlyMemory<byte> text, string cache, LabOrder? pending = null)
     {
-        string cache = CachePath(dataDirectory);
-        string path = labFile ?? cache;
-        if (labFile is null && !File.Exists(cache))
-        {
-            return (null, [new Finding("no-lab-file", "--lab", "There is no lab file yet.", null, "Name one with --lab FILE; `labwatch demo` shows a lab without one.")]);
-        }
-
-        (ReadOnlyMemory<byte>? text, string? problem) = ReadFile(path);
-        return text is { } known ? Adopt(known, cache) : (null, [Unreadable(path, problem)]);
+        (LabInForce? inForce, IReadOnlyList<Finding> findings) = LabInForce.Read(text);
+        return (inForce is null ? null : new LabSnapshotSource(inForce, cache) { Pending = pending }, findings);
     }
 
-    /// <summary>Takes a lab file's text, and keeps it on disk where it is valid.</summary>
-    public static (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings) Adopt(ReadOnlyMemory<byte> text, string cache)
+    /// <inheritdoc/>
+    public IReadOnlyList<Finding> Adopt(LabRecordSet records)
     {
-        LabFileResult result = LabFileReader.Read(text);
-        if (result.Snapshot is null)
+        ArgumentNullException.ThrowIfNull(records);
+        lock (_gate)
         {
-            return (null, result.Findings);
+            bool isKnown = records.Sequence < Sequence || (records.Sequence == Sequence && records.LatestImport?.Digest == _inForce.Recorded?.ImportDigest);
+            if (isKnown || records.Compose() is not { } text)
+            {
+                return [];
+            }
+
+            (LabInForce? inForce, IReadOnlyList<Finding> findings) = LabInForce.Read(text);
+            if (inForce is null)
+            {
+                return findings;
+            }
+
+            Volatile.Write(ref _inForce, inForce);
+            Keep();
         }
 
-        Keep(text, cache);
-        return (new LabSnapshotSource(result.Snapshot, text), []);
-    }
-
-    /// <summary>Puts another valid snapshot in force.</summary>
-    public void Replace(LabSnapshot snapshot, ReadOnlyMemory<byte> text)
-    {
-        Text = text;
-        Volatile.Write(ref _current, snapshot);
         Changed?.Invoke(this, EventArgs.Empty);
+        return [];
+    }
+
+    /// <summary>Keeps the text in force on disk, whole or not at all. The problem in words where it cannot be kept.</summary>
+    public string? Keep()
+    {
+        string fresh = _cache + ".new";
+        try
+        {
+            using (FileStream stream = new(fresh, FileMode.Create, FileAccess.Write, FileShare.None))
+            {
+                stream.Write(Text.Span);
+                stream.Flush(flushToDisk: true);
+            }
+
+            File.Move(fresh, _cache, overwrite: true);
+            return null;
+        }
+        catch (Exception exception) when (exception is IOException or UnauthorizedAccessException)
+        {
+            // The records have it; the next start reads them.
+            return exception.Message;
+        }
     }
 
     /// <summary>Reads a whole file; the problem in words where it cannot be read.</summary>
@@ -89,16 +108,4 @@ internal sealed class LabSnapshotSource : ILabSnapshotSource
     /// <summary>The finding for a lab file that cannot be read.</summary>
     internal static Finding Unreadable(string path, string? problem) =>
         new("lab-file-unreadable", "--lab", "The lab file cannot be read: " + problem, path, "Check the path and the rights of the service's account.");
-
-    private static void Keep(ReadOnlyMemory<byte> text, string cache)
-    {
-        string fresh = cache + ".new";
-        using (FileStream stream = new(fresh, FileMode.Create, FileAccess.Write, FileShare.None))
-        {
-            stream.Write(text.Span);
-            stream.Flush(flushToDisk: true);
-        }
-
-        File.Move(fresh, cache, overwrite: true);
-    }
 }

@@ -48,7 +48,9 @@ internal static class LabWatchHost
         services.AddLabWatchRecords(start.Settings.Records);
         services.AddLabWatchReadings(start.Settings.Readings);
         services.AddLabWatchAlerts(start.Settings.Alerts);
-        services.AddHostedService<LabImporter>();
+        services.AddSingleton<ILabInForce>(start.Lab);
+        services.AddSingleton<LabKeeper>();
+        services.AddHostedService(provider => provider.GetRequiredService<LabKeeper>());
         services.AddLabWatchApi();
         services.AddLabWatchIntake(start.Settings.Intake);
         services.AddLabWatchAssessments(start.Settings.Assessments);

@@ -9,17 +9,19 @@ internal static class StartPreparation
     /// <summary>Prepares a start.</summary>
     /// <param name="dataPath">The data directory.</param>
     /// <param name="configFile">File of options; null for none.</param>
-    /// <param name="loadLab">Gives the lab, once the data directory is there.</param>
+    /// <param name="giveLab">Gives the lab file, or null for the one in force, once the data directory is there.</param>
     /// <param name="makeClock">Gives the clock, once the data directory is there.</param>
     /// <param name="urls">Where pages and API are served.</param>
     /// <param name="adapt">Changes the options that were read, for commands that fix some of them.</param>
-    public static (ServiceStart? Start, IReadOnlyList<Finding> Findings) Prepare(
+    /// <param name="cancellationToken">Ends the wait for a records database.</param>
+    public static async Task<(ServiceStart? Start, IReadOnlyList<Finding> Findings)> PrepareAsync(
         string dataPath,
         string? configFile,
         string urls,
         Func<DataDirectory, TimeProvider> makeClock,
-        Func<DataDirectory, TimeProvider, (LabSnapshotSource? Source, IReadOnlyList<Finding> Findings)> loadLab,
-        Func<ServiceSettings, ServiceSettings>? adapt = null)
+        Func<DataDirectory, TimeProvider, (LabOrder? Order, Finding? Finding)> giveLab,
+        Func<ServiceSettings, ServiceSettings>? adapt,
+        CancellationToken cancellationToken)
     {
         (IConfigurationRoot? configuration, IReadOnlyList<Finding> unreadable) = SettingsReader.Load(configFile);
         (DataDirectory? data, Finding? finding) = DataDirectory.Open(dataPath);
@@ -30,16 +32,21 @@ internal static class StartPreparation
         }
 
         TimeProvider clock = makeClock(data);
-        (LabSnapshotSource? lab, IReadOnlyList<Finding> labFindings) = loadLab(data, clock);
         (ServiceSettings settings, IReadOnlyList<Finding> optionFindings) = SettingsReader.Read(configuration, data.Path, InstallationId.Of(data.Path));
         settings = adapt?.Invoke(settings) ?? settings;
-        IReadOnlyList<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. labFindings, .. PortFindings(settings)];
+        (LabOrder? order, Finding? unreadableLab) = giveLab(data, clock);
+        List<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. PortFindings(settings), .. unreadableLab is null ? [] : new[] { unreadableLab }];
+        (LabSnapshotSource? lab, IReadOnlyList<Finding> labFindings) = unreadableLab is not null || settings.Records.Validate().Count > 0
+            ? (null, [])
+            : await new LabStart(data.Path, settings.Records, clock).LoadAsync(order, lookOnly: findings.Count > 0, cancellationToken);
+        findings.AddRange(labFindings);
         if (findings.Count > 0 || lab is null)
         {
             data.Dispose();
             return (null, findings);
         }
 
+        lab.Keep();
         return (new ServiceStart(data, lab, settings, configuration, urls, clock), []);
     }
 

@@ -1,7 +1,9 @@
 using LabWatch.Records;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
+using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
+using LabWatch.Records.Revisions;
 using LabWatch.Tests.Records.Contract;
 using Microsoft.Extensions.DependencyInjection;
 
@@ -19,6 +21,10 @@ internal sealed class PostgreSqlRecords(string connectionString) : IRecordsUnder
     public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
 
     public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
+
+    public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
+
+    public IAuditLedger Audit => _services.GetRequiredService<IAuditLedger>();
 
     public static async ValueTask<IRecordsUnderTest> OpenAsync(PostgreSqlServer server) =>
         new PostgreSqlRecords(await server.NewDatabaseAsync(TestContext.Current.CancellationToken));

@@ -1,7 +1,9 @@
 using LabWatch.Records;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
+using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
+using LabWatch.Records.Revisions;
 using LabWatch.Tests.Records.Contract;
 using Microsoft.Data.Sqlite;
 using Microsoft.Extensions.DependencyInjection;
@@ -34,6 +36,10 @@ internal sealed class SqliteRecords : IRecordsUnderTest
     public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
 
     public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
+
+    public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
+
+    public IAuditLedger Audit => _services.GetRequiredService<IAuditLedger>();
 
     /// <summary>Empty records, from a copy of a migrated file.</summary>
     public static async ValueTask<SqliteRecords> CopyAsync()

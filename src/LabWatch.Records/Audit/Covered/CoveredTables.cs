@@ -14,6 +14,8 @@ internal static class CoveredTables
         CoveredTable.AppendOnly<AssessmentRow>("assessment/{id}"),
         CoveredTable.AppendOnly<AlertTransitionRow>("alert/{alert_id}/{sequence}"),
         CoveredTable.AppendOnly<LabImportRow>("lab-import/{sequence}"),
+        CoveredTable.AppendOnly<RevisionRow>("record/{kind}/{id}@{revision}"),
+        CoveredTable.AppendOnly<RunStepRow>("run/{run_id}/{number}"),
     ];
 
     /// <summary>The description of a row's table.</summary>

@@ -38,7 +38,7 @@ internal static class SourceViews
     public static IReadOnlyList<LimitView> Limits(LabSnapshot lab, ReferenceSource source, Instant at) =>
     [
         .. lab.Limits
-            .Where(limit => limit.Source == source.Key && limit.EffectiveFrom <= at)
+            .Where(limit => limit.Source == source.Key && limit.EffectiveFrom <= at && !(limit.WithdrawnFrom <= at))
             .GroupBy(limit => limit.Id, StringComparer.Ordinal)
             .Select(revisions => revisions.MaxBy(limit => (limit.EffectiveFrom, limit.Revision))!)
             .Select(Of),

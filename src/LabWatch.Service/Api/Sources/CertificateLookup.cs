@@ -28,7 +28,8 @@ internal sealed class CertificateLookup
         _changes =
         [
             .. stays.SelectMany(stay => stay.Until is { } until ? new[] { stay.From, until } : [stay.From])
-                .Concat(lab.Certificates.Where(certificate => instruments.Contains(certificate.Instrument)).Select(certificate => certificate.ValidFrom))
+                .Concat(lab.Certificates.Where(certificate => instruments.Contains(certificate.Instrument)).SelectMany(Edges))
+                .Concat(lab.TriplePointChecks.Where(check => instruments.Contains(check.Instrument)).SelectMany(check => Edges(check.At, check.WithdrawnFrom)))
                 .Distinct()
                 .Order(),
         ];
@@ -51,4 +52,8 @@ internal sealed class CertificateLookup
 
         return _current;
     }
+
+    private static IEnumerable<Instant> Edges(Certificate certificate) => Edges(certificate.ValidFrom, certificate.WithdrawnFrom);
+
+    private static IEnumerable<Instant> Edges(Instant from, Instant? withdrawn) => withdrawn is { } end ? [from, end] : [from];
 }

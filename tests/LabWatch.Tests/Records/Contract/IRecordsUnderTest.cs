@@ -1,6 +1,8 @@
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
+using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
+using LabWatch.Records.Revisions;
 
 namespace LabWatch.Tests.Records.Contract;
 
@@ -12,4 +14,8 @@ internal interface IRecordsUnderTest : IAsyncDisposable
     IAlertLedger Alerts { get; }
 
     ILabImportLedger LabImports { get; }
+
+    ILabRecords LabRecords { get; }
+
+    IAuditLedger Audit { get; }
 }

@@ -3,7 +3,7 @@ using LabWatch.Tests.Records.Contract;
 namespace LabWatch.SystemTests.Records;
 
 [Collection(PostgreSqlCollection.Name)]
-public sealed class PostgreSqlLabImportLedgerTests(PostgreSqlServer server) : LabImportLedgerContract
+public sealed class PostgreSqlLabRecordsTests(PostgreSqlServer server) : LabRecordsContract
 {
     private protected override ValueTask<IRecordsUnderTest> OpenAsync() => PostgreSqlRecords.OpenAsync(server);
 }

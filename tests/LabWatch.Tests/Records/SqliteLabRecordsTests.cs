@@ -2,7 +2,7 @@ using LabWatch.Tests.Records.Contract;
 
 namespace LabWatch.Tests.Records;
 
-public sealed class SqliteLabImportLedgerTests : LabImportLedgerContract
+public sealed class SqliteLabRecordsTests : LabRecordsContract
 {
     private protected override ValueTask<IRecordsUnderTest> OpenAsync() => SqliteRecords.OpenAsync();
 }
