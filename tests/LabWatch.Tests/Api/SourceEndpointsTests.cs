@@ -29,13 +29,28 @@ public sealed class SourceEndpointsTests
     {
         await using ApiHost host = await ApiHost.StartAsync();
 
-        JsonElement coating = (await host.GetAsync("/api/v1/sources/hollin-vale.fir")).Json
-            .GetProperty("source").GetProperty("cavity").GetProperty("coating")[0];
+        JsonElement source = (await host.GetAsync("/api/v1/sources/hollin-vale.fir")).Json.GetProperty("source");
+        JsonElement coating = source.GetProperty("cavity").GetProperty("coating")[0];
 
         Assert.Equal("lwir", coating.GetProperty("band").GetString());
         Assert.InRange(coating.GetProperty("emissivity").GetDouble(), 0.5, 1);
         Assert.True(coating.GetProperty("emissivityStandardUncertainty").GetDouble() > 0);
         Assert.InRange(coating.GetProperty("diffuseFraction").GetDouble(), 0, 1);
+        Assert.Equal(JsonValueKind.Null, coating.GetProperty("secondEmissivity").ValueKind);
+        Assert.Equal("none", source.GetProperty("cavity").GetProperty("secondMaterial").GetString());
+    }
+
+    [Fact]
+    public async Task Where_no_view_is_stated_the_usual_one_is_told_and_said_to_be_it()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+
+        JsonElement view = (await host.GetAsync("/api/v1/sources/hollin-vale.fir")).Json.GetProperty("source").GetProperty("view");
+
+        Assert.Equal("cone", view.GetProperty("kind").GetString());
+        Assert.Equal(12.5, view.GetProperty("spotRadiusMillimetre").GetDouble());
+        Assert.Equal(700, view.GetProperty("distanceMillimetre").GetDouble());
+        Assert.False(view.GetProperty("isStated").GetBoolean());
     }
 
     [Fact]

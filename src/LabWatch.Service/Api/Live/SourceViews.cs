@@ -22,6 +22,7 @@ internal static class SourceViews
         source.MaximumCelsius,
         source.PurgeGas,
         Of(source.Cavity),
+        Of(source.View ?? ApertureView.Usual(source.Cavity.ApertureRadiusMillimetre), source.View is not null),
         [.. source.Bands.Select(band => new BandView(band.Id, band.Name, band.LowerMicrometre, band.UpperMicrometre))],
         [.. source.Channels.Select(Of)],
         status);
@@ -46,14 +47,19 @@ internal static class SourceViews
 
     private static CavityView Of(Cavity cavity) => new(
         Names.Of(cavity.Shape), cavity.RadiusMillimetre, cavity.LengthMillimetre, cavity.ConeHalfAngleDegree, cavity.ApertureRadiusMillimetre,
-        [.. cavity.Coating.Select(Of)]);
+        [.. cavity.Coating.Select(Of)],
+        Names.Of(cavity.SecondMaterial));
+
+    private static ApertureViewView Of(ApertureView view, bool isStated) => new(Names.Of(view.Kind), view.SpotRadiusMillimetre, view.DistanceMillimetre, isStated);
 
     private static CoatingView Of(CoatingOptics coating) => new(
         coating.Band,
         coating.Emissivity.Value,
         Numbers.OrNull(coating.Emissivity.StandardUncertainty),
         coating.DiffuseFraction.Value,
-        Numbers.OrNull(coating.DiffuseFraction.StandardUncertainty));
+        Numbers.OrNull(coating.DiffuseFraction.StandardUncertainty),
+        coating.SecondEmissivity?.Value,
+        coating.SecondEmissivity is { } second ? Numbers.OrNull(second.StandardUncertainty) : null);
 
     private static ChannelView Of(Channel channel) => new(
         channel.Id,

@@ -14,6 +14,7 @@ internal sealed record SourceView(
     [property: Description("Highest set point it is used at, degree Celsius.")] double MaximumCelsius,
     [property: Description("Gas that it is purged with; null where it is not purged.")] string? PurgeGas,
     [property: Description("Geometry of the cavity.")] CavityView Cavity,
+    [property: Description("How it is looked at; its effective emissivity holds for this view.")] ApertureViewView View,
     [property: Description("Spectral bands it is used in.")] IReadOnlyList<BandView> Bands,
     [property: Description("Its streams of readings.")] IReadOnlyList<ChannelView> Channels,
     [property: Description("What is known about it now.")] SourceStatusView Status);
