@@ -1,4 +1,5 @@
 using LabWatch.Benchmarks.Alerts;
+using LabWatch.Benchmarks.Assessments;
 using LabWatch.Benchmarks.Intake;
 using LabWatch.Benchmarks.Metrology;
 using LabWatch.Benchmarks.Readings;
@@ -9,6 +10,8 @@ switch (args.FirstOrDefault())
 {
     case "cavity":
         return CavityBenchmark.Run(rest);
+    case "criteria":
+        return await CriteriaBenchmark.RunAsync(rest);
     case "evaluation":
         return EvaluationBenchmark.Run(rest);
     case "hazard":
@@ -24,6 +27,6 @@ switch (args.FirstOrDefault())
     case "store":
         return await StoreBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, evaluation, hazard, intake, simulator, statistics, store.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, simulator, statistics, store.");
         return 1;
 }

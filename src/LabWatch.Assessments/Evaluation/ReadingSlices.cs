@@ -17,6 +17,22 @@ public static class ReadingSlices
             [.. readings.Hours.Where(hour => hour.Hour < window.End && hour.Hour.Microseconds + Instant.MicrosecondsPerHour > window.Start.Microseconds)]);
     }
 
+    /// <summary>The readings of some channels in a shorter window, with the hours that it touches.</summary>
+    public static ReadingWindow Slice(this ReadingWindow readings, TimeWindow window, IReadOnlyCollection<string> channels)
+    {
+        ArgumentNullException.ThrowIfNull(readings);
+        return (readings with { Series = [.. readings.Series.Where(series => channels.Contains(series.Channel))] }).Slice(window);
+    }
+
+    /// <summary>Whether a series has a reading in a window.</summary>
+    public static bool HasReadingIn(this ReadingSeries series, TimeWindow window)
+    {
+        ArgumentNullException.ThrowIfNull(series);
+        ReadOnlySpan<long> times = series.TimeMicroseconds.Span;
+        int first = FirstNotBefore(times, window.Start.Microseconds);
+        return first < times.Length && times[first] < window.End.Microseconds;
+    }
+
     /// <summary>The readings of a series in a window.</summary>
     public static ReadingSeries Slice(this ReadingSeries series, TimeWindow window)
     {

@@ -1,4 +1,5 @@
 using LabWatch.Lab.Assessments;
+using LabWatch.Lab.Sources;
 
 namespace LabWatch.Assessments.Evaluation;
 
@@ -8,8 +9,23 @@ internal static class Supersession
     /// <summary>What differs in what the two rest on; null where nothing does.</summary>
     public static string? Reason(Provenance former, Provenance present)
     {
-        string[] reasons = [.. Certificates(former, present), .. Limit(former, present), .. Readings(former, present)];
+        string[] reasons = [.. Source(former, present), .. Certificates(former, present), .. Limit(former, present), .. Readings(former, present)];
         return reasons.Length == 0 ? null : string.Join("; ", reasons) + ".";
+    }
+
+    /// <summary>Whether a source is described by another revision; what is on record without a revision was judged by the first.</summary>
+    public static bool SourceDiffers(string? former, ReferenceSource present) =>
+        former is null ? present.Revision > 1 : !string.Equals(former, present.Reference, StringComparison.Ordinal);
+
+    private static IEnumerable<string> Source(Provenance former, Provenance present)
+    {
+        bool differs = former.Source is null
+            ? present.Source?.EndsWith("@1", StringComparison.Ordinal) is false
+            : !string.Equals(former.Source, present.Source, StringComparison.Ordinal);
+        if (differs)
+        {
+            yield return $"The source is described by {present.Source} instead of {former.Source ?? "its first description"}";
+        }
     }
 
     private static IEnumerable<string> Certificates(Provenance former, Provenance present)

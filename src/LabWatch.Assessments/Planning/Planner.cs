@@ -121,10 +121,10 @@ internal sealed class Planner : IDisposable
 
     private SourcePlan Plan(LabSnapshot snapshot, ReferenceSource source) => new(
         source.Key,
-        InputFingerprint.Of(snapshot, source),
+        InputFingerprint.Of(snapshot, source.Key),
         [.. _criteria
-            .Select(criterion => new WindowEvaluator(snapshot, source, criterion, _options.ProgramVersion))
-            .Where(evaluator => evaluator.Channels.Count > 0)
+            .Select(criterion => new WindowEvaluator(snapshot, source.Key, criterion, _options.ProgramVersion))
+            .Where(evaluator => evaluator.Applies)
             .Select(evaluator => new SourcePlanner(evaluator, _store, _ledger, _batch, _pending))],
         _positions,
         _pending);

@@ -42,7 +42,7 @@ internal sealed class SourcePlanner(
     public async ValueTask<bool> WalkAsync(Instant now, CancellationToken cancellationToken)
     {
         Instant last = Schedule.LastDue(now);
-        _cursor ??= await ledger.WatermarkAsync(evaluator.Source.Key, evaluator.Criterion.Code, cancellationToken)
+        _cursor ??= await ledger.WatermarkAsync(evaluator.Source, evaluator.Criterion.Code, cancellationToken)
             ?? await BeginningAsync(now, cancellationToken);
         if (_cursor is not { } cursor)
         {
@@ -67,7 +67,7 @@ internal sealed class SourcePlanner(
         HashSet<Instant> these = [.. hours];
         List<TimeWindow> windows =
             [.. hours.SelectMany(Schedule.Touching).Distinct().OrderBy(window => window.End)
-                .Where(window => window.End <= _cursor && !pending.Touches(evaluator.Source.Key, Schedule.SpanOf(window), these))];
+                .Where(window => window.End <= _cursor && !pending.Touches(evaluator.Source, Schedule.SpanOf(window), these))];
         foreach (List<TimeWindow> chunk in Neighbours(windows))
         {
             await batch.AssessAsync(evaluator, chunk, cancellationToken);
@@ -78,7 +78,7 @@ internal sealed class SourcePlanner(
     /// <returns>Cursor of the next page; null after the last.</returns>
     public async ValueTask<string?> RecheckInputsAsync(string? after, CancellationToken cancellationToken)
     {
-        AssessmentPage page = await ledger.ListAsync(new AssessmentQuery(evaluator.Source.Key, evaluator.Criterion.Code, null, after, 500), cancellationToken);
+        AssessmentPage page = await ledger.ListAsync(new AssessmentQuery(evaluator.Source, evaluator.Criterion.Code, null, after, 500), cancellationToken);
         List<TimeWindow> windows =
             [.. page.Items.Where(evaluator.InputsDiffer).Select((Assessment item) => item.Window).Distinct().OrderBy(window => window.End)];
         foreach (List<TimeWindow> chunk in Neighbours(windows))
@@ -95,17 +95,17 @@ internal sealed class SourcePlanner(
         Instant? recorded = await batch.AssessAsync(evaluator, due, cancellationToken);
         if (recorded != chunk[^1].End)
         {
-            await ledger.MoveWatermarkAsync(evaluator.Source.Key, evaluator.Criterion.Code, chunk[^1].End, cancellationToken);
+            await ledger.MoveWatermarkAsync(evaluator.Source, evaluator.Criterion.Code, chunk[^1].End, cancellationToken);
         }
     }
 
     private bool IsLeftToItsHours(TimeWindow window, Instant now) =>
-        now - window.End > Schedule.Grace + ShortlyAfter && pending.Touches(evaluator.Source.Key, Schedule.SpanOf(window), NoHours);
+        now - window.End > Schedule.Grace + ShortlyAfter && pending.Touches(evaluator.Source, Schedule.SpanOf(window), NoHours);
 
     /// <summary>The walk begins with the first hour that has readings; null where there is none yet.</summary>
     private async ValueTask<Instant?> BeginningAsync(Instant now, CancellationToken cancellationToken)
     {
-        IReadOnlyList<SourceHourRead> hours = await store.HoursAsync(evaluator.Source.Key, new TimeWindow(default, now), cancellationToken);
+        IReadOnlyList<SourceHourRead> hours = await store.HoursAsync(evaluator.Source, new TimeWindow(default, now), cancellationToken);
         return hours.Count == 0 ? null : Schedule.EndAtOrBefore(hours[0].Hour);
     }
 

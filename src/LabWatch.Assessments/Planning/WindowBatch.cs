@@ -27,7 +27,7 @@ internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger,
         }
 
         ILookup<TimeWindow, Assessment> standing = await StandingAsync(evaluator, windows, cancellationToken);
-        IReadOnlyList<SourceHourRead> hours = await store.HoursAsync(evaluator.Source.Key, Span(evaluator, windows), cancellationToken);
+        IReadOnlyList<SourceHourRead> hours = await store.HoursAsync(evaluator.Source, Span(evaluator, windows), cancellationToken);
         List<TimeWindow> open = [.. windows.Where(window => MayDiffer(evaluator, window, [.. standing[window]], hours))];
         return open.Count == 0 ? null : await EvaluateAsync(evaluator, open, standing, cancellationToken);
     }
@@ -35,7 +35,7 @@ internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger,
     private async ValueTask<Instant?> EvaluateAsync(
         WindowEvaluator evaluator, List<TimeWindow> windows, ILookup<TimeWindow, Assessment> standing, CancellationToken cancellationToken)
     {
-        ReadingWindow readings = await store.ReadAsync(evaluator.Source.Key, evaluator.Channels, Span(evaluator, windows), cancellationToken);
+        ReadingWindow readings = await store.ReadAsync(evaluator.Source, evaluator.Channels(windows), Span(evaluator, windows), cancellationToken);
         Instant now = Instant.Now(clock);
         List<Assessment> made = [];
         foreach (TimeWindow window in windows)
@@ -81,7 +81,7 @@ internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger,
         do
         {
             AssessmentPage page = await ledger.ListAsync(
-                new AssessmentQuery(evaluator.Source.Key, evaluator.Criterion.Code, ends, after, PageLength), cancellationToken);
+                new AssessmentQuery(evaluator.Source, evaluator.Criterion.Code, ends, after, PageLength), cancellationToken);
             found.AddRange(page.Items);
             after = page.Next;
         }

@@ -58,6 +58,13 @@ public sealed record ReferenceSource(
     /// <summary>The well thermometer that the source's temperature is taken from; null on a radiometric route without one.</summary>
     public Channel? ReferenceChannel => Channels.FirstOrDefault(channel => channel.IsReference);
 
+    /// <summary>
+    /// Whether something that an assessment is about belongs to the source as described here: the source as a whole (an empty scope), a
+    /// working band, or a channel.
+    /// </summary>
+    public bool HasScope(string scope) =>
+        scope.Length == 0 || FindChannel(scope) is not null || Bands.Any(band => string.Equals(band.Id, scope, StringComparison.Ordinal));
+
     /// <summary>The channel of an id; null where the source has none of that id.</summary>
     public Channel? FindChannel(string id) => Channels.FirstOrDefault(channel => string.Equals(channel.Id, id, StringComparison.Ordinal));
 }

@@ -26,7 +26,7 @@ public static class HampelFilter
         for (int i = 0; i < values.Length; i++)
         {
             outliers[i] = false;
-            if (!double.IsFinite(values[i])) continue;
+            if (!double.IsFinite(values[i]) || IsNear(values, i, halfWidth, threshold * resolution)) continue;
             int count = 0;
             for (int j = Math.Max(0, i - halfWidth); j <= Math.Min(values.Length - 1, i + halfWidth); j++)
             {
@@ -44,5 +44,20 @@ public static class HampelFilter
 
         ArrayPool<double>.Shared.Return(buffer);
         return found;
+    }
+
+    /// <summary>
+    /// Whether all neighbours lie so near to a value that their median must, too: then it is no outlier, whatever their deviations are. That settles nearly all
+    /// values without sorting.
+    /// </summary>
+    private static bool IsNear(ReadOnlySpan<double> values, int index, int halfWidth, double distance)
+    {
+        double value = values[index];
+        foreach (double other in values[Math.Max(0, index - halfWidth)..Math.Min(values.Length, index + halfWidth + 1)])
+        {
+            if (Math.Abs(other - value) > distance) return false;
+        }
+
+        return true;
     }
 }
