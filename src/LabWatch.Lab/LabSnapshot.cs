@@ -16,6 +16,9 @@ public sealed class LabSnapshot
 {
     private readonly FrozenDictionary<SourceKey, ReferenceSource> _sources;
     private readonly FrozenDictionary<ChannelKey, Channel> _channels;
+    private readonly FrozenDictionary<ChannelKey, Installation[]> _stays;
+    private readonly FrozenDictionary<string, Certificate[]> _certificates;
+    private readonly FrozenDictionary<SourceKey, AcceptanceLimit[]> _limits;
 
     /// <summary>Makes a snapshot of validated parts.</summary>
     public LabSnapshot(
@@ -36,6 +39,10 @@ public sealed class LabSnapshot
         Notifiers = notifiers;
         _sources = sources.ToFrozenDictionary(source => source.Key);
         _channels = sources.SelectMany(source => source.Channels).ToFrozenDictionary(channel => channel.Key);
+        _stays = installations.GroupBy(stay => stay.Channel).ToFrozenDictionary(group => group.Key, group => group.ToArray());
+        _certificates = certificates.GroupBy(certificate => certificate.Instrument, StringComparer.Ordinal)
+            .ToFrozenDictionary(group => group.Key, group => group.ToArray(), StringComparer.Ordinal);
+        _limits = limits.GroupBy(limit => limit.Source).ToFrozenDictionary(group => group.Key, group => group.ToArray());
     }
 
     /// <summary>The site.</summary>
@@ -91,6 +98,12 @@ public sealed class LabSnapshot
     /// <summary>The channel of a key; null where there is none.</summary>
     public Channel? FindChannel(ChannelKey key) => _channels.GetValueOrDefault(key);
 
+    /// <summary>The stays of instruments in a channel; empty where there was none.</summary>
+    public IReadOnlyList<Installation> StaysIn(ChannelKey channel) => _stays.GetValueOrDefault(channel, []);
+
+    /// <summary>All revisions of all certificates of an instrument; empty where it has none.</summary>
+    public IReadOnlyList<Certificate> CertificatesOf(string instrument) => _certificates.GetValueOrDefault(instrument, []);
+
     /// <summary>
     /// The certificate in force for a channel at an instant: of the instrument installed then, the latest one valid from then or before,
     /// in its highest revision. Null where no instrument is installed or it has no certificate yet. That of a standard resistance thermometer
@@ -98,11 +111,11 @@ public sealed class LabSnapshot
     /// </summary>
     public Certificate? CertificateInForce(ChannelKey channel, Instant at)
     {
-        Installation? stay = Installations.FirstOrDefault(candidate => candidate.Channel == channel && candidate.Covers(at));
+        Installation? stay = StaysIn(channel).FirstOrDefault(candidate => candidate.Covers(at));
         Certificate? certificate = stay is null
             ? null
-            : Certificates
-                .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal) && certificate.ValidFrom <= at && !(certificate.WithdrawnFrom <= at))
+            : CertificatesOf(stay.Instrument)
+                .Where(certificate => certificate.ValidFrom <= at && !(certificate.WithdrawnFrom <= at))
                 .OrderByDescending(certificate => certificate.ValidFrom)
                 .ThenByDescending(certificate => certificate.Revision)
                 .FirstOrDefault();
@@ -126,9 +139,8 @@ public sealed class LabSnapshot
     /// A limit for the given band goes before one for all bands.
     /// </summary>
     public AcceptanceLimit? LimitInForce(SourceKey source, string criterion, double? setPointCelsius, string? band, Instant at) =>
-        Limits
-            .Where(limit => limit.Source == source
-                && string.Equals(limit.Criterion, criterion, StringComparison.Ordinal)
+        _limits.GetValueOrDefault(source, [])
+            .Where(limit => string.Equals(limit.Criterion, criterion, StringComparison.Ordinal)
                 && limit.EffectiveFrom <= at
                 && !(limit.WithdrawnFrom <= at)
                 && (limit.Band is null || string.Equals(limit.Band, band, StringComparison.Ordinal))

@@ -22,10 +22,8 @@ public sealed record CertificateTimeline(IReadOnlyList<CertificateStretch> Stret
     /// <summary>The timeline of a channel over a span.</summary>
     public static CertificateTimeline Of(LabSnapshot snapshot, ChannelKey channel, TimeWindow span)
     {
-        List<Installation> stays = [.. snapshot.Installations.Where(stay => stay.Channel == channel)];
-        IEnumerable<Instant> changes = stays
-            .SelectMany(stay => snapshot.Certificates
-                .Where(certificate => string.Equals(certificate.Instrument, stay.Instrument, StringComparison.Ordinal))
+        IEnumerable<Instant> changes = snapshot.StaysIn(channel)
+            .SelectMany(stay => snapshot.CertificatesOf(stay.Instrument)
                 .SelectMany(certificate => Edges(certificate.ValidFrom, certificate.WithdrawnFrom))
                 .Concat(snapshot.TriplePointChecks
                     .Where(check => string.Equals(check.Instrument, stay.Instrument, StringComparison.Ordinal))
