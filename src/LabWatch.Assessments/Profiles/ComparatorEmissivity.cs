@@ -1,3 +1,6 @@
+using LabWatch.Assessments.Criteria.Verdicts;
+using LabWatch.Assessments.Evaluation;
+using LabWatch.Lab.Limits;
 using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Assessments.Profiles;
@@ -16,6 +19,17 @@ namespace LabWatch.Assessments.Profiles;
 public sealed record ComparatorEmissivity(ComparatorPoint Point, Estimate EffectiveEmissivity, double Isothermal, Estimate RadianceDifferenceKelvin)
 {
     private const double IceKelvin = 273.15;
+
+    /// <summary>Why the value cannot be judged against a limit, as a clause with numbers: U(e_eff) is larger than the limit. Null where it can.</summary>
+    public string? CannotTell(AcceptanceLimit? limit, SurroundingsPoint surroundings)
+    {
+        ArgumentNullException.ThrowIfNull(surroundings);
+        double expanded = CoverageFactor.For(EffectiveEmissivity.DegreesOfFreedom) * EffectiveEmissivity.StandardUncertainty;
+        return limit is null || expanded <= limit.Maximum
+            ? null
+            : $"{Point.Channel.Id} cannot tell: its u(T_rad) of {Quantities.Significant(Point.Celsius.StandardUncertainty)} K at {Quantities.Fixed(Point.Celsius.Value, 2)} degC, against surroundings of "
+                + $"{Quantities.Fixed(surroundings.RadianceCelsius.Value, 1)} degC, leaves U(e_eff) = {Quantities.Significant(expanded)}, more than the limit of {VerdictText.Plain(limit.Maximum)}";
+    }
 
     /// <summary>The value; null where the comparator shows no temperature.</summary>
     public static ComparatorEmissivity? Of(BandRadiance radiance, ComparatorPoint point)

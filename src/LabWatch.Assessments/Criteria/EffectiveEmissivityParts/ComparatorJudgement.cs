@@ -41,27 +41,10 @@ internal static class ComparatorJudgement
         new(Math.Abs(present.Value - baseline.Value), double.Hypot(present.StandardUncertainty, baseline.StandardUncertainty), present.DegreesOfFreedom);
 
     /// <summary>A value that cannot resolve its limit decides nothing.</summary>
-    private static LimitVerdict Resolved(ProfileBasis basis, ComparatorPoint point, ComparatorEmissivity? found, LimitVerdict verdict)
-    {
-        if (found is null || point.Refusal is not null || verdict.Limit is not { } limit)
-        {
-            return verdict;
-        }
-
-        Estimate e = found.EffectiveEmissivity;
-        double expanded = CoverageFactor.For(e.DegreesOfFreedom) * e.StandardUncertainty;
-        return expanded <= limit.Maximum
-            ? verdict
-            : verdict with
-            {
-                Obstacles =
-                [
-                    .. verdict.Obstacles,
-                    $"{point.Channel.Id} cannot tell: its u(T_rad) of {Quantities.Significant(point.Celsius.StandardUncertainty)} K at {Quantities.Fixed(point.Celsius.Value, 2)} degC, against surroundings of "
-                        + $"{Quantities.Fixed(basis.Evidence.Surroundings.RadianceCelsius.Value, 1)} degC, leaves U(e_eff) = {Quantities.Significant(expanded)}, more than the limit of {VerdictText.Plain(limit.Maximum)}",
-                ],
-            };
-    }
+    private static LimitVerdict Resolved(ProfileBasis basis, ComparatorPoint point, ComparatorEmissivity? found, LimitVerdict verdict) =>
+        point.Refusal is null && found?.CannotTell(verdict.Limit, basis.Evidence.Surroundings) is { } obstacle
+            ? verdict with { Obstacles = [.. verdict.Obstacles, obstacle] }
+            : verdict;
 
     private static string Text(ProfileBasis basis, WorkingBand band, ComparatorPoint point, Baseline? baseline, ComparatorEmissivity? found, LimitVerdict verdict)
     {

@@ -24,6 +24,15 @@ internal static class SourceEndpoints
             .WithSummary("One source with its instruments, limits and newest assessments")
             .WithDescription("The id is site.source, for example hollin-vale.fir.")
             .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapGet("{id}/profile", ProfileEndpoint.ReadAsync)
+            .WithName("GetProfile")
+            .WithSummary("Axial temperature profile of a source with its radiance in each band")
+            .WithDescription(
+                "From the newest reading of each channel, or those at an instant: wells, lip, case, the curve along the wall; effective emissivity, radiance temperature and its "
+                + "offset from the reference temperature in each band, with the comparator. The same computation as the criteria axial-uniformity and effective-emissivity.")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound)
+            .ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         group.MapGet("{id}/readings", ReadingEndpoints.ReadAsync)
             .WithName("GetReadings")
             .WithSummary("Readings of one channel of a source, raw or reduced to buckets")

@@ -1,0 +1,16 @@
+using System.ComponentModel;
+
+namespace LabWatch.Service.Api.Views;
+
+/// <summary>What a source radiates in one band.</summary>
+internal sealed record BandProfileView(
+    [property: Description("Id of the band.")] string Band,
+    [property: Description("Name for people.")] string Name,
+    [property: Description("How it is computed: ring-kernels, monte-carlo, flat-plate, or closed-form for a diffuse sphere.")] string Method,
+    [property: Description("Effective emissivity for the reference temperature, with the profile.")] EstimateView EffectiveEmissivity,
+    [property: Description("Effective emissivity without temperature differences.")] double IsothermalEffectiveEmissivity,
+    [property: Description("Radiance temperature with the surroundings, degree Celsius.")] double RadianceTemperatureCelsius,
+    [property: Description("Radiance temperature minus reference temperature, millikelvin.")] EstimateView OffsetMillikelvin,
+    [property: Description("Radiance temperature of the surroundings, degree Celsius.")] double SurroundingsCelsius,
+    [property: Description("What the comparator of the band shows; null where there is none.")] ComparatorProfileView? Comparator,
+    [property: Description("The baseline on record; null where the isothermal design value serves.")] BaselineView? Baseline);
