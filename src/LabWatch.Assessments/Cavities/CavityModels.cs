@@ -18,8 +18,7 @@ internal sealed class CavityModels(CavityTraces traces) : ICavityModels
     {
         ArgumentNullException.ThrowIfNull(source);
         ArgumentNullException.ThrowIfNull(band);
-        CoatingOptics optics = source.Cavity.Coating.FirstOrDefault(coating => string.Equals(coating.Band, band.Id, StringComparison.Ordinal))
-            ?? throw new ArgumentException($"{source.Key} has no coating for the band {band.Id}.", nameof(band));
+        CoatingOptics? optics = source.Cavity.Coating.FirstOrDefault(coating => string.Equals(coating.Band, band.Id, StringComparison.Ordinal));
         Key key = new(CavityDescription.Of(source), optics, band);
         return _models.GetOrAdd(key, static (wanted, self) => new(() => self.Make(wanted)), this).Value;
     }
@@ -27,17 +26,17 @@ internal sealed class CavityModels(CavityTraces traces) : ICavityModels
     private BandModel Make(Key key)
     {
         RadianceBand radiance = RadianceBand.Of(key.Band.LowerMicrometre, key.Band.UpperMicrometre);
-        IReadOnlyList<string> problems = key.Cavity.Problems();
-        if (problems.Count > 0)
+        IReadOnlyList<string> problems = key.Optics is null ? [$"No coating emissivity is stated for the band {key.Band.Id}."] : key.Cavity.Problems();
+        if (key.Optics is not { } optics || problems.Count > 0)
         {
-            return new(key.Band, radiance, key.Cavity, key.Optics, null, [], problems);
+            return new(key.Band, radiance, key.Cavity, key.Optics ?? new(key.Band.Id, Estimate.None, Estimate.None), null, [], problems);
         }
 
-        Estimate emissivity = key.Optics.Emissivity, diffuse = key.Optics.DiffuseFraction;
-        double second = key.Optics.SecondEmissivity?.Value ?? emissivity.Value;
+        Estimate emissivity = optics.Emissivity, diffuse = optics.DiffuseFraction;
+        double second = optics.SecondEmissivity?.Value ?? emissivity.Value;
         HitCounts counts = Counts(key.Cavity, diffuse.Value);
-        List<OpticsSide> sides = [.. Side("emissivity", emissivity, value => counts.Weights(value, key.Optics.SecondEmissivity is null ? value : second), 1e-3)];
-        if (key.Optics.SecondEmissivity is { } other)
+        List<OpticsSide> sides = [.. Side("emissivity", emissivity, value => counts.Weights(value, optics.SecondEmissivity is null ? value : second), 1e-3)];
+        if (optics.SecondEmissivity is { } other)
         {
             sides.AddRange(Side("second-emissivity", other, value => counts.Weights(emissivity.Value, value), 1e-3));
         }
@@ -47,7 +46,7 @@ internal sealed class CavityModels(CavityTraces traces) : ICavityModels
             sides.AddRange(Side("diffuse-fraction", diffuse, value => Counts(key.Cavity, value).Weights(emissivity.Value, second), 0));
         }
 
-        return new(key.Band, radiance, key.Cavity, key.Optics, counts.Weights(emissivity.Value, second), sides, []);
+        return new(key.Band, radiance, key.Cavity, optics, counts.Weights(emissivity.Value, second), sides, []);
     }
 
     /// <summary>Both ends of a property's standard uncertainty, inside of what is possible; nothing where it is exactly known.</summary>
@@ -62,5 +61,5 @@ internal sealed class CavityModels(CavityTraces traces) : ICavityModels
 
     private HitCounts Counts(CavityDescription cavity, double diffuseFraction) => traces.Of(new(cavity.Geometry, cavity.View, diffuseFraction, cavity.Second));
 
-    private sealed record Key(CavityDescription Cavity, CoatingOptics Optics, WorkingBand Band);
+    private sealed record Key(CavityDescription Cavity, CoatingOptics? Optics, WorkingBand Band);
 }

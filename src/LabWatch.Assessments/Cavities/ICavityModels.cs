@@ -8,7 +8,6 @@ namespace LabWatch.Assessments.Cavities;
 /// </summary>
 public interface ICavityModels
 {
-    /// <summary>The model. Traces on the calling thread where nobody has yet, which takes up to about a second; afterwards costs next to nothing.</summary>
-    /// <exception cref="ArgumentException">The source has no coating for the band.</exception>
+    /// <summary>The model. Traces on the calling thread where nobody has yet, which takes up to about a second; afterwards costs next to nothing. What is wrong with geometry, view or optics stands in its problems.</summary>
     BandModel ModelOf(ReferenceSource source, WorkingBand band);
 }

@@ -43,6 +43,7 @@ internal static class ProfileEndpoint
         }
 
         Instant at = asked ?? Instant.Now(clock);
+        source = asked is null ? source : board.Lab.SourceInForce(source.Key, at) ?? source;
         IReadOnlyDictionary<string, Reading> newest = asked is null
             ? await live.NewestAsync(source.Key, cancellationToken)
             : await NewestAtAsync(store, source, at, cancellationToken);

@@ -1,4 +1,5 @@
 using LabWatch.Alerts;
+using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
@@ -8,6 +9,7 @@ using LabWatch.Records.Assessments;
 using LabWatch.Service.Api;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
+using LabWatch.Tests.Assessments.Cavities;
 using Microsoft.Extensions.DependencyInjection;
 
 namespace LabWatch.Tests.Api.Fakes;
@@ -38,6 +40,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
         services.AddSingleton<IPlannerState>(Planner);
+        services.AddSingleton<ICavityModels>(DemoRun.Models);
         services.AddSingleton<IIntakeState>(Intake);
         if (isDemo)
         {
