@@ -89,6 +89,23 @@ public sealed class AssessmentEndpointsTests
         Assert.Equal(HttpStatusCode.NotFound, (await host.GetAsync("/api/v1/assessments/0/revisions")).Status);
     }
 
+    [Fact]
+    public async Task Outcomes_are_the_same_list_without_what_they_were_made_from()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+        Assessment made = Stability(host, new Estimate(6.1, 0.6));
+        host.Rooms.Assessments.Add(made);
+
+        JsonElement outcome = (await host.GetAsync("/api/v1/assessments/outcomes?source=hollin-vale.rowan&count=2000")).Json.GetProperty("items")[0];
+
+        Assert.Equal(made.Id, outcome.GetProperty("id").GetString());
+        Assert.Equal(1.2, outcome.GetProperty("expandedUncertainty").GetDouble(), 1e-12);
+        Assert.Equal("conditional-pass", outcome.GetProperty("decision").GetString());
+        Assert.False(outcome.TryGetProperty("provenance", out _));
+        Assert.Equal(2000, host.Rooms.Assessments.LastQuery!.Count);
+        Assert.Equal(["out-of-range"], (await host.GetAsync("/api/v1/assessments/outcomes?count=2001")).FindingCodes);
+    }
+
     private static Assessment Stability(ApiHost host, Estimate value) => new(
         SampleLab.Rowan, "stability", "well-a", new TimeWindow(host.Now - TimeSpan.FromMinutes(30), host.Now), 1, value, "mK", 7, 2,
         Decision.ConditionalPass, 0.9, [], "Half-range 6.1 mK.", new Provenance("00", [], ["cert-rowan-well-a@2"], null, "0.1.0"), host.Now, null);

@@ -13,6 +13,7 @@ public sealed class ServiceEndpointsTests
         "get /api/v1/alerts",
         "get /api/v1/alerts/{id}",
         "get /api/v1/assessments",
+        "get /api/v1/assessments/outcomes",
         "get /api/v1/assessments/{id}",
         "get /api/v1/assessments/{id}/revisions",
         "get /api/v1/demo/faults",

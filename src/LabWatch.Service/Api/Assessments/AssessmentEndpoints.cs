@@ -13,6 +13,7 @@ internal static class AssessmentEndpoints
 {
     private const int RowsByDefault = 50;
     private const int MaximumRows = 500;
+    private const int MaximumOutcomes = 2000;
 
     /// <summary>Maps the endpoints into the group of the API's version.</summary>
     public static void Map(RouteGroupBuilder api)
@@ -21,6 +22,11 @@ internal static class AssessmentEndpoints
         group.MapGet(string.Empty, ListAsync)
             .WithName("ListAssessments")
             .WithSummary("Assessments, newest window first, highest revisions only")
+            .ProducesProblem(StatusCodes.Status400BadRequest);
+        group.MapGet("outcomes", OutcomesAsync)
+            .WithName("ListOutcomes")
+            .WithSummary("The same list without figures, words and provenance, for charts and tables of many")
+            .WithDescription("Filters and pages as for the list of assessments, up to 2000 rows a page. The id leads to the whole assessment.")
             .ProducesProblem(StatusCodes.Status400BadRequest);
         group.MapGet("{id}", FindAsync)
             .WithName("GetAssessment")
@@ -37,13 +43,7 @@ internal static class AssessmentEndpoints
         [AsParameters] AssessmentFilter filter, HttpRequest http, IAssessmentLedger ledger, CancellationToken cancellationToken)
     {
         QueryReader query = new(http.Query);
-        query.Allow("source", "criterion", "from", "to", "after", "count");
-        AssessmentQuery asked = new(
-            query.Source("source"),
-            query.Criterion("criterion"),
-            query.Window("from", "to"),
-            query.Cursor("after"),
-            query.Count("count", RowsByDefault, MaximumRows));
+        AssessmentQuery asked = Read(query, MaximumRows);
         if (query.Findings.Count > 0)
         {
             return Refusals.BadRequest(query.Findings);
@@ -51,6 +51,31 @@ internal static class AssessmentEndpoints
 
         AssessmentPage page = await ledger.ListAsync(asked, cancellationToken);
         return TypedResults.Ok(new AssessmentListView([.. page.Items.Select(AssessmentViews.Of)], page.Next));
+    }
+
+    private static async Task<Results<Ok<OutcomeListView>, ProblemHttpResult>> OutcomesAsync(
+        [AsParameters] AssessmentFilter filter, HttpRequest http, IAssessmentLedger ledger, CancellationToken cancellationToken)
+    {
+        QueryReader query = new(http.Query);
+        AssessmentQuery asked = Read(query, MaximumOutcomes);
+        if (query.Findings.Count > 0)
+        {
+            return Refusals.BadRequest(query.Findings);
+        }
+
+        AssessmentPage page = await ledger.ListAsync(asked, cancellationToken);
+        return TypedResults.Ok(new OutcomeListView([.. page.Items.Select(AssessmentViews.OutcomeOf)], page.Next));
+    }
+
+    private static AssessmentQuery Read(QueryReader query, int most)
+    {
+        query.Allow("source", "criterion", "from", "to", "after", "count");
+        return new(
+            query.Source("source"),
+            query.Criterion("criterion"),
+            query.Window("from", "to"),
+            query.Cursor("after"),
+            query.Count("count", RowsByDefault, most));
     }
 
     private static async Task<Results<Ok<AssessmentView>, ProblemHttpResult>> FindAsync(

@@ -31,6 +31,23 @@ internal static class AssessmentViews
         assessment.ComputedAt,
         assessment.SupersedeReason);
 
+    /// <summary>The outcome of one assessment.</summary>
+    public static OutcomeView OutcomeOf(Assessment assessment) => new(
+        assessment.Id,
+        assessment.Source.ToString(),
+        assessment.Criterion,
+        assessment.Scope,
+        assessment.Window.Start,
+        assessment.Window.End,
+        assessment.Revision,
+        Numbers.OrNull(assessment.Value.Value),
+        Numbers.OrNull(assessment.CoverageFactor),
+        Numbers.OrNull(assessment.ExpandedUncertainty),
+        assessment.Unit,
+        assessment.Limit is { } limit ? Numbers.OrNull(limit) : null,
+        Names.Of(assessment.Decision),
+        assessment.ComputedAt);
+
     private static ProvenanceView Of(Provenance provenance) => new(
         provenance.ReadingsDigest,
         [.. provenance.Hours.Select(hour => new HourReadView(hour.Hour, hour.Revision))],
