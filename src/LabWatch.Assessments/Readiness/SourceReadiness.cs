@@ -6,4 +6,8 @@ namespace LabWatch.Assessments.Readiness;
 /// <param name="Source">The source.</param>
 /// <param name="State">The state.</param>
 /// <param name="Reasons">What leads to it, the weightiest first; at least one.</param>
-public sealed record SourceReadiness(SourceKey Source, ReadinessState State, IReadOnlyList<ReadinessReason> Reasons);
+public sealed record SourceReadiness(SourceKey Source, ReadinessState State, IReadOnlyList<ReadinessReason> Reasons)
+{
+    /// <summary>When it is expected to be ready, while it is on its way; null otherwise.</summary>
+    public ReadyForecast? Forecast { get; init; }
+}

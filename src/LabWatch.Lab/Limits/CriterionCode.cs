@@ -36,6 +36,13 @@ public static class CriterionCode
     /// <summary>Missing, late, stuck, spiking or skewed data.</summary>
     public const string DataHealth = "data-health";
 
+    /// <summary>The name of a criterion in a sentence, for example "axial uniformity".</summary>
+    public static string NameOf(string code)
+    {
+        ArgumentNullException.ThrowIfNull(code);
+        return code.Replace('-', ' ');
+    }
+
     /// <summary>All codes, in the order they are shown.</summary>
     public static IReadOnlyList<string> All { get; } =
         [Stability, Settled, AxialUniformity, EffectiveEmissivity, ReferenceAgreement, HeaterBalance, Purge, Surroundings, Traceability, Budget, DataHealth];

@@ -65,6 +65,10 @@ public sealed record ReferenceSource(
     public bool HasScope(string scope) =>
         scope.Length == 0 || FindChannel(scope) is not null || Bands.Any(band => string.Equals(band.Id, scope, StringComparison.Ordinal));
 
+    /// <summary>The name for people of a band or a channel that an assessment is about; its id where the source does not have it.</summary>
+    public string NameOfScope(string scope) =>
+        Bands.FirstOrDefault(band => string.Equals(band.Id, scope, StringComparison.Ordinal))?.Name ?? FindChannel(scope)?.Name ?? scope;
+
     /// <summary>The channel of an id; null where the source has none of that id.</summary>
     public Channel? FindChannel(string id) => Channels.FirstOrDefault(channel => string.Equals(channel.Id, id, StringComparison.Ordinal));
 }

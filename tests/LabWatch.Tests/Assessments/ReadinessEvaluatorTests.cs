@@ -82,7 +82,7 @@ public sealed class ReadinessEvaluatorTests
         SourceReadiness readiness = Judge(
             Newest(250, 300, 900), [Stability(Decision.Pass)], TestLab.Snapshot([TestLab.IndicatorCertificate with { DueAt = Now - TimeSpan.FromDays(4) }]));
         Assert.Equal(ReadinessState.NotFit, readiness.State);
-        Assert.Contains(readiness.Reasons, reason => reason.Blocks && reason.Text == "Certificate HV-2026-11 has been overdue for 4 days.");
+        Assert.Contains(readiness.Reasons, reason => reason.Blocks && reason.Text == "Certificate HV-2026-11 of well-1 has been overdue for 4 days.");
         Assert.Contains(readiness.Reasons, reason => reason.Code == "at-temperature");
     }
 
@@ -92,13 +92,13 @@ public sealed class ReadinessEvaluatorTests
         SourceReadiness readiness = Judge(
             Newest(), [Stability(Decision.Pass)], TestLab.Snapshot([TestLab.IndicatorCertificate with { DueAt = Now + TimeSpan.FromDays(9) }]));
         Assert.Equal(ReadinessState.Ready, readiness.State);
-        Assert.Contains(readiness.Reasons, reason => reason.Text == "Certificate HV-2026-11 is due in 9 days.");
+        Assert.Contains(readiness.Reasons, reason => reason.Text == "Certificate HV-2026-11 of well-1 is due in 9 days.");
     }
 
     [Fact]
     public void A_set_point_outside_the_certificate_makes_it_not_fit() =>
         Assert.Equal(
-            "300 degC is outside the range of certificate HV-2026-11 (100 to 290 degC).",
+            "300 degC is outside the range of certificate HV-2026-11 of well-1 (100 to 290 degC).",
             Blocking(Judge(Newest(), [Stability(Decision.Pass)], TestLab.Snapshot([TestLab.IndicatorCertificate with { MaximumCelsius = 290 }])), ReadinessState.NotFit));
 
     [Theory]
