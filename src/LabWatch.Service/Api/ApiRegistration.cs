@@ -39,6 +39,8 @@ internal static class ApiRegistration
         services.TryAddSingleton<LiveReadings>();
         services.AddSingleton<IReadingTap>(provider => provider.GetRequiredService<LiveReadings>());
         services.TryAddSingleton<LatestAssessments>();
+        services.TryAddSingleton<RecentReadings>();
+        services.TryAddSingleton<ReadinessMaker>();
         services.TryAddSingleton<SourceStatusMaker>();
         services.TryAddSingleton<SiteBoard>();
         services.TryAddSingleton<StreamOptions>();

@@ -10,7 +10,7 @@ using LabWatch.Service.Api.Views;
 namespace LabWatch.Service.Api.Live;
 
 /// <summary>Puts together what is known about a source now.</summary>
-internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments assessments, TimeProvider clock)
+internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments assessments, ReadinessMaker readinessMaker, TimeProvider clock)
 {
     /// <summary>The status of a source with the given open alerts (those of other sources are left out).</summary>
     public async ValueTask<SourceStatusView> MakeAsync(
@@ -19,7 +19,7 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
         IReadOnlyDictionary<string, Reading> newest = await live.NewestAsync(source.Key, cancellationToken).ConfigureAwait(false);
         IReadOnlyList<Assessment> latest = await assessments.ReadAsync(cancellationToken).ConfigureAwait(false);
         Instant now = Instant.Now(clock);
-        SourceReadiness readiness = ReadinessEvaluator.Evaluate(new ReadinessInput(lab, source, [.. newest.Values], latest, openAlerts, now));
+        SourceReadiness readiness = await readinessMaker.MakeAsync(new ReadinessInput(lab, source, [.. newest.Values], latest, openAlerts, now), cancellationToken).ConfigureAwait(false);
         List<NewestReadingView> shown = [];
         foreach (Channel channel in source.Channels)
         {
@@ -31,7 +31,7 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
 
         return new SourceStatusView(
             source.Key.ToString(),
-            new ReadinessView(Names.Of(readiness.State), [.. readiness.Reasons.Select(reason => new ReadinessReasonView(reason.Code, reason.Text, reason.Blocks))]),
+            ReadinessMaker.Show(readiness),
             Reference(lab, source, newest),
             SetPoint(source, newest),
             shown.Count == 0 ? null : shown.Max(reading => reading.Time),

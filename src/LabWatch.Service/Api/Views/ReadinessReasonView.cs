@@ -6,4 +6,5 @@ namespace LabWatch.Service.Api.Views;
 internal sealed record ReadinessReasonView(
     [property: Description("Stable machine name.")] string Code,
     [property: Description("The reason in plain words with numbers and units.")] string Text,
-    [property: Description("Whether it stands against ready; the others inform.")] bool Blocks);
+    [property: Description("Whether it stands against ready; the others inform.")] bool Blocks,
+    [property: Description("Whether it goes away by waiting, as far as is known.")] bool PassesByWaiting);

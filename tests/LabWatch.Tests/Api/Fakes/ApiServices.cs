@@ -1,5 +1,7 @@
 using LabWatch.Alerts;
+using LabWatch.Assessments;
 using LabWatch.Assessments.Cavities;
+using LabWatch.Assessments.Criteria;
 using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
@@ -40,6 +42,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
         services.AddSingleton<IPlannerState>(Planner);
+        services.AddSingleton<ICriterion>(new StabilityCriterion(StabilityCriterion.DefaultSchedule));
         services.AddSingleton<ICavityModels>(DemoRun.Models);
         services.AddSingleton<IIntakeState>(Intake);
         if (isDemo)
