@@ -19,6 +19,7 @@ public sealed class ServiceEndpointsTests
         "get /api/v1/demo/faults",
         "get /api/v1/sources",
         "get /api/v1/sources/{id}",
+        "get /api/v1/sources/{id}/profile",
         "get /api/v1/sources/{id}/readings",
         "get /api/v1/stream",
         "get /health/live",

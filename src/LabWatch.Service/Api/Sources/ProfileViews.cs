@@ -52,6 +52,7 @@ internal static class ProfileViews
             channel.AxialPositionMillimetre,
             temperature?.Celsius,
             temperature?.ExpandedUncertaintyKelvin,
+            temperature?.CoverageFactor,
             channel.IsReference,
             !isKnown || Silence.IsSilent(channel, reading.Time, at));
     }
@@ -65,7 +66,7 @@ internal static class ProfileViews
             radiance.Model.Band.Name,
             radiance.Model.Method,
             Expanded(radiance.EffectiveEmissivity),
-            radiance.Values.Isothermal,
+            Expanded(radiance.Isothermal),
             radiance.RadianceCelsius.Value,
             Expanded(new(offset.Value * 1000, offset.StandardUncertainty * 1000, offset.DegreesOfFreedom)),
             radiance.Evidence.Surroundings.RadianceCelsius.Value,

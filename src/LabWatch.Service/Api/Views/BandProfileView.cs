@@ -8,7 +8,7 @@ internal sealed record BandProfileView(
     [property: Description("Name for people.")] string Name,
     [property: Description("How it is computed: ring-kernels, monte-carlo, flat-plate, or closed-form for a diffuse sphere.")] string Method,
     [property: Description("Effective emissivity for the reference temperature, with the profile.")] EstimateView EffectiveEmissivity,
-    [property: Description("Effective emissivity without temperature differences.")] double IsothermalEffectiveEmissivity,
+    [property: Description("Effective emissivity without temperature differences.")] EstimateView IsothermalEffectiveEmissivity,
     [property: Description("Radiance temperature with the surroundings, degree Celsius.")] double RadianceTemperatureCelsius,
     [property: Description("Radiance temperature minus reference temperature, millikelvin.")] EstimateView OffsetMillikelvin,
     [property: Description("Radiance temperature of the surroundings, degree Celsius.")] double SurroundingsCelsius,

@@ -26,6 +26,8 @@ internal sealed class SampleLab : ILabSnapshotSource
 
     public static SourceKey Rowan { get; } = new(Site, "rowan");
 
+    public static SourceKey Hazel { get; } = new(Site, "hazel");
+
     public LabSnapshot Current { get; } = Make();
 
     public event EventHandler? Changed
@@ -41,7 +43,7 @@ internal sealed class SampleLab : ILabSnapshotSource
             Source("fir", "Fir", SourceKind.StirredBath, TraceabilityRoute.Contact, -20, 90, new(CavityShape.CylinderInwardCone, 30, 230, 60, 25, [new("lwir", new(0.955, 0.006), new(0.94, 0.03))]), "Ohm", [225, 120, 30], "dry nitrogen", "lwir"),
             Source("rowan", "Rowan", SourceKind.BlockFurnace, TraceabilityRoute.Contact, 100, 500, new(CavityShape.CylinderOutwardCone, 25, 200, 60, 20, []), "Ohm", [195, 110, 30], null, "lwir"),
             Source("yew", "Yew", SourceKind.GraphiteTube, TraceabilityRoute.Radiometric, 800, 1500, new(CavityShape.Cylinder, 15, 260, null, 10, []), "Cel", [250, 140, 40], "argon", "nir"),
-            Source("hazel", "Hazel", SourceKind.FixedReference, TraceabilityRoute.Contact, 36, 38, new(CavityShape.Sphere, 30, 0, null, 10, []), "Ohm", [55, 10], null, "lwir"),
+            Source("hazel", "Hazel", SourceKind.FixedReference, TraceabilityRoute.Contact, 36, 38, new(CavityShape.Sphere, 30, 0, null, 10, [new("lwir", new(0.95, 0.01), new(1, 0))]), "Ohm", [55, 10], null, "lwir"),
         ];
         Channel[] wells = [.. sources.SelectMany(source => source.Channels).Where(channel => channel.Quantity == ChannelQuantity.WellThermometer)];
         return new LabSnapshot(
