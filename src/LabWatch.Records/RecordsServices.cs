@@ -33,6 +33,8 @@ public static class RecordsServices
         services.TryAddSingleton(options);
         services.TryAddSingleton<RecordsContexts>();
         services.TryAddSingleton<RecordsMigrator>();
+        services.TryAddSingleton<TrailBeginning>();
+        services.TryAddSingleton<TrailHeads>();
         services.TryAddSingleton<RecordsDatabase>();
         services.TryAddSingleton<IPositionLedger, PositionLedger>();
         services.TryAddSingleton<IAuditLedger, AuditLedger>();
@@ -41,6 +43,7 @@ public static class RecordsServices
         services.TryAddSingleton<ILabImportLedger, LabImportLedger>();
         services.TryAddSingleton<ILabRecords, LabRecords>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, RecordsStartup>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, TrailHeadKeeper>());
         return services;
     }
 }

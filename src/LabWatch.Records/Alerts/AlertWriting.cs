@@ -1,4 +1,6 @@
+using System.Text.Json.Nodes;
 using LabWatch.Lab.Alerts;
+using LabWatch.Records.Audit;
 using LabWatch.Records.Storage;
 using LabWatch.Records.Storage.Rows;
 using Microsoft.EntityFrameworkCore;
@@ -23,13 +25,17 @@ internal static class AlertWriting
             return false;
         }
 
-        context.AlertTransitions.Add(AlertMapping.ToRow(transition));
+        AlertTransitionRow step = AlertMapping.ToRow(transition);
+        context.AlertTransitions.Add(step);
         AlertRow? row = await context.Alerts.FindAsync([alert.Id], cancellationToken);
         if (row is null)
         {
             row = AlertMapping.ToNewRow(alert, await NextNumberAsync(context, cancellationToken));
             context.Alerts.Add(row);
+            await AuditChain.CoverAsync(context, row, NoteOf(transition, AuditActions.AlertOpened), cancellationToken);
         }
+
+        await AuditChain.CoverAsync(context, step, NoteOf(transition, AuditActions.AlertStep), cancellationToken);
 
         if (transition.Sequence > row.Transition)
         {
@@ -39,6 +45,27 @@ internal static class AlertWriting
 
         await QueueAsync(context, alert.Source.Site, messages, cancellationToken);
         return true;
+    }
+
+    private static AuditNote NoteOf(AlertTransition transition, string action)
+    {
+        Alert alert = transition.Alert;
+        return new AuditNote(
+            alert.Source.Site,
+            transition.At,
+            transition.By,
+            action,
+            string.Empty,
+            new JsonObject
+            {
+                ["source"] = alert.Source.Source,
+                ["code"] = alert.Code,
+                ["subject"] = alert.Subject,
+                ["event"] = transition.Event,
+                ["priority"] = StoredNames.Of(alert.Priority),
+                ["state"] = StoredNames.Of(alert.State),
+            },
+            null);
     }
 
     private static async Task<long> NextNumberAsync(RecordsContext context, CancellationToken cancellationToken) =>

@@ -1,6 +1,8 @@
+using System.Text.Json.Nodes;
 using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Time;
+using LabWatch.Records.Audit;
 using LabWatch.Records.Storage;
 using LabWatch.Records.Storage.Rows;
 using Microsoft.EntityFrameworkCore;
@@ -24,6 +26,7 @@ internal static class AssessmentWriting
                 added++;
                 AssessmentRow row = AssessmentMapping.ToRow(assessment, sequence + added);
                 context.Assessments.Add(row);
+                await AuditChain.CoverAsync(context, row, NoteOf(row), cancellationToken);
                 await MoveHeadAsync(context, row, cancellationToken);
                 await MoveWatermarkAsync(context, assessment.Source, assessment.Criterion, assessment.Window.End, cancellationToken);
             }
@@ -47,6 +50,24 @@ internal static class AssessmentWriting
             row.WindowEnd = end.Microseconds;
         }
     }
+
+    private static AuditNote NoteOf(AssessmentRow row) => new(
+        row.Site,
+        new Instant(row.ComputedAt),
+        AuditActor.Service,
+        AuditActions.AssessmentRecorded,
+        string.Empty,
+        new JsonObject
+        {
+            ["source"] = row.Source,
+            ["criterion"] = row.Criterion,
+            ["scope"] = row.Scope,
+            ["windowStart"] = new Instant(row.WindowStart).ToString(),
+            ["windowEnd"] = new Instant(row.WindowEnd).ToString(),
+            ["revision"] = row.Revision,
+            ["decision"] = row.Decision,
+        },
+        null);
 
     private static async Task MoveHeadAsync(RecordsContext context, AssessmentRow row, CancellationToken cancellationToken)
     {

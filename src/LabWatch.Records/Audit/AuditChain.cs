@@ -34,7 +34,7 @@ internal static class AuditChain
     /// <param name="cancellationToken">Cancels the read of the chain's end.</param>
     public static Task CoverAsync(RecordsContext context, object row, AuditNote note, CancellationToken cancellationToken)
     {
-        (string subject, string digest) = CoveredRow.Describe(context, row);
+        (_, string subject, string digest) = CoveredRow.Describe(context, row);
         return AppendAsync(context, note with { Subject = subject, RecordDigest = digest }, cancellationToken);
     }
 

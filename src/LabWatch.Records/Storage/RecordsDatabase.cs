@@ -1,3 +1,4 @@
+using LabWatch.Records.Audit;
 using Microsoft.EntityFrameworkCore;
 using Microsoft.EntityFrameworkCore.Storage;
 
@@ -7,7 +8,7 @@ namespace LabWatch.Records.Storage;
 /// The one way to the records: prepared at first use, many readers, one writer at a time. Every failure of the moment comes out as
 /// <see cref="RecordsUnavailableException"/>.
 /// </summary>
-internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator migrator) : IDisposable
+internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator migrator, TrailBeginning beginning, TrailHeads heads) : IDisposable
 {
     /// <summary>Key of the PostgreSQL advisory lock that makes writers take turns ("LabWatch" in ASCII).</summary>
     private const long WriterKey = 0x4C61_6257_6174_6368;
@@ -30,6 +31,7 @@ internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator 
             if (!_ready)
             {
                 await migrator.MigrateAsync(cancellationToken);
+                await CommitAsync(context => BeginAsync(context, cancellationToken), cancellationToken);
                 _ready = true;
             }
         }
@@ -70,17 +72,7 @@ internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator 
         await _writer.WaitAsync(cancellationToken);
         try
         {
-            await using RecordsContext context = contexts.Create();
-            await using IDbContextTransaction transaction = await context.Database.BeginTransactionAsync(cancellationToken);
-            if (!contexts.IsSqlite)
-            {
-                await context.Database.ExecuteSqlAsync($"SELECT pg_advisory_xact_lock({WriterKey})", cancellationToken);
-            }
-
-            T result = await write(context);
-            await context.SaveChangesAsync(cancellationToken);
-            await transaction.CommitAsync(cancellationToken);
-            return result;
+            return await CommitAsync(write, cancellationToken);
         }
         catch (Exception exception) when (RecordsFailure.IsOfTheMoment(exception))
         {
@@ -90,6 +82,29 @@ internal sealed class RecordsDatabase(RecordsContexts contexts, RecordsMigrator 
         {
             _writer.Release();
         }
+    }
+
+    private async Task<T> CommitAsync<T>(Func<RecordsContext, Task<T>> write, CancellationToken cancellationToken)
+    {
+        await using RecordsContext context = contexts.Create();
+        await using IDbContextTransaction transaction = await context.Database.BeginTransactionAsync(cancellationToken);
+        if (!contexts.IsSqlite)
+        {
+            await context.Database.ExecuteSqlAsync($"SELECT pg_advisory_xact_lock({WriterKey})", cancellationToken);
+        }
+
+        T result = await write(context);
+        await context.SaveChangesAsync(cancellationToken);
+        await transaction.CommitAsync(cancellationToken);
+        heads.Note(context.ChainHeads);
+        return result;
+    }
+
+    private async Task<bool> BeginAsync(RecordsContext context, CancellationToken cancellationToken)
+    {
+        await beginning.RunAsync(context, cancellationToken);
+        await heads.CompareAsync(context, cancellationToken);
+        return true;
     }
 
     /// <inheritdoc/>

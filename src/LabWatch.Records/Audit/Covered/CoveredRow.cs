@@ -6,11 +6,11 @@ using LabWatch.Records.Storage;
 
 namespace LabWatch.Records.Audit.Covered;
 
-/// <summary>Subject and record digest of a row of the model.</summary>
+/// <summary>Site, subject and record digest of a row of the model.</summary>
 internal static class CoveredRow
 {
-    /// <summary>Subject and record digest of a row. Throws <see cref="ArgumentException"/> where its table is not covered.</summary>
-    public static (string Subject, string Digest) Describe(RecordsContext context, object row)
+    /// <summary>Site, subject and record digest (hexadecimal) of a row. Throws <see cref="ArgumentException"/> where its table is not covered.</summary>
+    public static (string Site, string Subject, string Digest) Describe(RecordsContext context, object row)
     {
         CoveredTable table = CoveredTables.Of(row.GetType());
         ImmutableArray<CoveredColumn> columns = CoveredColumns.Of(context, table);
@@ -22,7 +22,7 @@ internal static class CoveredRow
         }
 
         record.End();
-        return (SubjectOf(table, columns, row), Convert.ToHexStringLower(SHA256.HashData(output.WrittenSpan)));
+        return ((string)columns.First(column => column.Name == "site").Read(row)!, SubjectOf(table, columns, row), Convert.ToHexStringLower(SHA256.HashData(output.WrittenSpan)));
     }
 
     private static string SubjectOf(CoveredTable table, ImmutableArray<CoveredColumn> columns, object row) =>

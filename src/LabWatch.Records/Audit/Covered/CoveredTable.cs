@@ -1,4 +1,6 @@
 using System.Text.RegularExpressions;
+using LabWatch.Records.Storage;
+using Microsoft.EntityFrameworkCore;
 
 namespace LabWatch.Records.Audit.Covered;
 
@@ -9,9 +11,10 @@ namespace LabWatch.Records.Audit.Covered;
 /// </summary>
 internal sealed partial class CoveredTable
 {
-    private CoveredTable(Type row, string subject, bool isAppendOnly, string[] derived)
+    private CoveredTable(Type row, Func<RecordsContext, IAsyncEnumerable<object>> rows, string subject, bool isAppendOnly, string[] derived)
     {
         Row = row;
+        Rows = rows;
         IsAppendOnly = isAppendOnly;
         Derived = derived;
         Template = subject;
@@ -20,6 +23,9 @@ internal sealed partial class CoveredTable
 
     /// <summary>Type of the row in the model.</summary>
     public Type Row { get; }
+
+    /// <summary>All rows, in no particular order, untracked.</summary>
+    public Func<RecordsContext, IAsyncEnumerable<object>> Rows { get; }
 
     /// <summary>How a row is named in the trail, for example <c>run/{run_id}/{number}</c>.</summary>
     public string Template { get; }
@@ -37,10 +43,18 @@ internal sealed partial class CoveredTable
     public IReadOnlyList<(string Text, bool IsColumn)> Parts { get; }
 
     /// <summary>A table whose rows are only ever added.</summary>
-    public static CoveredTable AppendOnly<TRow>(string subject, params string[] derived) => new(typeof(TRow), subject, true, derived);
+    public static CoveredTable AppendOnly<TRow>(string subject, params string[] derived)
+        where TRow : class =>
+        new(typeof(TRow), RowsOf<TRow>, subject, true, derived);
 
     /// <summary>A table whose rows change, each change with an entry of its own.</summary>
-    public static CoveredTable Changing<TRow>(string subject, params string[] derived) => new(typeof(TRow), subject, false, derived);
+    public static CoveredTable Changing<TRow>(string subject, params string[] derived)
+        where TRow : class =>
+        new(typeof(TRow), RowsOf<TRow>, subject, false, derived);
+
+    private static IAsyncEnumerable<object> RowsOf<TRow>(RecordsContext context)
+        where TRow : class =>
+        context.Set<TRow>().AsNoTracking().AsAsyncEnumerable();
 
     private static IEnumerable<(string Text, bool IsColumn)> Split(string subject)
     {

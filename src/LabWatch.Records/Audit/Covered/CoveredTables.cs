@@ -12,6 +12,9 @@ internal static class CoveredTables
     public static IReadOnlyList<CoveredTable> All { get; } =
     [
         CoveredTable.AppendOnly<AssessmentRow>("assessment/{id}"),
+        CoveredTable.Changing<AlertRow>(
+            "alert/{id}",
+            "priority", "state", "headline", "detail", "value", "limit_value", "unit", "returned_at", "acknowledged_at", "acknowledged_by", "acknowledge_note", "transition"),
         CoveredTable.AppendOnly<AlertTransitionRow>("alert/{alert_id}/{sequence}"),
         CoveredTable.AppendOnly<LabImportRow>("lab-import/{sequence}"),
         CoveredTable.AppendOnly<RevisionRow>("record/{kind}/{id}@{revision}"),

@@ -1,0 +1,31 @@
+using Microsoft.Extensions.Hosting;
+
+namespace LabWatch.Records.Audit;
+
+/// <summary>Writes the ends of the chains beside the database: at most once a second, and when the service stops.</summary>
+internal sealed class TrailHeadKeeper(TrailHeads heads, TimeProvider clock) : BackgroundService
+{
+    private static readonly TimeSpan Pause = TimeSpan.FromSeconds(1);
+
+    public override async Task StopAsync(CancellationToken cancellationToken)
+    {
+        await base.StopAsync(cancellationToken);
+        heads.Write();
+    }
+
+    protected override async Task ExecuteAsync(CancellationToken stoppingToken)
+    {
+        using PeriodicTimer timer = new(Pause, clock);
+        try
+        {
+            while (await timer.WaitForNextTickAsync(stoppingToken))
+            {
+                heads.Write();
+            }
+        }
+        catch (OperationCanceledException) when (stoppingToken.IsCancellationRequested)
+        {
+            // Stopping: the last end is written when the loop is over.
+        }
+    }
+}
