@@ -1,4 +1,5 @@
 using System.Runtime.CompilerServices;
 
+[assembly: InternalsVisibleTo("LabWatch.Evidence")]
 [assembly: InternalsVisibleTo("LabWatch.Tests")]
 [assembly: InternalsVisibleTo("LabWatch.Benchmarks")]

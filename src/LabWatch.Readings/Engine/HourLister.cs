@@ -89,7 +89,7 @@ internal sealed class HourLister(HeadState head, ReaderPool readers, StoreIncide
             {
                 hours.Add(new SealedHour(
                     reader.GetInt64(0), KeyOf(reader.GetInt64(1)), new Instant(reader.GetInt64(2)), reader.GetInt32(3), reader.GetInt32(4),
-                    reader.GetFieldValue<byte[]>(5)));
+                    reader.GetFieldValue<byte[]>(5), new Instant(reader.GetInt64(6)), reader.GetInt64(7)));
             }
 
             return hours;

@@ -74,7 +74,7 @@ internal abstract class StoreDialect
     public const string ChangedHours = "SELECT DISTINCT source_id, hour FROM block WHERE last_change > @change";
 
     public const string SealsAfter =
-        "SELECT id, source_id, hour, part, readings, digest FROM block WHERE id > @id ORDER BY id LIMIT @count";
+        "SELECT id, source_id, hour, part, readings, digest, sealed_at, last_change FROM block WHERE id > @id ORDER BY id LIMIT @count";
 
     public const string SetAside = "INSERT INTO set_aside(id, kind, reference, reason, found_at, data) VALUES (@id, @kind, @reference, @reason, @at, @data)";
 

@@ -1,4 +1,5 @@
 using LabWatch.Records;
+using LabWatch.Records.Audit;
 using LabWatch.Tests.Records.Contract;
 using Microsoft.Data.Sqlite;
 using Microsoft.Extensions.DependencyInjection;
@@ -116,7 +117,7 @@ public sealed class RecordsStartTests : IDisposable
     {
         Directory.CreateDirectory(FilePath);
         await using ServiceProvider services = new ServiceCollection().AddLabWatchRecords(RecordsOptions.InDirectory(_directory)).BuildServiceProvider();
-        IHostedService startup = Assert.Single(services.GetServices<IHostedService>());
+        IHostedService startup = Assert.Single(services.GetServices<IHostedService>(), service => service is not TrailHeadKeeper);
         await startup.StartAsync(Token);
         IPositionLedger positions = services.GetRequiredService<IPositionLedger>();
         await Assert.ThrowsAsync<RecordsUnavailableException>(async () => await positions.PositionAsync("any", Token));

@@ -16,7 +16,7 @@ internal ref struct RecordWriter(ArrayBufferWriter<byte> output)
     }
 
     /// <summary>A text in UTF-8.</summary>
-    public void Text(string column, ReadOnlySpan<byte> text)
+    public void Text(string column, scoped ReadOnlySpan<byte> text)
     {
         Name(column);
         CanonicalUtf8.WriteText(output, text);
@@ -44,7 +44,7 @@ internal ref struct RecordWriter(ArrayBufferWriter<byte> output)
     }
 
     /// <summary>Bytes.</summary>
-    public void Bytes(string column, ReadOnlySpan<byte> bytes)
+    public void Bytes(string column, scoped ReadOnlySpan<byte> bytes)
     {
         Name(column);
         CanonicalUtf8.WriteHex(output, bytes);

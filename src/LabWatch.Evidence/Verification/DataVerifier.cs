@@ -1,0 +1,135 @@
+using LabWatch.Evidence.Recording;
+using LabWatch.Lab.Findings;
+using LabWatch.Readings;
+using LabWatch.Records;
+using LabWatch.Records.Audit;
+using LabWatch.Records.Audit.Verification;
+
+namespace LabWatch.Evidence.Verification;
+
+/// <summary>
+/// Verifies a data directory: the chain of the audit trail, every covered record, every sealed part of every source-hour. Opens for
+/// reading alone, beside a running service or without one. Damaged bytes are findings, never exceptions.
+/// </summary>
+public sealed class DataVerifier
+{
+    private static readonly Dictionary<string, string> OtherTables = new(StringComparer.Ordinal) { [HourNote.Prefix] = "block" };
+
+    private readonly VerifyRequest _request;
+    private readonly Action<string, long> _progress;
+    private readonly TrailFindings _findings = new();
+    private readonly SortedDictionary<string, long> _examined = new(StringComparer.Ordinal);
+    private readonly Dictionary<int, HourFacts> _hours = [];
+    private readonly List<string> _notes = [];
+    private long _readings;
+
+    private DataVerifier(VerifyRequest request, Action<string, long>? progress)
+    {
+        _request = request;
+        _progress = (table, count) =>
+        {
+            _examined[table] = count;
+            progress?.Invoke(table, count);
+        };
+    }
+
+    /// <summary>Verifies. Gives the report, or the findings that say why the directory cannot be verified at all.</summary>
+    /// <param name="request">What to verify.</param>
+    /// <param name="progress">Told of tables and the rows read in them so far; null for nobody.</param>
+    public static (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run(VerifyRequest request, Action<string, long>? progress = null)
+    {
+        ArgumentNullException.ThrowIfNull(request);
+        return new DataVerifier(request, progress).Run();
+    }
+
+    private (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run()
+    {
+        IReadOnlyDictionary<string, AuditHead> heads = new Dictionary<string, AuditHead>(StringComparer.Ordinal);
+        try
+        {
+            using RecordsSnapshot records = RecordsSnapshot.Open(_request.Records);
+            TrailVerifier verifier = new(records, _findings);
+            if (verifier.Unfit() is { } unfit)
+            {
+                return (null, [new Finding("schema-differs", "--data", unfit, _request.DataDirectory, "Use the version of LabWatch that the records belong to.")]);
+            }
+
+            heads = verifier.ReadTrail(TakeEntry, _progress);
+            CheckHeads(verifier);
+            verifier.CheckTables(_progress);
+            CheckHours(verifier);
+            if (verifier.CheckUnclaimed(OtherTables) is > 0 and long unknown)
+            {
+                _notes.Add(FormattableString.Invariant($"{unknown} entries tell of kinds of record that this version does not know; those records were not checked."));
+            }
+        }
+        catch (UnreadableException exception)
+        {
+            _findings.Add(Unreadable.Table(RecordsOptions.FileName, exception.Message));
+        }
+
+        _notes.Add("Readings of hours that are not sealed yet are not covered.");
+        return (new VerifyReport(_findings, heads, _examined, _readings, _notes), []);
+    }
+
+    private void TakeEntry(int place, ReadOnlySpan<byte> subject, ReadOnlySpan<byte> content)
+    {
+        if (subject.StartsWith("hour/"u8) && HourFacts.Read(content) is { } facts)
+        {
+            _hours[place] = facts;
+        }
+    }
+
+    private void CheckHeads(TrailVerifier verifier)
+    {
+        foreach ((string? site, AuditHead head) in _request.Noted)
+        {
+            verifier.CheckHead(site, head, "the head that was given");
+        }
+
+        IReadOnlyDictionary<string, AuditHead>? kept = TrailHeadFile.Read(_request.DataDirectory);
+        if (kept is null)
+        {
+            _findings.Add(new TrailFinding(
+                TrailCodes.HeadFileUnreadable, TrailHeadFile.FileName, string.Empty, null, "The file of the noted ends is not what the service writes.",
+                "It was altered or damaged; compare the chain with a head that was kept elsewhere (--head)."));
+            return;
+        }
+
+        if (kept.Count == 0 && verifier.Facts.Entries.Length > 0)
+        {
+            _notes.Add($"{TrailHeadFile.FileName} is not there: a chain that was cut at its end shows only against a head that was kept elsewhere (--head).");
+        }
+
+        foreach ((string site, AuditHead head) in kept)
+        {
+            verifier.CheckHead(site, head, TrailHeadFile.FileName);
+        }
+    }
+
+    private void CheckHours(TrailVerifier verifier)
+    {
+        string path = Path.Combine(_request.DataDirectory, SqliteReadingStore.FileName);
+        if (!File.Exists(path) && _hours.Count == 0)
+        {
+            _notes.Add("There are no readings in this directory.");
+            return;
+        }
+
+        try
+        {
+            using SealedFile file = SealedFile.Open(path);
+            HourCheck check = new(file, verifier.Facts, _hours, _findings);
+            check.Run(count => _progress("block", count));
+            _readings = check.Readings;
+            if (check.Pending > 0)
+            {
+                _notes.Add(FormattableString.Invariant($"{check.Pending} sealed parts are newer than the trail; the service enters them within seconds when it runs, and until then they are not covered."));
+            }
+        }
+        catch (UnreadableException exception)
+        {
+            _findings.Add(Unreadable.Table(SqliteReadingStore.FileName, exception.Message));
+        }
+    }
+}

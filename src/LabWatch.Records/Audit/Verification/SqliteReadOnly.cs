@@ -1,0 +1,44 @@
+using Microsoft.Data.Sqlite;
+
+namespace LabWatch.Records.Audit.Verification;
+
+/// <summary>Opens an SQLite file that may be in use, may be damaged and may lie where nothing can be written.</summary>
+internal static class SqliteReadOnly
+{
+    /// <summary>Opens the file for reading, in one transaction. Throws <see cref="UnreadableException"/> where that cannot be done.</summary>
+    public static SqliteConnection Open(string path)
+    {
+        if (!File.Exists(path))
+        {
+            throw new UnreadableException("The file is not there.");
+        }
+
+        // Beside a write-ahead log the file needs a shared index; where none can be made and there is no log, the file is complete by itself.
+        bool isComplete = !File.Exists(path + "-wal");
+        return TryOpen(path, out SqliteConnection? connection, out string reason)
+            || (isComplete && TryOpen($"file:{Uri.EscapeDataString(path).Replace("%2F", "/", StringComparison.Ordinal)}?immutable=1", out connection, out reason))
+            ? connection!
+            : throw new UnreadableException(reason);
+    }
+
+    private static bool TryOpen(string source, out SqliteConnection? connection, out string reason)
+    {
+        connection = new SqliteConnection(new SqliteConnectionStringBuilder { DataSource = source, Mode = SqliteOpenMode.ReadOnly, Pooling = false, DefaultTimeout = 10 }.ToString());
+        try
+        {
+            connection.Open();
+            using SqliteCommand command = connection.CreateCommand();
+            command.CommandText = "PRAGMA trusted_schema = OFF; PRAGMA cell_size_check = ON; PRAGMA mmap_size = 0; BEGIN; SELECT COUNT(*) FROM sqlite_schema;";
+            command.ExecuteScalar();
+            reason = string.Empty;
+            return true;
+        }
+        catch (SqliteException exception)
+        {
+            connection.Dispose();
+            connection = null;
+            reason = exception.Message;
+            return false;
+        }
+    }
+}
