@@ -12,7 +12,6 @@ public static class EvidenceServices
     public static IServiceCollection AddLabWatchEvidence(this IServiceCollection services)
     {
         ArgumentNullException.ThrowIfNull(services);
-        services.TryAddSingleton(TimeProvider.System);
         services.TryAddSingleton<SealedHourRecorder>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, SealedHourService>());
         return services;

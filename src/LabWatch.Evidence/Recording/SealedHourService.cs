@@ -6,13 +6,14 @@ using Microsoft.Extensions.Logging;
 namespace LabWatch.Evidence.Recording;
 
 /// <summary>Looks every few seconds for hours that were sealed, and has them entered in the trail.</summary>
-internal sealed class SealedHourService(SealedHourRecorder recorder, TimeProvider clock, ILogger<SealedHourService> logger) : BackgroundService
+internal sealed class SealedHourService(SealedHourRecorder recorder, ILogger<SealedHourService> logger) : BackgroundService
 {
     private static readonly TimeSpan Pause = TimeSpan.FromSeconds(5);
 
     protected override async Task ExecuteAsync(CancellationToken stoppingToken)
     {
-        using PeriodicTimer timer = new(Pause, clock);
+        // Of real time: a demo that runs faster needs no more looks.
+        using PeriodicTimer timer = new(Pause, TimeProvider.System);
         try
         {
             do

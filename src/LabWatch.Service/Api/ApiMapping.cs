@@ -1,6 +1,7 @@
 using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Alerts;
 using LabWatch.Service.Api.Assessments;
+using LabWatch.Service.Api.Audit;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
@@ -29,6 +30,7 @@ internal static class ApiMapping
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
         AlertEndpoints.Map(api);
+        AuditEndpoints.Map(api);
         StreamEndpoints.Map(api);
         if (app.Services.GetService<ILabSimulation>() is not null)
         {

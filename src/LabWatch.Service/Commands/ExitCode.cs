@@ -11,4 +11,7 @@ internal static class ExitCode
 
     /// <summary>The input is wrong; the findings were written to the error output. Starting again changes nothing.</summary>
     public const int BadInput = 2;
+
+    /// <summary>A verification found what is not as it was recorded.</summary>
+    public const int TamperingFound = 3;
 }

@@ -14,4 +14,7 @@ internal static partial class HostLog
 
     [LoggerMessage(7003, LogLevel.Information, "Data in {Directory}")]
     public static partial void DataIn(ILogger logger, string directory);
+
+    [LoggerMessage(7010, LogLevel.Warning, "The start is not in the audit trail yet; trying again: {Reason}")]
+    public static partial void StartNotRecorded(ILogger logger, string reason);
 }

@@ -1,5 +1,6 @@
 using LabWatch.Alerts;
 using LabWatch.Assessments;
+using LabWatch.Evidence;
 using LabWatch.Intake;
 using LabWatch.Lab;
 using LabWatch.Readings;
@@ -43,6 +44,7 @@ internal static class LabWatchHost
     {
         services.AddSingleton(start.Clock);
         services.AddSingleton(start.Data);
+        services.AddSingleton(start.Settings);
         services.AddSingleton(start.Lab);
         services.AddSingleton<ILabSnapshotSource>(start.Lab);
         services.AddLabWatchRecords(start.Settings.Records);
@@ -51,6 +53,8 @@ internal static class LabWatchHost
         services.AddSingleton<ILabInForce>(start.Lab);
         services.AddSingleton<LabKeeper>();
         services.AddHostedService(provider => provider.GetRequiredService<LabKeeper>());
+        services.AddHostedService<StartRecorder>();
+        services.AddLabWatchEvidence();
         services.AddLabWatchApi();
         services.AddLabWatchIntake(start.Settings.Intake);
         services.AddLabWatchAssessments(start.Settings.Assessments);
