@@ -39,8 +39,14 @@ public sealed class DataVerifier
     public static (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run(VerifyRequest request, Action<string, long>? progress = null)
     {
         ArgumentNullException.ThrowIfNull(request);
-        return new DataVerifier(request, progress).Run();
+        // A service that started meanwhile changed files that were read as if nobody used them: what was found may be its doing.
+        bool wasAtRest = IsAtRest(request);
+        (VerifyReport? Report, IReadOnlyList<Finding> BadInput) first = new DataVerifier(request, progress).Run();
+        return wasAtRest && !IsAtRest(request) ? new DataVerifier(request, progress).Run() : first;
     }
+
+    private static bool IsAtRest(VerifyRequest request) =>
+        SqliteReadOnly.IsAtRest(request.Records.FilePath) && SqliteReadOnly.IsAtRest(Path.Combine(request.DataDirectory, SqliteReadingStore.FileName));
 
     private (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run()
     {

@@ -13,13 +13,17 @@ internal static class SqliteReadOnly
             throw new UnreadableException("The file is not there.");
         }
 
-        // Beside a write-ahead log the file needs a shared index; where none can be made and there is no log, the file is complete by itself.
-        bool isComplete = !File.Exists(path + "-wal");
-        return TryOpen(path, out SqliteConnection? connection, out string reason)
-            || (isComplete && TryOpen($"file:{Uri.EscapeDataString(path).Replace("%2F", "/", StringComparison.Ordinal)}?immutable=1", out connection, out reason))
-            ? connection!
-            : throw new UnreadableException(reason);
+        // Without a write-ahead log nobody uses the file and it is complete by itself: it is read without leaving anything beside it, from
+        // a medium that cannot be written, too. With one the log belongs to it.
+        string reason = string.Empty;
+        SqliteConnection? connection;
+        bool isOpen = IsAtRest(path) && TryOpen($"file:{Uri.EscapeDataString(path).Replace("%2F", "/", StringComparison.Ordinal)}?immutable=1", out connection, out reason)
+            || TryOpen(path, out connection, out reason);
+        return isOpen ? connection! : throw new UnreadableException(reason);
     }
+
+    /// <summary>Whether the file has no write-ahead log, so that no process uses it.</summary>
+    public static bool IsAtRest(string path) => !File.Exists(path + "-wal");
 
     private static bool TryOpen(string source, out SqliteConnection? connection, out string reason)
     {

@@ -8,6 +8,7 @@ using LabWatch.Lab;
 using LabWatch.Readings;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
+using LabWatch.Records.Audit;
 using LabWatch.Service.Api;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
@@ -27,6 +28,8 @@ internal sealed class ApiServices(TimeProvider clock)
 
     public FakeAssessments Assessments { get; } = new();
 
+    public FakeTrail Trail { get; } = new();
+
     public FakePlanner Planner { get; } = new();
 
     public FakeDemo Demo { get; } = new(clock);
@@ -41,6 +44,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IAlertBoard>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);
+        services.AddSingleton<IAuditLedger>(Trail);
         services.AddSingleton<IPlannerState>(Planner);
         services.AddSingleton<ICriterion>(new StabilityCriterion(StabilityCriterion.DefaultSchedule));
         services.AddSingleton<ICavityModels>(DemoRun.Models);
