@@ -3,6 +3,7 @@ using LabWatch.Benchmarks.Assessments;
 using LabWatch.Benchmarks.Intake;
 using LabWatch.Benchmarks.Metrology;
 using LabWatch.Benchmarks.Readings;
+using LabWatch.Benchmarks.Records;
 using LabWatch.Benchmarks.Simulator;
 
 string[] rest = [.. args.Skip(1)];
@@ -26,7 +27,9 @@ switch (args.FirstOrDefault())
         return StatisticsBenchmark.Run(rest);
     case "store":
         return await StoreBenchmark.RunAsync(rest);
+    case "trail":
+        return await TrailBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, simulator, statistics, store.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, simulator, statistics, store, trail.");
         return 1;
 }

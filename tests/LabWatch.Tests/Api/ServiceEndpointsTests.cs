@@ -16,7 +16,7 @@ public sealed class ServiceEndpointsTests
         "get /api/v1/assessments/outcomes",
         "get /api/v1/assessments/{id}",
         "get /api/v1/assessments/{id}/revisions",
-        "get /api/v1/demo/faults",
+        "get /api/v1/audit", "get /api/v1/demo/faults",
         "get /api/v1/sources",
         "get /api/v1/sources/{id}",
         "get /api/v1/sources/{id}/profile",

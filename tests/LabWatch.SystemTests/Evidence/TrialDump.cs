@@ -1,0 +1,70 @@
+using Microsoft.Data.Sqlite;
+
+namespace LabWatch.SystemTests.Evidence;
+
+/// <summary>The logical content of the tables that are vouched for, by row number, read without indexes.</summary>
+internal sealed class TrialDump
+{
+    private readonly Dictionary<(string Table, long Row), Dictionary<string, object>> _rows = [];
+
+    /// <summary>Why the content could not be read; null where it could.</summary>
+    public string? Unreadable { get; private set; }
+
+    public IReadOnlyDictionary<(string Table, long Row), Dictionary<string, object>> Rows => _rows;
+
+    public static TrialDump Of(string directory)
+    {
+        TrialDump dump = new();
+        foreach (TrialTable table in TrialTable.All)
+        {
+            try
+            {
+                dump.Read(directory, table);
+            }
+            catch (Exception exception) when (exception is SqliteException or InvalidCastException or ArgumentException)
+            {
+                dump.Unreadable = $"{table.Name}: {exception.Message}";
+            }
+        }
+
+        return dump;
+    }
+
+    /// <summary>Rows that differ, are gone or are new in a later dump: table and names of the row before and after.</summary>
+    public IReadOnlyList<(TrialTable Table, string? Before, string? After)> Differences(TrialDump later)
+    {
+        List<(TrialTable, string?, string?)> differences = [];
+        foreach ((string Table, long Row) key in _rows.Keys.Union(later._rows.Keys))
+        {
+            Dictionary<string, object>? before = _rows.GetValueOrDefault(key);
+            Dictionary<string, object>? after = later._rows.GetValueOrDefault(key);
+            if (before is null || after is null || !Same(before, after))
+            {
+                TrialTable table = TrialTable.All.Single(one => one.Name == key.Table);
+                differences.Add((table, before is null ? null : table.IdOf(before), after is null ? null : table.IdOf(after)));
+            }
+        }
+
+        return differences;
+    }
+
+    private static bool Same(Dictionary<string, object> before, Dictionary<string, object> after) => before.All(column => (column.Value, after[column.Key]) switch
+    {
+        (byte[] left, byte[] right) => left.AsSpan().SequenceEqual(right),
+        (double left, double right) => left == right,
+        (object left, object right) => left.Equals(right),
+    });
+
+    private void Read(string directory, TrialTable table)
+    {
+        using SqliteConnection connection = new($"Data Source={Path.Combine(directory, table.File)};Mode=ReadOnly;Pooling=False");
+        connection.Open();
+        using SqliteCommand command = connection.CreateCommand();
+        command.CommandText = $"SELECT rowid, {string.Join(", ", table.Columns.Select(column => $"\"{column}\""))} FROM \"{table.Name}\" NOT INDEXED";
+        using SqliteDataReader reader = command.ExecuteReader();
+        while (reader.Read())
+        {
+            _rows[(table.Name, reader.GetInt64(0))] = table.Columns.Select((column, place) => (column, Value: reader.GetValue(place + 1))).ToDictionary(cell => cell.column, cell => cell.Value);
+        }
+    }
+}
