@@ -64,7 +64,7 @@ public sealed class DataVerifier
             CheckHeads(verifier);
             verifier.CheckTables(_progress);
             CheckHours(verifier);
-            if (verifier.CheckUnclaimed(OtherTables) is > 0 and long unknown)
+            if (verifier.CheckUnclaimed(OtherTables, NameOf) is > 0 and long unknown)
             {
                 _notes.Add(FormattableString.Invariant($"{unknown} entries tell of kinds of record that this version does not know; those records were not checked."));
             }
@@ -77,6 +77,9 @@ public sealed class DataVerifier
         _notes.Add("Readings of hours that are not sealed yet are not covered.");
         return (new VerifyReport(_findings, heads, _examined, _readings, _notes), []);
     }
+
+    private string NameOf(int place, string subject) =>
+        _hours.TryGetValue(place, out HourFacts facts) ? HourCheck.NameOf(subject, facts.Seal) : subject;
 
     private void TakeEntry(int place, ReadOnlySpan<byte> subject, ReadOnlySpan<byte> content)
     {

@@ -26,6 +26,9 @@ internal sealed class HourCheck(SealedFile file, TrailFacts facts, IReadOnlyDict
     /// <summary>Readings that were decoded.</summary>
     public long Readings { get; private set; }
 
+    /// <summary>What a part is called in findings: its subject in the trail and its seal, the number of its row.</summary>
+    public static string NameOf(string subject, long seal) => FormattableString.Invariant($"{subject} (seal {seal})").TrimStart();
+
     /// <summary>Checks them all.</summary>
     public void Run(Action<long> progress)
     {
@@ -37,7 +40,7 @@ internal sealed class HourCheck(SealedFile file, TrailFacts facts, IReadOnlyDict
         Report("summary", damage);
         foreach (long id in odd)
         {
-            Add(TrailCodes.BlockAltered, "block", FormattableString.Invariant($"{id}"), null, "The row holds a value of another kind than it was written with.");
+            Add(TrailCodes.BlockAltered, "block", NameOf(string.Empty, id), null, "The row holds a value of another kind than it was written with.");
         }
 
         long last = told.Values.Select(one => one.Seal).DefaultIfEmpty(0).Max();
@@ -49,7 +52,7 @@ internal sealed class HourCheck(SealedFile file, TrailFacts facts, IReadOnlyDict
 
         foreach (long orphan in summaries)
         {
-            Add(TrailCodes.SummaryDiffers, "summary", FormattableString.Invariant($"{orphan}"), null, "There is no sealed part that the summary belongs to.");
+            Add(TrailCodes.SummaryDiffers, "summary", NameOf(string.Empty, orphan), null, "There is no sealed part that the summary belongs to.");
         }
 
         ReportSources(sources);
@@ -63,7 +66,7 @@ internal sealed class HourCheck(SealedFile file, TrailFacts facts, IReadOnlyDict
         // What stands inside the sealed bytes is what their digest proves; the columns only say it again.
         SourceKey source = block?.Header.Source ?? named ?? default;
         string subject = HourNote.Subject(source, new Instant(block?.Header.Hour ?? part.Hour), block?.Header.Part ?? unchecked((int)part.Part));
-        string where = FormattableString.Invariant($"{subject} (seal {part.Id})");
+        string where = NameOf(subject, part.Id);
         byte[] digest = SHA256.HashData(data ?? []);
         int place = facts.Find(Encoding.UTF8.GetBytes(source.Site ?? string.Empty), Encoding.UTF8.GetBytes(subject));
         if (block is not null)

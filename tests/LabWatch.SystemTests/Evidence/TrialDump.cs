@@ -30,22 +30,33 @@ internal sealed class TrialDump
         return dump;
     }
 
-    /// <summary>Rows that differ, are gone or are new in a later dump: table and names of the row before and after.</summary>
+    /// <summary>
+    /// Rows that differ, are gone or are new in a later dump: table and names of the row before and after. Under which number the engine keeps
+    /// a row is no content.
+    /// </summary>
     public IReadOnlyList<(TrialTable Table, string? Before, string? After)> Differences(TrialDump later)
     {
-        List<(TrialTable, string?, string?)> differences = [];
+        List<((string Table, long Row) Key, Dictionary<string, object>? Before, Dictionary<string, object>? After)> found = [];
         foreach ((string Table, long Row) key in _rows.Keys.Union(later._rows.Keys))
         {
             Dictionary<string, object>? before = _rows.GetValueOrDefault(key);
             Dictionary<string, object>? after = later._rows.GetValueOrDefault(key);
             if (before is null || after is null || !Same(before, after))
             {
-                TrialTable table = TrialTable.All.Single(one => one.Name == key.Table);
-                differences.Add((table, before is null ? null : table.IdOf(before), after is null ? null : table.IdOf(after)));
+                found.Add((key, before, after));
             }
         }
 
-        return differences;
+        found.RemoveAll(one => one is { Before: { } gone, After: null } && found.Exists(other => other.Key.Table == one.Key.Table && other.After is { } moved && Same(gone, moved)));
+        found.RemoveAll(one => one is { Before: null, After: { } came } && _rows.Any(other => other.Key.Table == one.Key.Table && Same(other.Value, came) && !later._rows.ContainsKey(other.Key)));
+        return
+        [
+            .. found.Select(one =>
+            {
+                TrialTable table = TrialTable.All.Single(candidate => candidate.Name == one.Key.Table);
+                return (table, one.Before is { } before ? table.IdOf(before) : null, one.After is { } after ? table.IdOf(after) : null);
+            }),
+        ];
     }
 
     private static bool Same(Dictionary<string, object> before, Dictionary<string, object> after) => before.All(column => (column.Value, after[column.Key]) switch

@@ -20,7 +20,7 @@ internal sealed record TrialTable(string File, string Name, string[] Columns, st
         string id = Subject;
         foreach ((string column, object value) in row)
         {
-            string text = value is string word && Guid.TryParse(word, out Guid uuid) ? uuid.ToString("D") : Convert.ToString(value, System.Globalization.CultureInfo.InvariantCulture)!;
+            string text = value is string word && Guid.TryParseExact(word, "D", out Guid uuid) ? uuid.ToString("D") : Convert.ToString(value, System.Globalization.CultureInfo.InvariantCulture)!;
             id = id.Replace("{" + column + "}", text, StringComparison.Ordinal);
         }
 
@@ -46,7 +46,7 @@ internal sealed record TrialTable(string File, string Name, string[] Columns, st
     private static IEnumerable<TrialTable> Readings() =>
     [
         new("readings.db", "block", ["id", "source_id", "hour", "part", "readings", "last_change", "sealed_at", "digest", "data"], "(seal {id})"),
-        new("readings.db", "summary", ["block_id", "data"], "{block_id}"),
+        new("readings.db", "summary", ["block_id", "data"], "(seal {block_id})"),
         new("readings.db", "source", ["id", "site", "source"], "{id}"),
     ];
 }

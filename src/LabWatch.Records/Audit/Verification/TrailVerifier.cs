@@ -82,5 +82,8 @@ internal sealed class TrailVerifier(RecordsSnapshot records, TrailFindings findi
     }
 
     /// <summary>Reports entries without their record. Gives the number of those whose kind of record this program does not know.</summary>
-    public long CheckUnclaimed(IReadOnlyDictionary<string, string> otherTables) => new UnclaimedCheck(records, Facts, findings).Run(otherTables);
+    /// <param name="otherTables">Tables outside the records, by what their subjects begin with.</param>
+    /// <param name="nameOf">Name of a record for a reader, from the place of its entry and its subject.</param>
+    public long CheckUnclaimed(IReadOnlyDictionary<string, string> otherTables, Func<int, string, string> nameOf) =>
+        new UnclaimedCheck(records, Facts, findings).Run(otherTables, nameOf);
 }

@@ -11,11 +11,13 @@ internal sealed class UnclaimedCheck(RecordsSnapshot records, TrailFacts facts, 
 
     /// <summary>Reports entries without their record. Gives the number of entries whose kind of record this program does not know.</summary>
     /// <param name="otherTables">Tables outside the records, by what their subjects begin with.</param>
-    public long Run(IReadOnlyDictionary<string, string> otherTables)
+    /// <param name="nameOf">Name of a record for a reader, from the place of its entry and its subject.</param>
+    public long Run(IReadOnlyDictionary<string, string> otherTables, Func<int, string, string> nameOf)
     {
         long unknown = 0;
-        foreach (ref EntryFacts entry in facts.Entries)
+        for (int place = 0; place < facts.Entries.Length; place++)
         {
+            EntryFacts entry = facts.Entries[place];
             if (!entry.HasRecord || entry.IsClaimed)
             {
                 continue;
@@ -31,7 +33,7 @@ internal sealed class UnclaimedCheck(RecordsSnapshot records, TrailFacts facts, 
             if (TableOf(subject, otherTables) is { } table)
             {
                 findings.Add(new TrailFinding(
-                    TrailCodes.RowMissing, table, subject, null, FormattableString.Invariant($"Entry {entry.Sequence} tells of the record, and it is not there."), Gone));
+                    TrailCodes.RowMissing, table, nameOf(place, subject), null, FormattableString.Invariant($"Entry {entry.Sequence} tells of the record, and it is not there."), Gone));
             }
             else
             {
@@ -44,8 +46,10 @@ internal sealed class UnclaimedCheck(RecordsSnapshot records, TrailFacts facts, 
 
     private string? TableOf(string subject, IReadOnlyDictionary<string, string> otherTables)
     {
-        CoveredTable? table = CoveredTables.All.FirstOrDefault(candidate =>
-            subject.StartsWith(candidate.Prefix, StringComparison.Ordinal) && subject.Count(letter => letter == '/') == candidate.Template.Count(letter => letter == '/'));
+        CoveredTable[] candidates = [.. CoveredTables.All.Where(candidate => subject.StartsWith(candidate.Prefix, StringComparison.Ordinal))];
+        CoveredTable? table = candidates.Length > 1
+            ? candidates.FirstOrDefault(candidate => subject.Count(letter => letter == '/') == candidate.Template.Count(letter => letter == '/'))
+            : candidates.FirstOrDefault();
         return table is not null ? CoveredColumns.TableName(records.Model, table)
             : otherTables.FirstOrDefault(other => subject.StartsWith(other.Key, StringComparison.Ordinal)).Value;
     }
