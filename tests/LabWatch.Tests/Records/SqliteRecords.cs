@@ -39,6 +39,8 @@ internal sealed class SqliteRecords : IRecordsUnderTest
 
     public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
 
+    public IPositionLedger Positions => _services.GetRequiredService<IPositionLedger>();
+
     public IAuditLedger Audit => _services.GetRequiredService<IAuditLedger>();
 
     /// <summary>Empty records, from a copy of a migrated file.</summary>
