@@ -46,7 +46,7 @@ public sealed class PlannerServiceTests
         Assert.Equal(count, services.AddLabWatchAssessments(new AssessmentsOptions()).Count);
         await using (ServiceProvider provider = services.BuildServiceProvider())
         {
-            Assert.Equal(4, provider.GetServices<IHostedService>().Count());
+            Assert.Equal(5, provider.GetServices<IHostedService>().Count());
             Assert.Same(PlannerStatus.None, provider.GetRequiredService<IPlannerState>().Current);
             string[] codes = [.. provider.GetServices<ICriterion>().Select(criterion => criterion.Code)];
             Assert.Contains("stability", codes);
