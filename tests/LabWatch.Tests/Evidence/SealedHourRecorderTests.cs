@@ -1,6 +1,4 @@
 using LabWatch.Evidence.Recording;
-using LabWatch.Lab.Identity;
-using LabWatch.Lab.Time;
 using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Records.Audit;
