@@ -22,11 +22,24 @@ public sealed class ProfileEndpointTests
 
         double part = (1 - Math.Sqrt(1 - (10.0 / 30 * (10.0 / 30)))) / 2;
         Assert.Equal(0.95 / (0.95 + (0.05 * part)), band.GetProperty("isothermalEffectiveEmissivity").GetProperty("value").GetDouble(), 2e-5);
-        foreach (string name in (string[])["effectiveEmissivity", "isothermalEffectiveEmissivity", "offsetMillikelvin"])
+        foreach (string name in (string[])["effectiveEmissivity", "isothermalEffectiveEmissivity", "radianceTemperature", "offsetMillikelvin"])
         {
             Assert.True(band.GetProperty(name).GetProperty("expandedUncertainty").GetDouble() > 0, name);
             Assert.InRange(band.GetProperty(name).GetProperty("coverageFactor").GetDouble(), 1.9, 14);
         }
+    }
+
+    [Fact]
+    public async Task The_uncertainty_of_the_radiance_temperature_holds_that_of_the_reference()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+        host.Rooms.Store.Add(SampleLab.Hazel, new Reading("well-a", host.Now, OhmAt37));
+        host.Rooms.Store.Add(SampleLab.Hazel, new Reading("well-b", host.Now, OhmAt37));
+
+        JsonElement profile = (await host.GetAsync("/api/v1/sources/hollin-vale.hazel/profile")).Json;
+
+        double reference = profile.GetProperty("reference").GetProperty("expandedUncertaintyKelvin").GetDouble();
+        Assert.True(profile.GetProperty("bands")[0].GetProperty("radianceTemperature").GetProperty("expandedUncertainty").GetDouble() >= reference * 0.99);
     }
 
     [Fact]

@@ -68,6 +68,7 @@ internal static class ProfileViews
             Expanded(radiance.EffectiveEmissivity),
             Expanded(radiance.Isothermal),
             radiance.RadianceCelsius.Value,
+            Expanded(radiance.RadianceCelsius),
             Expanded(new(offset.Value * 1000, offset.StandardUncertainty * 1000, offset.DegreesOfFreedom)),
             radiance.Evidence.Surroundings.RadianceCelsius.Value,
             band.Comparators.Count > 0 ? Comparator(band.Comparators[0]) : null,

@@ -10,6 +10,7 @@ internal sealed record BandProfileView(
     [property: Description("Effective emissivity for the reference temperature, with the profile.")] EstimateView EffectiveEmissivity,
     [property: Description("Effective emissivity without temperature differences.")] EstimateView IsothermalEffectiveEmissivity,
     [property: Description("Radiance temperature with the surroundings, degree Celsius.")] double RadianceTemperatureCelsius,
+    [property: Description("The same with its uncertainty, that of the reference included, degree Celsius and kelvin.")] EstimateView RadianceTemperature,
     [property: Description("Radiance temperature minus reference temperature, millikelvin.")] EstimateView OffsetMillikelvin,
     [property: Description("Radiance temperature of the surroundings, degree Celsius.")] double SurroundingsCelsius,
     [property: Description("What the comparator of the band shows; null where there is none.")] ComparatorProfileView? Comparator,
