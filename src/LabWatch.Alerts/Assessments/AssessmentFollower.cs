@@ -3,6 +3,7 @@ using LabWatch.Alerts.Journal;
 using LabWatch.Alerts.LifeCycle;
 using LabWatch.Alerts.Messages;
 using LabWatch.Lab;
+using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Time;
@@ -17,7 +18,7 @@ namespace LabWatch.Alerts.Assessments;
 /// alerts, so that a crash repeats nothing; the position also goes into the ledger, for the day the journal is lost.
 /// </summary>
 internal sealed class AssessmentFollower(
-    IAssessmentLedger assessments, IAlertLedger ledger, ILabSnapshotSource lab, DeskQueue desk, AlertsOptions options, TimeProvider clock, ILogger<AssessmentFollower> logger)
+    IAssessmentLedger assessments, IAlertLedger ledger, ILabSnapshotSource lab, DeskQueue desk, AlertDesk alerts, AlertsOptions options, TimeProvider clock, ILogger<AssessmentFollower> logger)
 {
     /// <summary>Name under which the ledger keeps the position.</summary>
     public const string Reader = "alerts";
@@ -76,6 +77,7 @@ internal sealed class AssessmentFollower(
         }
 
         await RecordPositionAsync(both.Token);
+        EndWhatIsNotJudged();
 
         IReadOnlyList<(long Sequence, Assessment Assessment)> batch = await assessments.QueuedAsync(_position, BatchSize, both.Token);
         if (batch.Count == 0)
@@ -103,11 +105,29 @@ internal sealed class AssessmentFollower(
             changed.Add(window);
             if (AssessmentVerdict.Present(assessment, now, options.OldestAssessmentWindows) is { } present)
             {
-                found.Add(texts.Describe(assessment, snapshot.FindSource(assessment.Source)?.Name ?? assessment.Source.Source, present, now));
+                AlertCondition condition = texts.Describe(assessment, snapshot.FindSource(assessment.Source), present, now);
+                if (!present || Judged.WhyNot(snapshot, condition.Key, now) is null)
+                {
+                    found.Add(condition);
+                }
             }
         }
 
         desk.Post(new DeskWork.Follow(found, new FollowedPosition(_position, changed)));
+    }
+
+    private void EndWhatIsNotJudged()
+    {
+        Instant now = Instant.Now(clock);
+        LabSnapshot snapshot = lab.Current;
+        ToleranceTexts texts = new(new SiteTime(snapshot.Site));
+        foreach (Alert alert in alerts.View.Open.Where(alert => !alert.IsHazard && alert.ReturnedAt is null))
+        {
+            if (Judged.WhyNot(snapshot, AlertKey.Of(alert), now) is { } why)
+            {
+                desk.Post(new DeskWork.Condition(texts.NotJudged(alert, snapshot.FindSource(alert.Source), why, now)));
+            }
+        }
     }
 
     // Made up for at the next look where a call before it failed.

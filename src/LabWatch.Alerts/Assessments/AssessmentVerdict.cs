@@ -1,6 +1,7 @@
 using LabWatch.Alerts.Journal;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Assessments;
+using LabWatch.Lab.Limits;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Uncertainty;
 
@@ -10,10 +11,11 @@ namespace LabWatch.Alerts.Assessments;
 /// The rules by which assessments raise and end alerts.
 /// <list type="bullet">
 /// <item>Only the newest decided window of a (source, criterion, scope) counts, in its highest revision; what is older changes nothing.</item>
-/// <item>Fail raises at medium priority, conditional fail at low; a fail after a conditional fail raises again.</item>
+/// <item>Fail raises at medium priority, conditional fail and any fail of data-health at low; a fail after a conditional fail raises again.</item>
 /// <item>Both only while the window's end lies back by no more than a set number of window lengths: history raises nothing.</item>
 /// <item>Pass returns, however old: it is the newest that is known. Conditional pass neither raises nor returns: the guard band is the dead-band.</item>
 /// <item>Not decided changes nothing and does not count as newest.</item>
+/// <item>What is judged no more (source, scope or limit is gone) raises nothing, and its alert returns; see <see cref="Judged"/>.</item>
 /// </list>
 /// </summary>
 internal static class AssessmentVerdict
@@ -47,6 +49,12 @@ internal static class AssessmentVerdict
         _ => null,
     };
 
-    /// <summary>How soon to act.</summary>
-    public static AlertPriority Priority(Decision decision) => decision == Decision.ConditionalFail ? AlertPriority.Low : AlertPriority.Medium;
+    /// <summary>
+    /// How soon to act: what makes calibrations wrong at once goes before what may, and before data that are missing or bad, about which the criteria
+    /// that rest on them say more.
+    /// </summary>
+    public static AlertPriority Priority(Assessment assessment) =>
+        assessment.Decision is Decision.ConditionalFail || string.Equals(assessment.Criterion, CriterionCode.DataHealth, StringComparison.Ordinal)
+            ? AlertPriority.Low
+            : AlertPriority.Medium;
 }

@@ -96,6 +96,36 @@ internal static class AlertTexts
 
     public static string ToleranceReturnedDo => Text();
 
+    public static string MeasuredStability => Text();
+
+    public static string MeasuredAxialUniformity => Text();
+
+    public static string MeasuredEffectiveEmissivity => Text();
+
+    public static string MeasuredDataHealth => Text();
+
+    public static string DoStability => Text();
+
+    public static string DoAxialUniformity => Text();
+
+    public static string DoEffectiveEmissivity => Text();
+
+    public static string DoDataHealth => Text();
+
+    public static string ToleranceHot => Text();
+
+    public static string NotJudgedHeadline => Text();
+
+    public static string NotJudgedWhat => Text();
+
+    public static string NotJudgedDo => Text();
+
+    public static string NotJudgedNoSource => Text();
+
+    public static string NotJudgedNoScope => Text();
+
+    public static string NotJudgedNoLimit => Text();
+
     public static string DecisionFail => Text();
 
     public static string DecisionConditionalFail => Text();

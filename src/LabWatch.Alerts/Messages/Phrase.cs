@@ -42,6 +42,11 @@ internal static class Phrase
         _ => Fill("{0:0} days", Math.Floor(duration.TotalDays)),
     };
 
-    /// <summary>A unit the way people read it: degC for the SenML name Cel.</summary>
-    public static string Unit(string unit) => string.Equals(unit, "Cel", StringComparison.Ordinal) ? "degC" : unit;
+    /// <summary>A value with its unit the way people read it: degC for the SenML name Cel, nothing for / and 1.</summary>
+    public static string Quantity(double value, string unit) => unit switch
+    {
+        "/" or "1" or "" => Number(value),
+        "Cel" => Number(value) + " degC",
+        _ => $"{Number(value)} {unit}",
+    };
 }

@@ -36,7 +36,7 @@ internal static class MessageFactory
         string id = IdOf(alert.Id, step.Sequence, notifier);
         MessageBody body = new(
             id, alert.Id, step.Sequence, step.Event, step.At, alert.Source, alert.Code, alert.Subject, Word(alert.Priority.ToString()), Word(alert.State.ToString()), headline, detail,
-            alert.IsHazard ? AlertTexts.Caution : string.Empty, alert.RaisedAt, alert.ReturnedAt, alert.AcknowledgedAt, alert.AcknowledgedBy,
+            alert.IsHazard || detail.Contains(AlertTexts.Caution, StringComparison.Ordinal) ? AlertTexts.Caution : string.Empty, alert.RaisedAt, alert.ReturnedAt, alert.AcknowledgedAt, alert.AcknowledgedBy,
             alert.Value, alert.Limit, alert.Unit);
         string json = JsonSerializer.Serialize(body, MessageJson.Default.MessageBody);
         return new OutboxMessage(id, alert.Id, notifier, json, step.At, step.At, 0, null, null, null);

@@ -1,6 +1,8 @@
+using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Limits;
+using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Uncertainty;
 
@@ -88,6 +90,61 @@ public sealed class AssessmentFollowerTests : IDisposable
     }
 
     [Fact]
+    public async Task Bad_data_raise_at_low_priority()
+    {
+        await using AlertsHost host = await StartAsync(lab: Lab(TestSite.Limit(TestSite.Rowan, CriterionCode.DataHealth, "%")));
+        host.Assessments.Add(Window(0, Decision.Fail) with { Criterion = CriterionCode.DataHealth, Scope = string.Empty, Unit = "%" });
+        await host.UntilAsync(() => host.Board.View().Open.Count == 1, "the alert", Step);
+        Assert.Equal(AlertPriority.Low, host.Board.View().Open[0].Priority);
+        await host.StopAsync();
+    }
+
+    [Fact]
+    public async Task Each_scope_has_an_alert_of_its_own()
+    {
+        AcceptanceLimit limit = TestSite.Limit(TestSite.Rowan, CriterionCode.EffectiveEmissivity, "/");
+        await using AlertsHost host = await StartAsync(lab: Lab(limit));
+        host.Assessments.Add(InBand("lw", Decision.Fail), InBand("mw", Decision.Fail));
+        await host.UntilAsync(() => host.Board.View().Open.Count == 2, "both alerts", Step);
+        host.Assessments.Add(InBand("lw", Decision.Pass, revision: 2), InBand("mw", Decision.NotDecided, revision: 2));
+        await FollowedAsync(host, 4);
+        Assert.Equal(AlertState.ReturnedUnacknowledged, host.Board.View().Open.Single(alert => alert.Subject == "lw").State);
+        Assert.Equal(AlertState.RaisedUnacknowledged, host.Board.View().Open.Single(alert => alert.Subject == "mw").State);
+        await host.StopAsync();
+    }
+
+    [Theory]
+    [InlineData("source")]
+    [InlineData("band")]
+    [InlineData("limit withdrawn")]
+    [InlineData("limit removed")]
+    public async Task What_is_not_judged_any_more_leaves_no_alert_standing(string gone)
+    {
+        AcceptanceLimit limit = TestSite.Limit(TestSite.Rowan, CriterionCode.EffectiveEmissivity, "/", "lw");
+        await using AlertsHost host = await StartAsync(lab: Lab(limit));
+        host.Assessments.Add(InBand("lw", Decision.Fail));
+        await host.UntilAsync(() => host.Board.View().Open.Count == 1, "the alert", Step);
+        host.Lab.Replace(Lab(limit with { MinimumCelsius = 400 }));
+        int looks = 0;
+        await host.UntilAsync(() => ++looks > 20, "a look at a limit for another set point", Step);
+        Assert.Equal(AlertState.RaisedUnacknowledged, host.Board.View().Open[0].State);
+        host.Lab.Replace(gone switch
+        {
+            "source" => TestSite.Lab(),
+            "band" => Lab([limit], "mw"),
+            "limit withdrawn" => Lab(limit with { WithdrawnFrom = TestSite.Start - TimeSpan.FromHours(1) }),
+            _ => Lab(),
+        });
+        await host.UntilAsync(() => host.Board.View().Open[0].State == AlertState.ReturnedUnacknowledged, "the end of the condition", Step);
+        await host.UntilAsync(
+            () => host.Receiver.Received.Any(request => System.Text.Encoding.UTF8.GetString(request.Body).Contains("is not judged any more", StringComparison.Ordinal)), "the message", Step);
+        host.Assessments.Add(InBand("lw", Decision.Fail, revision: 2));
+        await FollowedAsync(host, 2);
+        Assert.Equal(AlertState.ReturnedUnacknowledged, host.Board.View().Open[0].State);
+        await host.StopAsync();
+    }
+
+    [Fact]
     public async Task A_restart_repeats_nothing()
     {
         MemoryAssessmentLedger assessments = new();
@@ -113,15 +170,28 @@ public sealed class AssessmentFollowerTests : IDisposable
 
     public void Dispose() => Directory.Delete(_folder, recursive: true);
 
-    private async Task<AlertsHost> StartAsync(MemoryAssessmentLedger? assessments = null)
+    private async Task<AlertsHost> StartAsync(MemoryAssessmentLedger? assessments = null, LabSnapshot? lab = null)
     {
-        AlertsHost host = new(_folder, _clock, _ledger, assessments: assessments);
+        AlertsHost host = new(_folder, _clock, _ledger, lab, assessments: assessments);
         await host.StartAsync();
         return host;
     }
 
     private async Task FollowedAsync(AlertsHost host, long sequence) => await host.UntilAsync(
         () => _ledger.PositionAsync("alerts", CancellationToken.None).AsTask().GetAwaiter().GetResult() == sequence, $"assessment {sequence}", Step);
+
+    private static LabSnapshot Lab(params AcceptanceLimit[] limits) => Lab(limits, "lw", "mw");
+
+    private static LabSnapshot Lab(AcceptanceLimit[] limits, params string[] bands)
+    {
+        LabSnapshot plain = AlertsHost.WithHook();
+        return new(
+            plain.Site, [plain.Sources[0] with { Bands = [.. bands.Select(band => new WorkingBand(band, $"Band {band}", 8, 14))] }],
+            plain.Instruments, plain.Installations, plain.Certificates, limits, plain.Notifiers);
+    }
+
+    private static Assessment InBand(string band, Decision decision, int revision = 1) =>
+        Window(0, decision, revision) with { Criterion = CriterionCode.EffectiveEmissivity, Scope = band, Unit = "/" };
 
     /// <summary>The half-hour window that ends so many windows from the start of the test (0: just then).</summary>
     private static Assessment Window(int end, Decision decision, int revision = 1)

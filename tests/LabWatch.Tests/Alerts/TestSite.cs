@@ -2,9 +2,11 @@ using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Instruments;
+using LabWatch.Lab.Limits;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Hazards;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Tests.Alerts;
 
@@ -39,7 +41,10 @@ internal static class TestSite
 
     public static LabSnapshot Lab(
         IReadOnlyList<Notifier> notifiers, IReadOnlyList<Installation> installations, IReadOnlyList<Certificate> certificates, params ReferenceSource[] sources) =>
-        new(new LabSite(Site, "Hollin Vale", "UTC"), sources, [], installations, certificates, [], notifiers);
+        new(new LabSite(Site, "Hollin Vale", "UTC"), sources, [], installations, certificates, [.. sources.Select(source => Limit(source.Key, CriterionCode.Stability, "K"))], notifiers);
+
+    public static AcceptanceLimit Limit(SourceKey source, string criterion, string unit, string? band = null) =>
+        new($"{source.Source}-{criterion}", 1, source, criterion, 0.2, unit, DecisionRule.SimpleAcceptance, Start - TimeSpan.FromDays(100)) { Band = band };
 
     public static LabSnapshot OneSurface(SurfaceContact? contact = null) => Lab(Source(Rowan, Surface(Rowan, contact: contact), Well(Rowan)));
 }
