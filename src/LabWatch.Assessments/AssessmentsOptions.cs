@@ -45,7 +45,7 @@ public sealed record AssessmentsOptions
         Check(findings, nameof(WakeInterval), WakeInterval, TimeSpan.FromSeconds(1), TimeSpan.FromMinutes(10));
         Check(findings, nameof(HourQuiet), HourQuiet, TimeSpan.FromSeconds(1), TimeSpan.FromHours(1));
         Check(findings, nameof(Stability), Stability, leastLeadIn: TimeSpan.FromMinutes(1));
-        Check(findings, nameof(DataHealth), DataHealth, leastLeadIn: TimeSpan.Zero);
+        Check(findings, nameof(DataHealth), DataHealth, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(AxialUniformity), AxialUniformity, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(EffectiveEmissivity), EffectiveEmissivity, leastLeadIn: TimeSpan.FromMinutes(1));
         if (Concurrency is < 1 or > 64)

@@ -14,7 +14,7 @@ namespace LabWatch.Alerts.Messages;
 internal sealed class ToleranceTexts(SiteTime time)
 {
     private const int NameLength = 40;
-    private const int ScopeLength = 32;
+    private const int ScopeLength = 24;
 
     /// <summary>From this temperature on a source is called hot: the burn threshold for an unknown material and any contact time (ISO 13732-1), degree Celsius.</summary>
     private const double HotCelsius = 43;

@@ -17,6 +17,7 @@ namespace LabWatch.Assessments.Criteria;
 /// <para><b>Bad</b> is a reading without a value, outside the range of the sensor (a radiation thermometer that shows that it is out of range
 /// excepted), with a device time ahead of the clock, a spike (more than 6 standard deviations from the median of eleven neighbours), or stuck
 /// (see <see cref="StuckValue"/>).</para>
+/// <para>Of a source that was silent altogether in the lead-in the promise counts from its first reading: it has been put into service, or has come back.</para>
 /// <para><b>Not in the value.</b> Lateness is told only by the mark that the intake sets, because no time of arrival is stored: a late reading is as good as
 /// another. A second value for the same time is refused before it is stored and lies in the quarantine, which a criterion does not see.
 /// A window without any reading is not assessed at all; readiness and the hazard of silence tell of it.</para>

@@ -130,7 +130,7 @@ public sealed class AssessmentFollowerTests : IDisposable
         Assert.Equal(AlertState.RaisedUnacknowledged, host.Board.View().Open[0].State);
         host.Lab.Replace(gone switch
         {
-            "source" => TestSite.Lab(),
+            "source" => TestSite.Lab(AlertsHost.WithHook().Notifiers, [], []),
             "band" => Lab([limit], "mw"),
             "limit withdrawn" => Lab(limit with { WithdrawnFrom = TestSite.Start - TimeSpan.FromHours(1) }),
             _ => Lab(),

@@ -60,6 +60,14 @@ public sealed class DataHealthCriterionTests
     }
 
     [Fact]
+    public void A_source_that_was_silent_before_promises_from_its_first_reading_on()
+    {
+        CriterionResult result = Judge(Healthy().Where(reading => Minute(reading) >= 24 && (reading.Channel != TestLab.Well || Minute(reading) != 30)));
+        Assert.Equal(100 * 6 / 216.0, result.Value.Value, 1e-9);
+        Assert.StartsWith("Of the readings that well-1 promises in the 36 min since the source was first heard at 2026-12-01 12:24 UTC, 2.8 % are missing or bad", result.Explanation, StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void A_channel_that_is_silent_all_the_hour_has_lost_everything()
     {
         CriterionResult result = Judge(Healthy().Where(reading => reading.Channel != TestLab.SetPoint || reading.Time < TestLab.Noon));

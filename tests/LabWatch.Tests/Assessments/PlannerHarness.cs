@@ -1,6 +1,7 @@
 using LabWatch.Assessments;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Assessments.Planning;
+using LabWatch.Lab;
 using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
@@ -14,15 +15,19 @@ internal sealed class PlannerHarness : IAsyncDisposable
 {
     private readonly SqliteRecords _records;
     private readonly List<Planner> _planners = [];
+    private readonly IReadOnlyList<ICriterion> _criteria;
 
-    private PlannerHarness(SqliteRecords records)
+    private PlannerHarness(SqliteRecords records, LabSnapshot? lab, IReadOnlyList<ICriterion>? criteria)
     {
         _records = records;
+        _criteria = criteria ?? [new StabilityCriterion(StabilityCriterion.DefaultSchedule)];
+        Snapshots = new FakeSnapshots(lab ?? TestLab.Snapshot());
         Ledger = new FaultyLedger(_records.Assessments, _records.Alerts);
         Restart();
     }
 
-    public static async Task<PlannerHarness> NewAsync() => new(await SqliteRecords.CopyAsync());
+    public static async Task<PlannerHarness> NewAsync(LabSnapshot? lab = null, IReadOnlyList<ICriterion>? criteria = null) =>
+        new(await SqliteRecords.CopyAsync(), lab, criteria);
 
     public static Instant Start { get; } = TestLab.Noon + TimeSpan.FromHours(1);
 
@@ -30,7 +35,7 @@ internal sealed class PlannerHarness : IAsyncDisposable
 
     public FakeReadingStore Store { get; } = new();
 
-    public FakeSnapshots Snapshots { get; } = new(TestLab.Snapshot());
+    public FakeSnapshots Snapshots { get; }
 
     public FaultyLedger Ledger { get; private set; }
 
@@ -47,7 +52,7 @@ internal sealed class PlannerHarness : IAsyncDisposable
         Store.Before = _ => { };
         State = new PlannerState(Clock);
         Planner = new Planner(
-            Store, Ledger, Ledger, Snapshots, [new StabilityCriterion(StabilityCriterion.DefaultSchedule)], new AssessmentsOptions { ProgramVersion = "test" }, State, Clock,
+            Store, Ledger, Ledger, Snapshots, _criteria, new AssessmentsOptions { ProgramVersion = "test" }, State, Clock,
             NullLogger<Planner>.Instance);
         _planners.Add(Planner);
         return Planner;

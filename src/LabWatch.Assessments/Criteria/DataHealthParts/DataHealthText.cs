@@ -20,7 +20,8 @@ internal static class DataHealthText
 
     private static string Worst(DataHealthEvidence evidence, ChannelHealth worst)
     {
-        string span = $"the {Quantities.Duration(evidence.Window.Duration)}";
+        string span = $"the {Quantities.Duration(evidence.Window.Duration)}"
+            + (evidence.CountsFrom is { } from ? $" since the source was first heard at {Moments.Text(from)}" : string.Empty);
         return worst.LostPercent > 0
             ? $"Of the readings that {worst.Channel.Id} promises in {span}, {Percent(worst)} are missing or bad: {What(worst)}"
             : $"All channels that results or hazards rest on sent everything that they promise in {span}, and nothing in it is bad";
