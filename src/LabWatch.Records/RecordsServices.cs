@@ -4,6 +4,7 @@ using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
 using LabWatch.Records.Revisions;
+using LabWatch.Records.Runs;
 using LabWatch.Records.Storage;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.DependencyInjection.Extensions;
@@ -42,6 +43,7 @@ public static class RecordsServices
         services.TryAddSingleton<IAlertLedger, AlertLedger>();
         services.TryAddSingleton<ILabImportLedger, LabImportLedger>();
         services.TryAddSingleton<ILabRecords, LabRecords>();
+        services.TryAddSingleton<IRunLedger, RunLedger>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, RecordsStartup>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, TrailHeadKeeper>());
         return services;
