@@ -12,6 +12,9 @@ internal static partial class ApiLog
     [LoggerMessage(7502, LogLevel.Warning, "A part that the service depends on does not answer: {Part}.")]
     public static partial void PartFailed(ILogger logger, Exception failure, string part);
 
+    [LoggerMessage(7504, LogLevel.Error, "A revision is on record but not in force: {Finding}")]
+    public static partial void NotInForce(ILogger logger, Lab.Findings.Finding finding);
+
     [LoggerMessage(7503, LogLevel.Information, "The pages are not built: {Folder} has no index.html.")]
     public static partial void PagesMissing(ILogger logger, string folder);
 }

@@ -2,10 +2,12 @@ using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Alerts;
 using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Audit;
+using LabWatch.Service.Api.Configured;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
 using LabWatch.Service.Api.Requests;
+using LabWatch.Service.Api.Runs;
 using LabWatch.Service.Api.Sources;
 using LabWatch.Service.Api.Streaming;
 using LabWatch.Simulator;
@@ -31,6 +33,8 @@ internal static class ApiMapping
         AssessmentEndpoints.Map(api);
         AlertEndpoints.Map(api);
         AuditEndpoints.Map(api);
+        RunEndpoints.Map(api);
+        ConfiguredEndpoints.Map(api);
         StreamEndpoints.Map(api);
         if (app.Services.GetService<ILabSimulation>() is not null)
         {

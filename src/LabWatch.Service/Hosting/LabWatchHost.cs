@@ -6,6 +6,8 @@ using LabWatch.Lab;
 using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Service.Api;
+using LabWatch.Service.Api.Health;
+using Microsoft.Extensions.DependencyInjection.Extensions;
 
 namespace LabWatch.Service.Hosting;
 
@@ -55,6 +57,7 @@ internal static class LabWatchHost
         services.AddHostedService(provider => provider.GetRequiredService<LabKeeper>());
         services.AddHostedService<StartRecorder>();
         services.AddLabWatchEvidence();
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, LabCheck>());
         services.AddLabWatchApi();
         services.AddLabWatchIntake(start.Settings.Intake);
         services.AddLabWatchAssessments(start.Settings.Assessments);

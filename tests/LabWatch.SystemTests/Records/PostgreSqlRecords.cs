@@ -4,6 +4,7 @@ using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
 using LabWatch.Records.Revisions;
+using LabWatch.Records.Runs;
 using LabWatch.Tests.Records.Contract;
 using Microsoft.Extensions.DependencyInjection;
 
@@ -21,6 +22,8 @@ internal sealed class PostgreSqlRecords(string connectionString) : IRecordsUnder
     public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
 
     public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
+
+    public IRunLedger Runs => _services.GetRequiredService<IRunLedger>();
 
     public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
 

@@ -11,5 +11,8 @@ internal sealed record Answer(HttpStatusCode Status, string Text, string MediaTy
     /// <summary>Codes of the findings of a refusal, in order.</summary>
     public string[] FindingCodes => [.. Json.GetProperty("findings").EnumerateArray().Select(finding => finding.GetProperty("code").GetString()!)];
 
+    /// <summary>A text member of the answer.</summary>
+    public string? Member(string name) => Json.GetProperty(name).GetString();
+
     private static bool MediaTypeIsJson(string type) => type.EndsWith("json", StringComparison.Ordinal);
 }

@@ -4,6 +4,7 @@ using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
 using LabWatch.Records.Revisions;
+using LabWatch.Records.Runs;
 using LabWatch.Tests.Records.Contract;
 using Microsoft.Data.Sqlite;
 using Microsoft.Extensions.DependencyInjection;
@@ -36,6 +37,8 @@ internal sealed class SqliteRecords : IRecordsUnderTest
     public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
 
     public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
+
+    public IRunLedger Runs => _services.GetRequiredService<IRunLedger>();
 
     public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
 

@@ -1,6 +1,7 @@
 using System.Text.Json;
 using System.Text.Json.Nodes;
 using LabWatch.Lab.Findings;
+using LabWatch.Records.Audit;
 using LabWatch.Service.Api.Requests;
 
 namespace LabWatch.Service.Api.Configured;
@@ -25,7 +26,7 @@ internal static class RevisionBody
         {
             body = await JsonNode.ParseAsync(http.Body, documentOptions: Strict, cancellationToken: cancellationToken) as JsonObject;
         }
-        catch (JsonException exception)
+        catch (Exception exception) when (exception is JsonException or ArgumentException)
         {
             checks.Add("not-json", string.Empty, "This is not JSON: " + exception.Message, null, "Correct the text at that place; a member may stand only once.");
             return (null, string.Empty, checks.Findings);
@@ -37,21 +38,26 @@ internal static class RevisionBody
             return (null, string.Empty, checks.Findings);
         }
 
-        string reason = checks.Line(ReasonMember, Text(body), LongestReason);
+        if (!HasCanonicalForm(body))
+        {
+            checks.Add("not-text", string.Empty, "A number is too large, or a \\u escape is half of a surrogate pair.", null, "Correct it.");
+            return (null, string.Empty, checks.Findings);
+        }
+
+        string reason = checks.Line(ReasonMember, body[ReasonMember] is JsonValue value && value.GetValueKind() == JsonValueKind.String ? value.GetValue<string>() : null, LongestReason);
         body.Remove(ReasonMember);
         return (checks.Findings.Count == 0 ? body : null, reason, checks.Findings);
     }
 
-    private static string? Text(JsonObject body)
+    private static bool HasCanonicalForm(JsonObject body)
     {
         try
         {
-            return body[ReasonMember] is JsonValue value && value.GetValueKind() == JsonValueKind.String ? value.GetValue<string>() : null;
+            return CanonicalJson.Write(body).Length > 0;
         }
-        catch (InvalidOperationException)
+        catch (Exception exception) when (exception is InvalidOperationException or ArgumentException or FormatException)
         {
-            // An escape such as \ud800 alone is JSON by its grammar, but no text.
-            return null;
+            return false;
         }
     }
 }

@@ -1,7 +1,6 @@
 using LabWatch.Lab;
 using LabWatch.Lab.Instruments;
 using LabWatch.Lab.LabFile;
-using LabWatch.Lab.Limits;
 using LabWatch.Lab.Time;
 using LabWatch.Records.Revisions;
 using LabWatch.Service.Api.Live;

@@ -10,7 +10,7 @@ using LabWatch.Service.Api.Views;
 namespace LabWatch.Service.Api.Live;
 
 /// <summary>Puts together what is known about a source now.</summary>
-internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments assessments, ReadinessMaker readinessMaker, TimeProvider clock)
+internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments assessments, ReadinessMaker readinessMaker, OpenRuns runs, TimeProvider clock)
 {
     /// <summary>The status of a source with the given open alerts (those of other sources are left out).</summary>
     public async ValueTask<SourceStatusView> MakeAsync(
@@ -37,7 +37,8 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
             shown.Count == 0 ? null : shown.Max(reading => reading.Time),
             shown.All(reading => reading.IsSilent),
             shown,
-            AlertViews.Sorted(lab, openAlerts.Where(alert => alert.Source == source.Key)));
+            AlertViews.Sorted(lab, openAlerts.Where(alert => alert.Source == source.Key)),
+            await runs.FindAsync(source.Key, cancellationToken).ConfigureAwait(false) is { } run ? RunViews.Of(run) : null);
     }
 
     private static NewestReadingView Show(LabSnapshot lab, Channel channel, Reading reading, Instant now) => new(

@@ -11,6 +11,10 @@ internal static class Refusals
     public static ProblemHttpResult BadRequest(IReadOnlyList<Finding> findings) =>
         Problem(StatusCodes.Status400BadRequest, "The request has mistakes.", string.Join(' ', findings.Select(finding => finding.ToString())), findings);
 
+    /// <summary>The request is understood but not done: every finding is listed.</summary>
+    public static ProblemHttpResult Refuse(int status, string title, IReadOnlyList<Finding> findings) =>
+        Problem(status, title, string.Join(' ', findings.Select(finding => finding.ToString())), findings);
+
     /// <summary>There is no such thing.</summary>
     public static ProblemHttpResult NotFound(string what, string? id, string cure) =>
         Refuse(StatusCodes.Status404NotFound, "not-found", $"There is no such {what}.", id, cure);

@@ -12,4 +12,5 @@ internal sealed record SourceStatusView(
     [property: Description("Device time of the newest reading of any channel; null before the first.")] Instant? NewestReadingAt,
     [property: Description("Whether the source as a whole has gone silent: no reading within three promised intervals, at least 10 s.")] bool IsSilent,
     [property: Description("The newest reading of each channel.")] IReadOnlyList<NewestReadingView> Newest,
-    [property: Description("Alerts of this source that are not over, hazards first.")] IReadOnlyList<AlertView> OpenAlerts);
+    [property: Description("Alerts of this source that are not over, hazards first.")] IReadOnlyList<AlertView> OpenAlerts,
+    [property: Description("The calibration run that uses it now; null where none does.")] RunView? Run);

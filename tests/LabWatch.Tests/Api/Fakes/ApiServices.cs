@@ -9,11 +9,13 @@ using LabWatch.Readings;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
+using LabWatch.Records.Runs;
 using LabWatch.Service.Api;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
 using LabWatch.Tests.Assessments.Cavities;
 using Microsoft.Extensions.DependencyInjection;
+using Microsoft.Extensions.DependencyInjection.Extensions;
 
 namespace LabWatch.Tests.Api.Fakes;
 
@@ -39,7 +41,7 @@ internal sealed class ApiServices(TimeProvider clock)
     public void AddTo(IServiceCollection services, bool isDemo)
     {
         services.AddSingleton(clock);
-        services.AddSingleton<ILabSnapshotSource>(Lab);
+        services.TryAddSingleton<ILabSnapshotSource>(Lab);
         services.AddSingleton<IReadingStore>(Store);
         services.AddSingleton<IAlertBoard>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
@@ -49,6 +51,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<ICriterion>(new StabilityCriterion(StabilityCriterion.DefaultSchedule));
         services.AddSingleton<ICavityModels>(DemoRun.Models);
         services.AddSingleton<IIntakeState>(Intake);
+        services.TryAddSingleton<IRunLedger, NoRuns>();
         if (isDemo)
         {
             services.AddSingleton<ILabSimulation>(Demo);

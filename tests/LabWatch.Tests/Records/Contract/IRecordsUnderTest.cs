@@ -3,6 +3,7 @@ using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.LabFiles;
 using LabWatch.Records.Revisions;
+using LabWatch.Records.Runs;
 
 namespace LabWatch.Tests.Records.Contract;
 
@@ -16,6 +17,8 @@ internal interface IRecordsUnderTest : IAsyncDisposable
     ILabImportLedger LabImports { get; }
 
     ILabRecords LabRecords { get; }
+
+    IRunLedger Runs { get; }
 
     IAuditLedger Audit { get; }
 }
