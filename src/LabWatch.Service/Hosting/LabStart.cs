@@ -12,9 +12,10 @@ namespace LabWatch.Service.Hosting;
 /// </summary>
 internal sealed class LabStart(string dataDirectory, RecordsOptions options, TimeProvider clock)
 {
-    private static readonly TimeSpan Patience = TimeSpan.FromSeconds(5);
-
     private readonly string _cache = LabSnapshotSource.CachePath(dataDirectory);
+
+    /// <summary>How long the records are waited for.</summary>
+    public TimeSpan Patience { get; init; } = TimeSpan.FromSeconds(5);
 
     /// <summary>The lab to begin with, or all that speaks against it.</summary>
     /// <param name="order">The lab file given; null to go on with what is in force.</param>

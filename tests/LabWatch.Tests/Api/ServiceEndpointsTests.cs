@@ -17,7 +17,12 @@ public sealed class ServiceEndpointsTests
         "get /api/v1/assessments/{id}",
         "get /api/v1/assessments/{id}/revisions",
         "get /api/v1/audit",
+        "get /api/v1/certificates",
         "get /api/v1/demo/faults",
+        "get /api/v1/instruments",
+        "get /api/v1/limits",
+        "get /api/v1/runs",
+        "get /api/v1/runs/{id}",
         "get /api/v1/sources",
         "get /api/v1/sources/{id}",
         "get /api/v1/sources/{id}/profile",
@@ -26,7 +31,12 @@ public sealed class ServiceEndpointsTests
         "get /health/live",
         "get /health/ready",
         "post /api/v1/alerts/{id}/acknowledge",
+        "post /api/v1/certificates",
         "post /api/v1/demo/faults",
+        "post /api/v1/limits",
+        "post /api/v1/runs",
+        "post /api/v1/runs/{id}/correct",
+        "post /api/v1/runs/{id}/end",
     ];
 
     [Fact]

@@ -126,6 +126,34 @@ public sealed class RecordsStartTests : IDisposable
     }
 
     [Fact]
+    public async Task A_start_does_not_wait_for_a_database_that_is_locked()
+    {
+        await using (SqliteRecords first = new(_directory))
+        {
+            await first.Assessments.LatestAsync(Token);
+        }
+
+        await using SqliteConnection other = new($"Data Source={FilePath};Pooling=False");
+        await other.OpenAsync(Token);
+        await using SqliteCommand command = other.CreateCommand();
+        command.CommandText = "PRAGMA locking_mode = EXCLUSIVE; BEGIN EXCLUSIVE;";
+        await command.ExecuteNonQueryAsync(Token);
+        await using ServiceProvider services = new ServiceCollection()
+            .AddLabWatchRecords(RecordsOptions.InDirectory(_directory) with { BusyTimeout = TimeSpan.FromMinutes(10) }).BuildServiceProvider();
+        IHostedService startup = Assert.Single(services.GetServices<IHostedService>());
+
+        // Were the start to wait for the lock, this would not return before the busy time-out of ten minutes.
+        Task started = startup.StartAsync(Token);
+        Assert.True(started.IsCompletedSuccessfully);
+
+        command.CommandText = "ROLLBACK;";
+        await command.ExecuteNonQueryAsync(Token);
+        await other.CloseAsync();
+        Assert.Equal(0, await services.GetRequiredService<IPositionLedger>().PositionAsync("any", Token));
+        await startup.StopAsync(Token);
+    }
+
+    [Fact]
     public void Registering_twice_adds_nothing()
     {
         IServiceCollection services = new ServiceCollection().AddLabWatchRecords(RecordsOptions.InDirectory(_directory));

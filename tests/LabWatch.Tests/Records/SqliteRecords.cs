@@ -20,11 +20,11 @@ internal sealed class SqliteRecords : IRecordsUnderTest
     private readonly ServiceProvider _services;
     private readonly bool _keepDirectory;
 
-    public SqliteRecords(string? directory = null)
+    public SqliteRecords(string? directory = null, int busySeconds = 1)
     {
         _keepDirectory = directory is not null;
         Directory = directory ?? System.IO.Directory.CreateTempSubdirectory("labwatch-records-").FullName;
-        Options = RecordsOptions.InDirectory(Directory) with { BusyTimeout = TimeSpan.FromSeconds(1) };
+        Options = RecordsOptions.InDirectory(Directory) with { BusyTimeout = TimeSpan.FromSeconds(busySeconds) };
         _services = new ServiceCollection().AddLabWatchRecords(Options).BuildServiceProvider();
     }
 

@@ -67,7 +67,7 @@ public sealed class LabStartTests : IDisposable
         MendDatabase();
         int changes = 0;
         lab.Changed += (_, _) => changes++;
-        await using SqliteRecords records = new(_directory);
+        await using SqliteRecords records = new(_directory, busySeconds: 10);
         keeper = Keeper(lab, records);
         await keeper.LookAsync(Token);
         Assert.Empty(keeper.Refused);
@@ -151,8 +151,8 @@ public sealed class LabStartTests : IDisposable
     public async Task A_start_that_cannot_be_made_for_another_reason_changes_nothing()
     {
         await StartAsync(LabFileSample.Text);
-        await new LabStart(_directory, RecordsOptions.InDirectory(_directory), _clock).LoadAsync(Order(Changed, false), lookOnly: true, Token);
-        await using SqliteRecords records = new(_directory);
+        await Start().LoadAsync(Order(Changed, false), lookOnly: true, Token);
+        await using SqliteRecords records = new(_directory, busySeconds: 10);
         Assert.Equal(12, await records.LabRecords.HeadAsync("sample", Token));
     }
 
@@ -178,13 +178,15 @@ public sealed class LabStartTests : IDisposable
     }
 
     private Task<(LabSnapshotSource? Lab, IReadOnlyList<Finding> Findings)> LoadAsync(string? file, bool accept = false) =>
-        new LabStart(_directory, RecordsOptions.InDirectory(_directory), _clock).LoadAsync(file is null ? null : Order(file, accept), lookOnly: false, Token);
+        Start().LoadAsync(file is null ? null : Order(file, accept), lookOnly: false, Token);
+
+    private LabStart Start() => new(_directory, RecordsOptions.InDirectory(_directory), _clock) { Patience = TimeSpan.FromMinutes(5) };
 
     private static LabOrder Order(string file, bool accept) => new(Encoding.UTF8.GetBytes(file), "lab.json", "os/kim") { Accept = accept };
 
     private async Task EditAsync(string id = "fir-stability", int revision = 2)
     {
-        await using SqliteRecords records = new(_directory);
+        await using SqliteRecords records = new(_directory, busySeconds: 10);
         RevisionOutcome outcome = await records.LabRecords.ReviseAsync(
             new RevisionOrder(
                 "sample",
@@ -200,7 +202,7 @@ public sealed class LabStartTests : IDisposable
 
     private async Task<LabKeeper> LookAsync(LabSnapshotSource lab)
     {
-        await using SqliteRecords records = new(_directory);
+        await using SqliteRecords records = new(_directory, busySeconds: 10);
         LabKeeper keeper = Keeper(lab, records);
         await keeper.LookAsync(Token);
         return keeper;
@@ -208,7 +210,7 @@ public sealed class LabStartTests : IDisposable
 
     private async Task<LabKeeper> LookFailsAsync(LabSnapshotSource lab)
     {
-        await using SqliteRecords records = new(_directory);
+        await using SqliteRecords records = new(_directory, busySeconds: 10);
         LabKeeper keeper = Keeper(lab, records);
         await Assert.ThrowsAsync<RecordsUnavailableException>(() => keeper.LookAsync(Token));
         return keeper;

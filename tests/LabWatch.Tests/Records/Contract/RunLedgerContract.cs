@@ -36,7 +36,7 @@ public abstract class RunLedgerContract : IAsyncLifetime
         RecordedRun read = (await Ledger.FindAsync(run.Id, Token))!;
         Assert.Equal(ended.Run!.Run, read.Run);
         Assert.Equal(run with { JobNumber = "J-2", SetPointCelsius = 50, EndedAt = Sample.Noon + Hour + Hour, EndedBy = "lee", Note = "Done" }, read.Run);
-        Assert.Equal(["1 kim started", "2 kim corrected Wrong label", "3 lee ended"], read.Steps.Select(step => $"{step.Number} {step.By} {step.What} {step.Reason}".Trim()));
+        Assert.Equal(["1 kim started Check only", "2 kim corrected Wrong label", "3 lee ended"], read.Steps.Select(step => $"{step.Number} {step.By} {step.What} {step.Reason}".Trim()));
         Assert.Equal(run, read.Steps[0].After);
         Assert.Empty(await Ledger.OpenAsync(Token));
     }
