@@ -26,18 +26,18 @@ public sealed class RunRulesTests
     [InlineData(Role.QualityManager)]
     public void A_hazard_that_blocks_is_overridden_by_nobody(Role role)
     {
-        (IReadOnlyList<Finding> findings, bool isForbidden) = Refusal(Lab, "not-fit", [new("over-temperature", "Too hot.", true)], "Urgent", role);
+        (IReadOnlyList<Finding> findings, bool isForbidden) = Refusal(Lab, "not-fit", [new("over-temperature", "Too hot.", true, false)], "Urgent", role);
         Assert.Equal(("hazard-blocks", false), (Assert.Single(findings).Code, isForbidden));
     }
 
     [Fact]
     public void A_hazard_to_people_alone_is_told_and_does_not_stand_against_the_run() =>
-        Assert.Empty(Refusal(Lab, "ready", [new("hot-surface", "The case reads 60 degC.", false)], null, Role.Technician).Findings);
+        Assert.Empty(Refusal(Lab, "ready", [new("hot-surface", "The case reads 60 degC.", false, false)], null, Role.Technician).Findings);
 
     [Fact]
     public void Not_ready_is_overridden_with_a_reason()
     {
-        ReadinessReasonView[] settling = [new("settling", "Its stability has not been assessed yet.", true)];
+        ReadinessReasonView[] settling = [new("settling", "Its stability has not been assessed yet.", true, true)];
         Assert.Equal(["not-ready"], Refusal(Lab, "settling", settling, null, Role.Technician).Findings.Select(finding => finding.Code));
         Assert.Empty(Refusal(Lab, "settling", settling, "Check only", Role.Technician).Findings);
     }
@@ -64,12 +64,21 @@ public sealed class RunRulesTests
         Assert.Empty(Refusal(lab, "not-fit", [], "Compared with the sister source", Role.QualityManager).Findings);
     }
 
+    [Fact]
+    public void An_overdue_certificate_of_another_well_is_not_overridden_by_a_technician_either()
+    {
+        ReadinessReasonView[] overdue = [new("certificate", "Certificate N of well-b has been overdue for 3 days.", true, false)];
+        (IReadOnlyList<Finding> findings, bool isForbidden) = Refusal(Lab, "not-fit", overdue, "Urgent", Role.Technician);
+        Assert.Equal(("certificate-invalid", true), (Assert.Single(findings).Code, isForbidden));
+        Assert.Empty(Refusal(Lab, "not-fit", overdue, "That well is not used", Role.QualityManager).Findings);
+    }
+
     private static (IReadOnlyList<Finding> Findings, bool IsForbidden) Refusal(
         LabSnapshot lab, string state, IReadOnlyList<ReadinessReasonView> reasons, string? overrideReason, Role role, double setPoint = 30) =>
         RunRules.Refusal(
             lab,
             Fir,
-            new SourceStatusView(Fir.Key.ToString(), new ReadinessView(state, reasons), null, 30, Now, false, [], [], null),
+            new SourceStatusView(Fir.Key.ToString(), new ReadinessView(state, reasons, null), null, 30, Now, false, [], [], null),
             new CalibrationRun(Guid.CreateVersion7(), Fir.Key, "J", "T", setPoint, Now, "kim", "unknown") { OverrideReason = overrideReason },
             new Caller("kim", "Kim", [role]));
 

@@ -67,7 +67,7 @@ public sealed class RevisionsReachThePlannerTests : IAsyncLifetime
     [Fact]
     public async Task A_corrected_certificate_supersedes_every_window_that_rests_on_it()
     {
-        IReadOnlyList<Assessment> before = await _planner.RecordedAsync();
+        IReadOnlyList<Assessment> before = InOrder(await _planner.RecordedAsync());
         Assert.NotEmpty(before);
         JsonObject corrected = LabDocument.Split(LabDocument.Parse(Encoding.UTF8.GetBytes(File))).Single(entry => entry.Kind == LabRecordKind.Certificate).Content;
         (corrected["revision"], corrected["number"]) = (2, "HV-2026-11 corrected");
@@ -79,7 +79,7 @@ public sealed class RevisionsReachThePlannerTests : IAsyncLifetime
     [Fact]
     public async Task A_limit_that_applies_from_a_past_instant_supersedes_from_there_on_only()
     {
-        IReadOnlyList<Assessment> before = await _planner.RecordedAsync();
+        IReadOnlyList<Assessment> before = InOrder(await _planner.RecordedAsync());
         JsonObject limit = LabDocument.Split(LabDocument.Parse(Encoding.UTF8.GetBytes(File))).Single(entry => entry.Kind == LabRecordKind.Limit).Content;
         (limit["revision"], limit["maximum"], limit["effectiveFrom"]) = (2, 1, Between.ToString());
         IReadOnlyList<Assessment> superseding = await AfterAsync(LabRecordKind.Limit, limit);
@@ -90,7 +90,7 @@ public sealed class RevisionsReachThePlannerTests : IAsyncLifetime
     [Fact]
     public async Task A_source_described_anew_from_a_past_instant_is_judged_anew_from_there_on_only()
     {
-        IReadOnlyList<Assessment> before = await _planner.RecordedAsync();
+        IReadOnlyList<Assessment> before = InOrder(await _planner.RecordedAsync());
         Assert.All(before, item => Assert.Equal("rowan@1", item.Provenance.Source));
         int count = before.Count;
         LabImportOutcome import = await ImportAsync(
@@ -98,7 +98,7 @@ public sealed class RevisionsReachThePlannerTests : IAsyncLifetime
         Assert.Empty(import.Refused);
         Assert.Empty(_lab.Adopt(import.Records!));
         await _planner.RunAsync();
-        IReadOnlyList<Assessment> superseding = [.. (await _planner.RecordedAsync()).Skip(count)];
+        IReadOnlyList<Assessment> superseding = InOrder((await _planner.RecordedAsync()).Skip(count));
         Assert.Equal(before.Select(item => item.Window).Where(window => window.End >= Between), superseding.Select(item => item.Window));
         Assert.All(superseding, item => Assert.Equal("rowan@2", item.Provenance.Source));
     }
@@ -111,8 +111,10 @@ public sealed class RevisionsReachThePlannerTests : IAsyncLifetime
         Assert.True(outcome.IsNew);
         Assert.Empty(_lab.Adopt(outcome.Records!));
         await _planner.RunAsync();
-        return [.. (await _planner.RecordedAsync()).Skip(count).OrderBy(item => item.Window.End)];
+        return InOrder((await _planner.RecordedAsync()).Skip(count));
     }
+
+    private static IReadOnlyList<Assessment> InOrder(IEnumerable<Assessment> assessments) => [.. assessments.OrderBy(item => item.Window.End)];
 
     private ValueTask<LabImportOutcome> ImportAsync(string file, Instant at) =>
         _records.LabRecords.ImportAsync(new LabImportOrder(Encoding.UTF8.GetBytes(file), "lab.json", "os/kim", at), Token);

@@ -5,6 +5,7 @@ using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Records.Runs;
 using LabWatch.Service.Api.Views;
 
 namespace LabWatch.Service.Api.Live;
@@ -19,7 +20,9 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
         IReadOnlyDictionary<string, Reading> newest = await live.NewestAsync(source.Key, cancellationToken).ConfigureAwait(false);
         IReadOnlyList<Assessment> latest = await assessments.ReadAsync(cancellationToken).ConfigureAwait(false);
         Instant now = Instant.Now(clock);
-        SourceReadiness readiness = await readinessMaker.MakeAsync(new ReadinessInput(lab, source, [.. newest.Values], latest, openAlerts, now), cancellationToken).ConfigureAwait(false);
+        RecordedRun? run = await runs.FindAsync(source.Key, cancellationToken).ConfigureAwait(false);
+        SourceReadiness readiness = await readinessMaker.MakeAsync(
+            new ReadinessInput(lab, source, [.. newest.Values], latest, openAlerts, now) { OpenRun = run?.Run }, cancellationToken).ConfigureAwait(false);
         List<NewestReadingView> shown = [];
         foreach (Channel channel in source.Channels)
         {
@@ -38,7 +41,7 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
             shown.All(reading => reading.IsSilent),
             shown,
             AlertViews.Sorted(lab, openAlerts.Where(alert => alert.Source == source.Key)),
-            await runs.FindAsync(source.Key, cancellationToken).ConfigureAwait(false) is { } run ? RunViews.Of(run) : null);
+            run is null ? null : RunViews.Of(run));
     }
 
     private static NewestReadingView Show(LabSnapshot lab, Channel channel, Reading reading, Instant now) => new(

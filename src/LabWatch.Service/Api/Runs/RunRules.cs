@@ -20,6 +20,8 @@ internal static class RunRules
     private const double SameSetPointKelvin = 1;
 
     private const string Ready = "ready";
+    private const string CertificateReason = "certificate";
+    private const string CertificateCure = "Have the quality manager look at it: a technician cannot override a certificate.";
 
     /// <summary>Why the run cannot start, and whether the caller is the one who may not; no findings where it can.</summary>
     public static (IReadOnlyList<Finding> Findings, bool IsForbidden) Refusal(LabSnapshot lab, ReferenceSource source, SourceStatusView status, CalibrationRun run, Caller caller)
@@ -33,6 +35,14 @@ internal static class RunRules
         }
 
         Finding[] certificates = [.. Certificates(lab, source, run)];
+        if (certificates.Length == 0)
+        {
+            // Of the other wells that a result rests on.
+            certificates = [.. status.Readiness.Reasons
+                .Where(reason => reason.Blocks && string.Equals(reason.Code, CertificateReason, StringComparison.Ordinal))
+                .Select(reason => new Finding("certificate-invalid", "/source", reason.Text, reason.Code, CertificateCure))];
+        }
+
         if (certificates.Length > 0 && !caller.May(Permission.ReviseRecords))
         {
             return (certificates, true);
@@ -69,25 +79,24 @@ internal static class RunRules
 
     private static IEnumerable<Finding> Certificates(LabSnapshot lab, ReferenceSource source, CalibrationRun run)
     {
-        const string Cure = "Have the quality manager look at it: a technician cannot override a certificate.";
         Channel? reference = source.ReferenceChannel ?? source.Channels.FirstOrDefault(channel => channel.Quantity == ChannelQuantity.ComparatorTemperature);
         Certificate? certificate = reference is null ? null : lab.CertificateInForce(reference.Key, run.StartedAt);
         if (certificate is null)
         {
-            yield return new Finding("certificate-missing", "/source", "No certificate is in force for the source's reference thermometer.", reference?.Id, Cure);
+            yield return new Finding("certificate-missing", "/source", "No certificate is in force for the source's reference thermometer.", reference?.Id, CertificateCure);
             yield break;
         }
 
         if (certificate.DueAt <= run.StartedAt)
         {
-            yield return new Finding("certificate-overdue", "/source", $"Certificate {certificate.Number} has been overdue since {certificate.DueAt}.", certificate.Reference, Cure);
+            yield return new Finding("certificate-overdue", "/source", $"Certificate {certificate.Number} has been overdue since {certificate.DueAt}.", certificate.Reference, CertificateCure);
         }
 
         if (!(run.SetPointCelsius >= certificate.MinimumCelsius && run.SetPointCelsius <= certificate.MaximumCelsius))
         {
             yield return new Finding(
                 "certificate-range", "/setPointCelsius",
-                string.Create(CultureInfo.InvariantCulture, $"Certificate {certificate.Number} covers {certificate.MinimumCelsius} to {certificate.MaximumCelsius} degC."), certificate.Reference, Cure);
+                string.Create(CultureInfo.InvariantCulture, $"Certificate {certificate.Number} covers {certificate.MinimumCelsius} to {certificate.MaximumCelsius} degC."), certificate.Reference, CertificateCure);
         }
     }
 }
