@@ -21,6 +21,8 @@ switch (args.FirstOrDefault())
         return IntakeBenchmark.Run(rest);
     case "intake-publisher":
         return IntakePublisher.Run(rest);
+    case "profile":
+        return ProfileBenchmark.Run(rest);
     case "simulator":
         return SimulatorBenchmark.Run(rest);
     case "statistics":
@@ -30,6 +32,6 @@ switch (args.FirstOrDefault())
     case "trail":
         return await TrailBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, simulator, statistics, store, trail.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, profile, simulator, statistics, store, trail.");
         return 1;
 }

@@ -41,6 +41,18 @@ public sealed class LabFileReaderTests
         { "unit-mismatch", "/limits/0/unit", false, file => file["limits"]![0]!["unit"] = "%" },
         { "unknown-reference", "/limits/0/source", false, file => file["limits"]![0]!["source"] = "oak" },
         { "not-whole", "/limits/0/revision", true, file => file["limits"]![0]!["revision"] = 1.5 },
+        { "spot-too-wide", "/sources/0/view/spotRadiusMillimetre", false, file => file["sources"]![0]!["view"]!["spotRadiusMillimetre"] = 26 },
+        { "missing", "/sources/0/view/distanceMillimetre", false, file => file["sources"]![0]!["view"]!.AsObject().Remove("distanceMillimetre") },
+        { "unknown-choice", "/sources/0/view/kind", true, file => file["sources"]![0]!["view"]!["kind"] = "glance" },
+        { "unknown-reference", "/sources/0/baselines/0/band", false, file => file["sources"]![0]!["baselines"]![0]!["band"] = "sw" },
+        { "missing", "/sources/0/baselines/0/from", true, file => file["sources"]![0]!["baselines"]![0]!.AsObject().Remove("from") },
+        { "out-of-range", "/sources/0/baselines/0/effectiveEmissivity", true, file => file["sources"]![0]!["baselines"]![0]!["effectiveEmissivity"] = 99.1 },
+        { "out-of-range", "/sources/0/wellToWallDrop/partOfDifference/value", true, file => file["sources"]![0]!["wellToWallDrop"]!["partOfDifference"]!["value"] = 1 },
+        { "empty-range", "/sources/0/cavity/uniformZone", false, file => file["sources"]![0]!["cavity"]!["uniformZone"]!["toMillimetre"] = 10 },
+        { "missing", "/sources/0/cavity/coating/0/secondEmissivity", false, file => file["sources"]![0]!["cavity"]!["secondMaterial"] = "aperture-plate" },
+        { "unknown-choice", "/sources/0/cavity/secondMaterial", true, file => file["sources"]![0]!["cavity"]!["secondMaterial"] = "none" },
+        { "no-second-material", "/sources/0/cavity/coating/0/secondEmissivity", false, file => file["sources"]![0]!["cavity"]!["coating"]![0]!["secondEmissivity"] = new JsonObject { ["value"] = 0.9, ["standardUncertainty"] = 0.01 } },
+        { "unknown-reference", "/instruments/0/certificates/0/calibratedAgainst", false, file => file["instruments"]![0]!["certificates"]![0]!["calibratedAgainst"] = "oak" },
         { "bad-address", "/notifiers/0/address", true, file => file["notifiers"]![0]!["address"] = "ftp://messages.example" },
         { "missing", "/notifiers/0/address", true, file => file["notifiers"]![0]!.AsObject().Remove("address") },
     };
@@ -56,6 +68,42 @@ public sealed class LabFileReaderTests
         Assert.Equal(SourceKind.StirredBath, fir.Kind);
         Assert.Equal("well-1", fir.ReferenceChannel!.Id);
         Assert.IsType<CallendarVanDusenCharacteristic>(result.Snapshot.Certificates[0].Characteristic);
+        Assert.Equal(new ApertureView(ApertureViewKind.Cone, 10, 700), fir.View);
+        Assert.Equal(new AxialRange(20, 300), fir.Cavity.UniformZone);
+        Assert.Equal(0.9993, Assert.Single(fir.Baselines).EffectiveEmissivity.Value);
+        Assert.Equal((0.5, 1.0), (fir.SurroundingsOffsetKelvin.Value, fir.SurroundingsOffsetKelvin.StandardUncertainty));
+        Assert.Equal(2e-4, fir.WellToWallDrop.StandardUncertainty);
+        Assert.Equal(fir.Key, result.Snapshot.Certificates[1].CalibratedAgainst);
+    }
+
+    [Fact]
+    public void What_is_not_stated_about_the_radiance_is_the_usual()
+    {
+        JsonObject file = Good();
+        foreach (string member in new[] { "view", "baselines", "surroundings", "wellToWallDrop" })
+        {
+            file["sources"]![0]!.AsObject().Remove(member);
+        }
+
+        ReferenceSource fir = LabFileReader.Read(Encoding.UTF8.GetBytes(file.ToJsonString())).Snapshot!.Sources[0];
+
+        Assert.Null(fir.View);
+        Assert.Empty(fir.Baselines);
+        Assert.Equal((ReferenceSource.UsualSurroundingsOffsetKelvin, ReferenceSource.UsualWellToWallDrop), (fir.SurroundingsOffsetKelvin, fir.WellToWallDrop));
+    }
+
+    [Fact]
+    public void A_second_material_takes_an_emissivity_in_each_band()
+    {
+        JsonObject file = Good();
+        file["sources"]![0]!["cavity"]!["secondMaterial"] = "bottom-and-aperture-plate";
+        file["sources"]![0]!["cavity"]!["coating"]![0]!["secondEmissivity"] = new JsonObject { ["value"] = 0.9, ["standardUncertainty"] = 0.01 };
+
+        Cavity cavity = LabFileReader.Read(Encoding.UTF8.GetBytes(file.ToJsonString())).Snapshot!.Sources[0].Cavity;
+
+        Assert.Equal(SecondSurface.BottomAndAperturePlate, cavity.SecondMaterial);
+        Assert.Equal(0.9, cavity.Coating[0].SecondEmissivity!.Value.Value);
+        Assert.True(Schema.Evaluate(Element(file)).IsValid);
     }
 
     [Fact]

@@ -15,9 +15,13 @@ internal static class LabFileSample
               "purgeGas": "dry nitrogen",
               "bands": [ { "id": "lw", "name": "8 to 14 um", "lowerMicrometre": 8, "upperMicrometre": 14 } ],
               "cavity": {
-                "shape": "cylinder-outward-cone", "radiusMillimetre": 30, "lengthMillimetre": 300, "coneHalfAngleDegree": 60, "apertureRadiusMillimetre": 25,
+                "shape": "cylinder-outward-cone", "radiusMillimetre": 30, "lengthMillimetre": 300, "coneHalfAngleDegree": 60, "apertureRadiusMillimetre": 25, "uniformZone": { "fromMillimetre": 20, "toMillimetre": 300 },
                 "coating": [ { "band": "lw", "emissivity": { "value": 0.95, "standardUncertainty": 0.01 }, "diffuseFraction": { "value": 0.9, "standardUncertainty": 0.05 } } ]
               },
+              "view": { "kind": "cone", "spotRadiusMillimetre": 10, "distanceMillimetre": 700 },
+              "surroundings": { "offsetKelvin": { "value": 0.5, "standardUncertainty": 1 } },
+              "wellToWallDrop": { "partOfDifference": { "value": 0, "standardUncertainty": 2e-4 } },
+              "baselines": [ { "band": "lw", "setPointCelsius": 50, "effectiveEmissivity": 0.9993, "standardUncertainty": 0.0004, "from": "commissioning", "at": "2026-01-15T00:00:00Z" } ],
               "channels": [
                 { "id": "well-1", "name": "Bottom well", "quantity": "well-thermometer", "unit": "Ohm", "intervalSeconds": 1, "axialPositionMillimetre": 290, "reference": true },
                 { "id": "set-point", "name": "Set point", "quantity": "set-point", "unit": "Cel", "intervalSeconds": 10 },
@@ -45,7 +49,7 @@ internal static class LabFileSample
               ],
               "certificates": [
                 {
-                  "id": "c-2", "revision": 1, "number": "N-2", "issuer": "Invented laboratory", "validFrom": "2026-01-01T00:00:00Z",
+                  "id": "c-2", "revision": 1, "number": "N-2", "issuer": "Invented laboratory", "validFrom": "2026-01-01T00:00:00Z", "calibratedAgainst": "fir",
                   "range": { "minimumCelsius": -20, "maximumCelsius": 90 },
                   "characteristic": { "kind": "correction-table", "expandedUncertaintyKelvin": 0.1, "coverageFactor": 2, "points": [ { "indicatedCelsius": -20, "correctionKelvin": 0.03 }, { "indicatedCelsius": 90, "correctionKelvin": -0.05 } ] }
                 }
