@@ -5,7 +5,8 @@ namespace LabWatch.Assessments.Profiles;
 
 /// <summary>
 /// Turns temperatures of the wells and of the lip into those of a cavity's zones. Between them by monotone cubic interpolation (see
-/// <see cref="AxialProfile"/>); below the deepest well the nearest one holds. Serves one evaluation at a time.
+/// <see cref="AxialProfile"/>); below the deepest well that one holds. A re-entrant bottom has the temperature of its rim, not that of the wall
+/// beside it. Serves one evaluation at a time.
 /// </summary>
 internal sealed class AxialField
 {
@@ -24,7 +25,10 @@ internal sealed class AxialField
     public AxialField(AxialEvidence evidence, IReadOnlyList<Zone> zones, bool toLip)
     {
         CavityDescription cavity = evidence.Cavity;
-        (_zones, _radius, _wells) = (zones, cavity.Geometry.Radius, evidence.Wells.Count);
+        (_radius, _wells) = (cavity.Geometry.Radius, evidence.Wells.Count);
+        _zones = cavity.Geometry.Form == CavityForm.CylinderInwardCone
+            ? [.. zones.Select(zone => zone.Surface == CavitySurface.Bottom ? zone with { Z = 0 } : zone)]
+            : zones;
         double top = cavity.ApertureHeight;
         double[] places = new double[_wells + 1];
         for (int i = 0; i < _wells; i++)

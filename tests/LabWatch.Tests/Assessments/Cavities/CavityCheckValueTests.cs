@@ -13,7 +13,7 @@ public sealed class CavityCheckValueTests
     [InlineData("cavity_t4_cylinder_cone_diffuse.csv", 9)]
     public void Diffuse_cavities_agree_to_the_error_of_both(string file, int every)
     {
-        CheckCavity[] rows = [.. CheckCavity.Read(file).Where(row => row.IsSeenFromOutside && row.Row["method"] == "A").Where((_, i) => i % every == 0)];
+        CheckCavity[] rows = [.. CheckCavity.Read(file).Where(row => row.IsSeenFromOutside && row.Row["method"].StartsWith('A')).Where((_, i) => i % every == 0)];
         Assert.True(rows.Length > 10);
         foreach (CheckCavity row in rows)
         {

@@ -1,6 +1,5 @@
 using System.Globalization;
 using LabWatch.Assessments;
-using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Lab;
 using LabWatch.Lab.Identity;

@@ -180,7 +180,7 @@ public sealed class RadianceNumbersTests
             {
                 MinimumCelsius = -200,
                 MaximumCelsius = 3000,
-                Characteristic = new CorrectionTableCharacteristic(0.02, 2, [new(-200, 0), new(3000, 0)]),
+                Characteristic = new CorrectionTableCharacteristic(certificate.Characteristic.ExpandedUncertaintyKelvin, 2, [new(-200, 0), new(3000, 0)]),
             })],
             snapshot.Limits, []);
         return AxialReader.Read(wide, wide.Sources[0], window, lab.Readings(window), leastCoverage: 0);
