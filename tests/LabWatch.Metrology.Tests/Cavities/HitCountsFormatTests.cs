@@ -1,4 +1,5 @@
 using LabWatch.Metrology.Cavities;
+using Xunit;
 
 namespace LabWatch.Metrology.Tests.Cavities;
 
