@@ -126,6 +126,7 @@ internal sealed class Planner : IDisposable
             .Select(criterion => new WindowEvaluator(snapshot, source.Key, criterion, _options.ProgramVersion))
             .Where(evaluator => evaluator.Applies)
             .Select(evaluator => new SourcePlanner(evaluator, _store, _ledger, _batch, _pending))],
+        _batch,
         _positions,
         _pending);
 

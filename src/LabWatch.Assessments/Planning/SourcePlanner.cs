@@ -16,9 +16,6 @@ internal sealed class SourcePlanner(
     /// <summary>Windows in one transaction and in one read.</summary>
     private const int ChunkLength = 36;
 
-    /// <summary>Chunks in one run, so that one source that catches up does not hold the others.</summary>
-    private const int ChunksInOneRun = 8;
-
     /// <summary>
     /// A window that is later than this is history: its hours decide when it is looked at. Shorter outages (a locked database, a restart)
     /// are caught up at once, at the price of a superseded revision where readings are still coming in.
@@ -38,27 +35,33 @@ internal sealed class SourcePlanner(
     public int DueCount(Instant now) =>
         _cursor is { } cursor && cursor < Schedule.LastDue(now) ? (int)Math.Min(int.MaxValue, (Schedule.LastDue(now) - cursor) / Schedule.Every) : 0;
 
-    /// <summary>Assesses the windows that have become due. Whether some are left for the next run.</summary>
-    public async ValueTask<bool> WalkAsync(Instant now, CancellationToken cancellationToken)
+    /// <summary>Judges the next windows that have become due, at most a chunk of them; null where none is.</summary>
+    public async ValueTask<DueWindows?> JudgeDueAsync(Instant now, CancellationToken cancellationToken)
     {
         Instant last = Schedule.LastDue(now);
         _cursor ??= await ledger.WatermarkAsync(evaluator.Source, evaluator.Criterion.Code, cancellationToken)
             ?? await BeginningAsync(now, cancellationToken);
         if (_cursor is not { } cursor)
         {
-            return false;
+            return null;
         }
 
         // After a step back of the clock windows come due that the watermark has passed. They are looked up again, and left alone where they stand.
-        cursor = cursor > last ? last - Schedule.Every : cursor;
-        foreach (TimeWindow[] chunk in Schedule.Ending(cursor, last).Take(ChunkLength * ChunksInOneRun).Chunk(ChunkLength))
+        TimeWindow[] chunk = [.. Schedule.Ending(cursor > last ? last - Schedule.Every : cursor, last).Take(ChunkLength)];
+        return chunk.Length == 0
+            ? null
+            : new(chunk[^1].End, await batch.JudgeAsync(evaluator, [.. chunk.Where(window => !IsLeftToItsHours(window, now))], cancellationToken));
+    }
+
+    /// <summary>Takes note that windows were recorded.</summary>
+    public async ValueTask DoneAsync(DueWindows due, CancellationToken cancellationToken)
+    {
+        if (due.Made.Count == 0 || due.Made[^1].Window.End != due.End)
         {
-            await AssessAsync(chunk, now, cancellationToken);
-            cursor = chunk[^1].End;
-            _cursor = cursor;
+            await ledger.MoveWatermarkAsync(evaluator.Source, evaluator.Criterion.Code, due.End, cancellationToken);
         }
 
-        return cursor < last;
+        _cursor = due.End;
     }
 
     /// <summary>Assesses what new readings in some hours may have changed, or made possible, behind the walk.</summary>
@@ -87,16 +90,6 @@ internal sealed class SourcePlanner(
         }
 
         return page.Next;
-    }
-
-    private async ValueTask AssessAsync(TimeWindow[] chunk, Instant now, CancellationToken cancellationToken)
-    {
-        List<TimeWindow> due = [.. chunk.Where(window => !IsLeftToItsHours(window, now))];
-        Instant? recorded = await batch.AssessAsync(evaluator, due, cancellationToken);
-        if (recorded != chunk[^1].End)
-        {
-            await ledger.MoveWatermarkAsync(evaluator.Source, evaluator.Criterion.Code, chunk[^1].End, cancellationToken);
-        }
     }
 
     private bool IsLeftToItsHours(TimeWindow window, Instant now) =>

@@ -7,7 +7,7 @@ using LabWatch.Records.Assessments;
 namespace LabWatch.Assessments.Planning;
 
 /// <summary>
-/// Assesses some windows of one source by one criterion: looks up what stands, reads once, evaluates, and records all of it in one
+/// Assesses some windows of one source by one criterion: looks up what stands, reads once, and evaluates; what comes of it is recorded in one
 /// transaction. Doing it again changes nothing.
 /// </summary>
 internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger, PlannerState state, TimeProvider clock)
@@ -18,21 +18,37 @@ internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger,
     /// <param name="evaluator">Source, criterion and configuration.</param>
     /// <param name="windows">Windows in rising order, near to each other.</param>
     /// <param name="cancellationToken">Cancels it; what is recorded stays.</param>
-    /// <returns>End of the latest window for which something was recorded; null where nothing was.</returns>
-    public async ValueTask<Instant?> AssessAsync(WindowEvaluator evaluator, IReadOnlyList<TimeWindow> windows, CancellationToken cancellationToken)
+    public async ValueTask AssessAsync(WindowEvaluator evaluator, IReadOnlyList<TimeWindow> windows, CancellationToken cancellationToken) =>
+        await RecordAsync(await JudgeAsync(evaluator, windows, cancellationToken), cancellationToken);
+
+    /// <summary>Records assessments, of one criterion or of several, in one transaction.</summary>
+    public async ValueTask RecordAsync(IReadOnlyList<Assessment> made, CancellationToken cancellationToken)
+    {
+        if (made.Count > 0)
+        {
+            await ledger.RecordAsync(made, cancellationToken);
+            state.Recorded(made.Count);
+        }
+    }
+
+    /// <summary>What there is to record of some windows, in rising order of their ends; empty where the evidence is what stands.</summary>
+    /// <param name="evaluator">Source, criterion and configuration.</param>
+    /// <param name="windows">Windows in rising order, near to each other.</param>
+    /// <param name="cancellationToken">Cancels it.</param>
+    public async ValueTask<IReadOnlyList<Assessment>> JudgeAsync(WindowEvaluator evaluator, IReadOnlyList<TimeWindow> windows, CancellationToken cancellationToken)
     {
         if (windows.Count == 0)
         {
-            return null;
+            return [];
         }
 
         ILookup<TimeWindow, Assessment> standing = await StandingAsync(evaluator, windows, cancellationToken);
         IReadOnlyList<SourceHourRead> hours = await store.HoursAsync(evaluator.Source, Span(evaluator, windows), cancellationToken);
         List<TimeWindow> open = [.. windows.Where(window => MayDiffer(evaluator, window, [.. standing[window]], hours))];
-        return open.Count == 0 ? null : await EvaluateAsync(evaluator, open, standing, cancellationToken);
+        return open.Count == 0 ? [] : await EvaluateAsync(evaluator, open, standing, cancellationToken);
     }
 
-    private async ValueTask<Instant?> EvaluateAsync(
+    private async ValueTask<IReadOnlyList<Assessment>> EvaluateAsync(
         WindowEvaluator evaluator, List<TimeWindow> windows, ILookup<TimeWindow, Assessment> standing, CancellationToken cancellationToken)
     {
         ReadingWindow readings = await store.ReadAsync(evaluator.Source, evaluator.Channels(windows), Span(evaluator, windows), cancellationToken);
@@ -44,14 +60,7 @@ internal sealed class WindowBatch(IReadingStore store, IAssessmentLedger ledger,
             made.AddRange(evaluator.Evaluate(window, readings, [.. standing[window]], now));
         }
 
-        if (made.Count == 0)
-        {
-            return null;
-        }
-
-        await ledger.RecordAsync(made, cancellationToken);
-        state.Recorded(made.Count);
-        return made[^1].Window.End;
+        return made;
     }
 
     /// <summary>

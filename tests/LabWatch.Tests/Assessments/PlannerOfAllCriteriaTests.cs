@@ -124,6 +124,28 @@ public sealed class PlannerOfAllCriteriaTests
         Assert.All(back, item => Assert.Equal(3, item.Revision));
     }
 
+    [Fact]
+    public async Task A_criterion_with_a_defect_holds_no_other_up()
+    {
+        await using PlannerHarness lab = await PlannerHarness.NewAsync(Demo.Value.Lab, [new Defect(), .. Criteria]);
+        lab.Add(Demo.Value.Readings.Where(reading => reading.Time < From + TimeSpan.FromHours(1)));
+        lab.Clock.AdvanceTo(From + TimeSpan.FromHours(1) + TimeSpan.FromMinutes(1));
+        await lab.RunAsync();
+        Assert.Equal("broken", lab.State.Current.LastError);
+        Assert.Equal(Criteria.Select(criterion => criterion.Code).Order(), (await lab.RecordedAsync()).Select(item => item.Criterion).Distinct().Order());
+    }
+
+    private sealed class Defect : ICriterion
+    {
+        public string Code => CriterionCode.Purge;
+
+        public CriterionSchedule Schedule => StabilityCriterion.DefaultSchedule;
+
+        public IReadOnlyList<string> Channels(ReferenceSource source) => [source.Channels[0].Id];
+
+        public IReadOnlyList<CriterionResult> Evaluate(CriterionInput input) => throw new InvalidOperationException("broken");
+    }
+
     private static SourceKey Key { get; } = new("hollin-vale", "rowan");
 
     private static CriterionSchedule Schedule(Assessment item) => Criteria.Single(criterion => criterion.Code == item.Criterion).Schedule;
