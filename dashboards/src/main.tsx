@@ -1,11 +1,15 @@
 import { render } from "preact";
-import { listen } from "./api/stream";
+import { begin, probe } from "./access/session";
+import { whenRefused } from "./api/stream";
 import { App } from "./shell/App";
+import { guardEntrance } from "./shell/entrance";
 import { listenToLinks } from "./shell/router";
 import { tick } from "./state";
 import "./style.css";
 
-listen();
+whenRefused(probe);
 listenToLinks();
+guardEntrance();
+void begin();
 window.setInterval(tick, 1_000);
 render(<App />, document.getElementById("app")!);

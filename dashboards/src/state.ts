@@ -47,6 +47,18 @@ export function lost(): void {
   }
 }
 
+/** Forgets everything that was shown, so that nothing of it stays for the next person. */
+export function forget(): void {
+  site.value = null;
+  sources.value = [];
+  alerts.value = [];
+  assessments.value = [];
+  progress.value = null;
+  lastHeard.value = null;
+  announcement.value = "";
+  link.value = "connecting";
+}
+
 export function applySnapshot(snapshot: Snapshot): void {
   const known = new Set(alerts.value.map((alert) => alert.id));
   const isFirst = site.value === null;

@@ -2,7 +2,7 @@ import type { Alert, Faults, Finding, Readings } from "./types";
 
 /** What the service refused, with everything it found wrong. */
 export class Refusal extends Error {
-  constructor(readonly status: number, title: string, readonly findings: Finding[]) {
+  constructor(readonly status: number, title: string, readonly findings: Finding[] = [], readonly retryAfterSeconds: number | null = null) {
     super(title);
   }
 
@@ -12,29 +12,65 @@ export class Refusal extends Error {
   }
 }
 
-async function ask<T>(path: string, init?: RequestInit): Promise<T> {
-  let answer: Response;
+/** What went wrong as sentences, whatever it was. */
+export const sentencesOf = (failure: unknown, otherwise: string): string[] => (failure instanceof Refusal ? failure.sentences : [otherwise]);
+
+/** A request that needs nobody to be signed in (`isOpen`), or one that waits for a new sign-in where the session has ended. */
+export interface Asking extends RequestInit { isOpen?: boolean }
+
+/** What a request needs: a sign-in where the session has ended, the password where it was entered too long ago, or a password of one's own first. */
+export type Need = "sign-in" | "password" | "own-password";
+let waitFor: (need: Need) => Promise<"again" | "leave"> = () => Promise.resolve("leave");
+
+/** Says who asks the person for what a request needs; it waits, and is then sent again or refused. */
+export function whenNeeded(wait: typeof waitFor): void {
+  waitFor = wait;
+}
+
+/** Asks the service; a request that is refused for want of a sign-in or of the password is sent again after it. */
+export async function ask<T>(path: string, { isOpen, ...init }: Asking = {}): Promise<T> {
+  for (;;) {
+    const answer = await fetched(path, init);
+    const hasBody = answer.status !== 204 && answer.headers.get("Content-Type")?.includes("json") === true;
+    const body: unknown = hasBody ? await answer.json() : null;
+    if (answer.ok) {
+      return body as T;
+    }
+    const problem = (body ?? {}) as { title?: string; findings?: Finding[] };
+    const findings = problem.findings ?? [];
+    const need = isOpen === true ? null : needOf(answer.status, findings);
+    if (need === null || (await waitFor(need)) === "leave") {
+      const wait = Number(answer.headers.get("Retry-After") ?? "");
+      throw new Refusal(answer.status, problem.title ?? `The service answered with status ${answer.status}.`, findings, wait > 0 ? wait : null);
+    }
+  }
+}
+
+function needOf(status: number, findings: Finding[]): Need | null {
+  const has = (code: string): boolean => findings.some((finding) => finding.code === code);
+  if (status === 401) {
+    return "sign-in";
+  }
+  return status !== 403 ? null : has("confirm-password") ? "password" : has("password-change-needed") ? "own-password" : null;
+}
+
+async function fetched(path: string, init: RequestInit): Promise<Response> {
   try {
-    answer = await fetch(`/api/v1/${path}`, { ...init, headers: { Accept: "application/json", ...init?.headers } });
+    return await fetch(`/api/v1/${path}`, { ...init, headers: { Accept: "application/json", ...init.headers } });
   } catch (failure) {
     if (failure instanceof DOMException && failure.name === "AbortError") {
       throw failure;
     }
-    throw new Refusal(0, "The service does not answer. Nothing was changed; try again when it is back.", []);
+    throw new Refusal(0, "The service does not answer. Nothing was changed; try again when it is back.");
   }
-  const body: unknown = answer.headers.get("Content-Type")?.includes("json") ? await answer.json() : null;
-  if (!answer.ok) {
-    const problem = (body ?? {}) as { title?: string; findings?: Finding[] };
-    throw new Refusal(answer.status, problem.title ?? `The service answered with status ${answer.status}.`, problem.findings ?? []);
-  }
-  return body as T;
 }
 
-const post = (body: unknown): RequestInit => ({
-  method: "POST",
-  headers: { "Content-Type": "application/json" },
-  body: JSON.stringify(body),
-});
+/** Sends something as JSON. */
+export const send = <T>(path: string, body: unknown, asking: Asking = {}): Promise<T> =>
+  ask(path, { ...asking, method: "POST", headers: { "Content-Type": "application/json" }, body: JSON.stringify(body) });
+
+/** Takes something away. */
+export const remove = <T>(path: string): Promise<T> => ask(path, { method: "DELETE" });
 
 export function readReadings(source: string, channel: string, from: Date, to: Date, signal: AbortSignal): Promise<Readings> {
   const query = new URLSearchParams({ channel, from: from.toISOString(), to: to.toISOString() });
@@ -47,12 +83,11 @@ export const readingsAddress = (source: string, channel: string, from: Date, to:
 export const listAlerts = (after: string | null): Promise<{ items: Alert[]; next: string | null }> =>
   ask(`alerts?count=20${after === null ? "" : `&after=${encodeURIComponent(after)}`}`);
 
-export const acknowledge = (id: string, by: string, note: string): Promise<Alert> =>
-  ask(`alerts/${id}/acknowledge`, post({ by, note: note === "" ? null : note }));
+export const acknowledge = (id: string, note: string): Promise<Alert> => send(`alerts/${id}/acknowledge`, { note: note === "" ? null : note });
 
 export const listFaults = (): Promise<Faults> => ask("demo/faults");
 
 export const injectFault = (kind: string, source: string, channel: string | null, size: number | null): Promise<Faults> =>
-  ask("demo/faults", post({ kind, source, channel, size }));
+  send("demo/faults", { kind, source, channel, size });
 
-export const clearFault = (id: string): Promise<Faults> => ask(`demo/faults/${encodeURIComponent(id)}`, { method: "DELETE" });
+export const clearFault = (id: string): Promise<Faults> => remove(`demo/faults/${encodeURIComponent(id)}`);

@@ -4,19 +4,29 @@ import type { Alert, Assessment, DemoProgress, Snapshot, SourceStatus } from "./
 // Without a word for this long the link counts as lost even where the browser still believes in it:
 // the service sends its clock every five seconds where nothing else happens.
 const patienceMilliseconds = 15_000;
+const againMilliseconds = 3_000;
 
 let source: EventSource | undefined;
 let watchdog: number | undefined;
+let onRefused: () => Promise<void> = () => Promise.resolve();
 
-/** Listens to changes for as long as the page lives, and comes back by itself after every loss. */
+/** Says what to do where the service answers with something that is no stream: the session may be over. */
+export function whenRefused(act: () => Promise<void>): void {
+  onRefused = act;
+}
+
+/** Listens to changes until told to stop, and comes back by itself after every loss. */
 export function listen(): void {
-  source?.close();
-  source = new EventSource("/api/v1/stream");
-  source.addEventListener("error", () => {
+  stopListening();
+  const mine = new EventSource("/api/v1/stream");
+  source = mine;
+  mine.addEventListener("error", () => {
     lost();
-    // A browser gives up for good after an answer that is no stream (a proxy's error page, the service starting).
-    if (source?.readyState === EventSource.CLOSED) {
-      window.setTimeout(listen, 3_000);
+    // A browser gives up for good after an answer that is no stream (a sign-in that is over, a proxy's error page, the service starting).
+    if (mine.readyState === EventSource.CLOSED && source === mine) {
+      window.clearTimeout(watchdog);
+      watchdog = window.setTimeout(listen, againMilliseconds);
+      void onRefused();
     }
   });
   on<Snapshot>("snapshot", applySnapshot);
@@ -28,6 +38,14 @@ export function listen(): void {
   rearm();
 }
 
+/** Stops listening: what is shown is old from now on. */
+export function stopListening(): void {
+  window.clearTimeout(watchdog);
+  source?.close();
+  source = undefined;
+  lost();
+}
+
 function on<T>(name: string, apply: (value: T) => void): void {
   source?.addEventListener(name, (event) => {
     rearm();
@@ -37,8 +55,5 @@ function on<T>(name: string, apply: (value: T) => void): void {
 
 function rearm(): void {
   window.clearTimeout(watchdog);
-  watchdog = window.setTimeout(() => {
-    lost();
-    listen();
-  }, patienceMilliseconds);
+  watchdog = window.setTimeout(listen, patienceMilliseconds);
 }

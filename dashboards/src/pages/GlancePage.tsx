@@ -1,4 +1,5 @@
 import { useEffect } from "preact/hooks";
+import { can } from "../access/session";
 import type { Alert } from "../api/types";
 import { charted, ChannelChart, rangeKey, ranges } from "../chart/ChannelChart";
 import { AlertList } from "../parts/AlertList";
@@ -47,7 +48,7 @@ export function GlancePage({ onAcknowledge }: { onAcknowledge: (alerts: Alert[])
       </section>
       <ChannelChart />
       <AlertList onAcknowledge={onAcknowledge} />
-      {site.value?.isDemo === true && <FaultPanel />}
+      {site.value?.isDemo === true && can("inject-faults") && <FaultPanel />}
     </>
   );
 }

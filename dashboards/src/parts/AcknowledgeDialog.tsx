@@ -1,10 +1,10 @@
 import { useState } from "preact/hooks";
+import { me } from "../access/session";
 import { acknowledge } from "../api/client";
 import type { Alert } from "../api/types";
 import { typeset } from "../format/words";
 import { acknowledgeEach, byCause, type Failure } from "../hazards/acknowledging";
 import { shortName } from "../hazards/board";
-import { recall, remember } from "../memory";
 import { alerts, announcement, applyAlert, caution } from "../state";
 import { Detail } from "./Detail";
 import { Dialog } from "./Dialog";
@@ -12,7 +12,7 @@ import { GoneLine } from "./GoneHazards";
 
 interface AcknowledgeDialogProps { chosen: Alert[]; onClose: () => void }
 
-/** Asks who acknowledges, and makes sure that it is meant: it cannot be taken back. Several at once only where all have gone. */
+/** Says who will be recorded, and makes sure that it is meant: it cannot be taken back. Several at once only where all have gone. */
 export function AcknowledgeDialog({ chosen, onClose }: AcknowledgeDialogProps) {
   const [left, setLeft] = useState(chosen);
   const [tried, setTried] = useState<number | null>(null);
@@ -20,20 +20,14 @@ export function AcknowledgeDialog({ chosen, onClose }: AcknowledgeDialogProps) {
 
   const send = async (event: Event): Promise<void> => {
     event.preventDefault();
-    // From the form itself: a browser that fills in the name does not always say so.
-    const fields = new FormData(event.currentTarget as HTMLFormElement);
-    const by = String(fields.get("name") ?? "");
-    const note = String(fields.get("note") ?? "");
+    const note = String(new FormData(event.currentTarget as HTMLFormElement).get("note") ?? "");
     setFailures([]);
     const failed = await acknowledgeEach(
       left,
       (id) => alerts.value.find((alert) => alert.id === id),
-      async (alert) => applyAlert(await acknowledge(alert.id, by, note)),
+      async (alert) => applyAlert(await acknowledge(alert.id, note)),
       setTried,
     );
-    if (failed.length < left.length) {
-      remember("name", by.trim());
-    }
     if (failed.length === 0) {
       announcement.value = chosen.length === 1 ? `Acknowledged: ${typeset(chosen[0]!.headline)}` : `Acknowledged: ${chosen.length} hazards that are gone.`;
       onClose();
@@ -68,17 +62,13 @@ export function AcknowledgeDialog({ chosen, onClose }: AcknowledgeDialogProps) {
         </ul>
       )}
       <p>
-        You say that you have seen {chosen.length === 1 ? "it and take it on" : "each of them and take them on"}. {consequence(chosen)} This goes on record under your name and{" "}
-        <strong>cannot be undone</strong>.
+        You say that you have seen {chosen.length === 1 ? "it and take it on" : "each of them and take them on"}. {consequence(chosen)} This goes on record as done by{" "}
+        <strong>{me.value?.displayName}</strong> (<code>{me.value?.name}</code>) and <strong>cannot be undone</strong>.
       </p>
       <form onSubmit={(event) => void send(event)}>
         <label>
-          Your name
-          <input type="text" name="name" autocomplete="name" autofocus required maxLength={80} defaultValue={recall("name") ?? ""} />
-        </label>
-        <label>
           Note (what you saw or did; may stay empty)
-          <textarea name="note" rows={3} maxLength={1000} />
+          <textarea name="note" rows={3} maxLength={1000} autofocus />
         </label>
         {chosen.length > 1 && (
           <p role="status" class="progress">

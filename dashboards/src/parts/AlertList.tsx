@@ -1,4 +1,6 @@
 import { useState } from "preact/hooks";
+import { whoMay } from "../access/roles";
+import { can } from "../access/session";
 import { listAlerts } from "../api/client";
 import type { Alert } from "../api/types";
 import { clockTime, span } from "../format/time";
@@ -16,6 +18,7 @@ export function AlertList({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]) 
     <section id="alerts" aria-labelledby="alerts-title" tabIndex={-1} class="panel">
       <h2 id="alerts-title">Alerts</h2>
       {open.length === 0 && <p>No criterion is out of tolerance.</p>}
+      {!can("acknowledge") && open.some((alert) => alert.acknowledgedAt === null) && <p class="quiet">Only {whoMay("acknowledge")} can acknowledge.</p>}
       <ul class="alert-list">
         {open.map((alert) => (
           <AlertRow key={alert.id} alert={alert} onAcknowledge={onAcknowledge} />

@@ -1,3 +1,4 @@
+import { access } from "../access/session";
 import { clockTime, span } from "../format/time";
 import { lastHeard, link, now, progress, site } from "../state";
 import { Icon } from "./Icon";
@@ -7,13 +8,14 @@ export function LostBanner() {
   if (link.value !== "lost") {
     return null;
   }
+  const isOver = access.value === "ended";
   const heard = lastHeard.value;
   const when = heard === null ? "never" : `${span(now.value - heard)} ago, at ${clockTime(heard, site.value?.timeZone ?? "UTC", now.value, true)}`;
   return (
     <p class="banner lost">
       <Icon name="unknown" size={22} />
       <span>
-        <strong>Connection lost.</strong> Everything below is old: last heard {when}. Trying again by itself.
+        <strong>{isOver ? "Session ended." : "Connection lost."}</strong> Everything below is old: last heard {when}. {isOver ? "Sign in to go on." : "Trying again by itself."}
       </span>
     </p>
   );

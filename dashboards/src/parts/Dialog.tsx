@@ -1,8 +1,9 @@
 import type { ComponentChildren } from "preact";
-import { useEffect, useRef } from "preact/hooks";
+import { useEffect, useId, useRef } from "preact/hooks";
 
 /** A modal dialog: the browser keeps the focus inside and gives it back afterwards. */
 export function Dialog({ title, onClose, children }: { title: string; onClose: () => void; children: ComponentChildren }) {
+  const titleId = useId();
   const dialog = useRef<HTMLDialogElement>(null);
   const close = useRef(onClose);
   close.current = onClose;
@@ -22,8 +23,8 @@ export function Dialog({ title, onClose, children }: { title: string; onClose: (
     };
   }, []);
   return (
-    <dialog ref={dialog} aria-labelledby="dialog-title">
-      <h2 id="dialog-title" tabIndex={-1}>{title}</h2>
+    <dialog ref={dialog} aria-labelledby={titleId}>
+      <h2 id={titleId} tabIndex={-1}>{title}</h2>
       {children}
     </dialog>
   );

@@ -1,3 +1,4 @@
+import { can } from "../access/session";
 import type { Alert } from "../api/types";
 import { clockTime } from "../format/time";
 import { typeset } from "../format/words";
@@ -26,7 +27,7 @@ export function GoneHazards({ alerts, onAcknowledge }: { alerts: Alert[]; onAckn
           ))}
         </ul>
       </Fold>
-      {alerts.length > 1 && (
+      {alerts.length > 1 && can("acknowledge") && (
         <button type="button" class="all" onClick={() => onAcknowledge(alerts)}>
           Acknowledge these<span class="hidden"> {alerts.length} hazards that are gone</span>
         </button>

@@ -1,3 +1,5 @@
+import { whoMay } from "../access/roles";
+import { can } from "../access/session";
 import type { Alert } from "../api/types";
 import { clockTime, span } from "../format/time";
 import { typeset } from "../format/words";
@@ -30,6 +32,7 @@ export function HazardBoard({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]
         <OneSource key={group.source} group={group} onAcknowledge={onAcknowledge} />
       ))}
       <GoneHazards alerts={gone(hazards.value)} onAcknowledge={onAcknowledge} />
+      {!can("acknowledge") && hazards.value.some((alert) => alert.acknowledgedAt === null) && <p class="quiet">Only {whoMay("acknowledge")} can acknowledge.</p>}
       <p class="caution">{caution.value}</p>
     </section>
   );

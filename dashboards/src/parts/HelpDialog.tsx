@@ -18,12 +18,15 @@ const terms: [string, string][] = [
 
 const keys: [string, string][] = [
   ["?", "This help"],
-  ["H", "Hazards"],
-  ["S", "Sources"],
-  ["C", "Chart"],
-  ["A", "Alerts"],
-  ["1 to 5", "Stretch of time of the chart"],
-  ["Esc", "Close a dialog"],
+  ["O", "Overview of all sources"],
+  ["T", "Trail"],
+  ["M", "My page"],
+  ["H", "Hazards (overview)"],
+  ["S", "Sources (overview)"],
+  ["C", "Chart (overview)"],
+  ["A", "Alerts (overview)"],
+  ["1 to 5", "Stretch of time of the chart (overview)"],
+  ["Esc", "Close a dialog or menu"],
 ];
 
 /** What the words on the page mean, and which keys there are. */

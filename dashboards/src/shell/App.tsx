@@ -1,23 +1,33 @@
-import { useEffect, useRef, useState } from "preact/hooks";
+import { useEffect, useState } from "preact/hooks";
+import { ChoosePasswordPage } from "../access/ChoosePasswordPage";
+import { ConfirmDialog } from "../access/ConfirmDialog";
+import { access, confirming, me } from "../access/session";
+import { SetUpPage } from "../access/SetUpPage";
+import { SignInAgain } from "../access/SignInAgain";
+import { SignInPage } from "../access/SignInPage";
 import type { Alert } from "../api/types";
-import { standing } from "../hazards/board";
+import { MePage } from "../me/MePage";
 import { GlancePage } from "../pages/GlancePage";
 import { UnknownPage } from "../pages/UnknownPage";
 import { AcknowledgeDialog } from "../parts/AcknowledgeDialog";
 import { LostBanner } from "../parts/Banners";
 import { HelpDialog } from "../parts/HelpDialog";
-import { focusAfter, goTo, listenToKeys } from "../shortcuts";
+import { PeoplePage } from "../people/PeoplePage";
+import { focusAfter, listenToKeys } from "../shortcuts";
 import { SourcePage } from "../source/SourcePage";
-import { announcement, hazards, link, site } from "../state";
+import { announcement, link, site } from "../state";
+import { TrailPage } from "../trail/TrailPage";
+import { useArrival, useWindowTitle } from "./arrival";
+import { Footer } from "./Footer";
 import { Header } from "./Header";
-import { pageTitle } from "./PageHead";
-import { place } from "./router";
+import { go, place } from "./router";
+import { patterns } from "./routes";
 
 /** What every page stands in: header, page, footer, and the dialogs that any page can open. */
 export function App() {
   const [acknowledging, setAcknowledging] = useState<Alert[] | null>(null);
   const [helping, setHelping] = useState(false);
-  useEffect(() => listenToKeys({ "?": () => setHelping(true) }), []);
+  useEffect(() => listenToKeys({ "?": () => setHelping(true), o: () => go(patterns.glance), t: () => go(patterns.trail), m: () => go(patterns.me) }), []);
   useWindowTitle();
   useArrival();
   return (
@@ -31,15 +41,9 @@ export function App() {
       </div>
       <main id="page" tabIndex={-1} class={link.value === "lost" ? "is-old" : ""}>
         <LostBanner />
-        {site.value === null ? (
-          <p class="panel">{link.value === "connecting" ? "Asking the service…" : "The service does not answer. Trying again by itself."}</p>
-        ) : (
-          <Page onAcknowledge={setAcknowledging} />
-        )}
+        <Page onAcknowledge={setAcknowledging} />
       </main>
-      <footer class="foot quiet">
-        LabWatch {site.value?.version} is no protective device. <a href="/openapi/v1.json">Description of the API</a> · <a href="/health/ready">Health</a>
-      </footer>
+      <Footer />
       {acknowledging !== null && (
         <AcknowledgeDialog
           chosen={acknowledging}
@@ -50,46 +54,40 @@ export function App() {
         />
       )}
       {helping && <HelpDialog onClose={() => setHelping(false)} />}
+      {access.value === "ended" ? <SignInAgain /> : confirming.value && <ConfirmDialog />}
     </>
   );
 }
 
 function Page({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]) => void }) {
   const { page, id } = place.value;
+  if (access.value === "asking" || access.value === "away") {
+    return <p class="panel">{access.value === "asking" ? "Asking the service…" : "The service does not answer. Trying again by itself."}</p>;
+  }
+  if (page === "sign-in") {
+    return <SignInPage />;
+  }
+  if (page === "set-up") {
+    return <SetUpPage />;
+  }
+  if (me.value?.mustChangePassword === true) {
+    return <ChoosePasswordPage />;
+  }
+  if (site.value === null) {
+    return <p class="panel">Asking the service…</p>;
+  }
   switch (page) {
     case "glance":
       return <GlancePage onAcknowledge={onAcknowledge} />;
     case "source":
       return <SourcePage key={id} id={id!} onAcknowledge={onAcknowledge} />;
+    case "trail":
+      return <TrailPage />;
+    case "people":
+      return <PeoplePage />;
+    case "me":
+      return <MePage />;
     default:
       return <UnknownPage />;
   }
-}
-
-/** The window's title: standing hazards first, so that a tab in the background says so. */
-function useWindowTitle(): void {
-  const open = standing(hazards.value).length;
-  const parts = [open > 0 ? `(${open}) standing hazard${open === 1 ? "" : "s"}` : "", pageTitle.value, site.value?.name ?? "", "LabWatch"];
-  const title = parts.filter((part) => part !== "").join(" – ");
-  useEffect(() => {
-    document.title = title;
-  }, [title]);
-}
-
-/** After a change of the page the focus goes to its heading, or to the part that the address names. */
-function useArrival(): void {
-  const { page, id } = place.value;
-  const isFirst = useRef(true);
-  useEffect(() => {
-    if (isFirst.current) {
-      isFirst.current = false;
-      return;
-    }
-    if (location.hash.length > 1) {
-      goTo(location.hash.slice(1));
-      return;
-    }
-    window.scrollTo(0, 0);
-    document.getElementById("page-title")?.focus({ preventScroll: true });
-  }, [page, id]);
 }

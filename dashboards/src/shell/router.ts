@@ -4,6 +4,11 @@ import { placeOf, type Place } from "./routes";
 /** Where the person is. */
 export const place = signal<Place>(placeOf(new URL(location.href)));
 
+let isStep = false;
+
+/** Whether the person came here by the back or forward button: the browser then knows where on the page they were. */
+export const cameByHistory = (): boolean => isStep;
+
 /** Goes to an address of these pages; "replace" leaves no step for the back button. */
 export function go(address: string, how: "push" | "replace" = "push"): void {
   const target = new URL(address, location.href);
@@ -12,6 +17,7 @@ export function go(address: string, how: "push" | "replace" = "push"): void {
   } else if (target.href !== location.href) {
     history.pushState(null, "", target);
   }
+  isStep = false;
   place.value = placeOf(target);
 }
 
@@ -21,6 +27,7 @@ export function listenToLinks(): void {
     const target = placeOf(new URL(location.href));
     // A step inside a page (#hazards) is the browser's.
     if (target.path !== place.value.path || target.query.toString() !== place.value.query.toString()) {
+      isStep = true;
       place.value = target;
     }
   });

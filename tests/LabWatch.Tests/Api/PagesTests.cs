@@ -61,6 +61,34 @@ public sealed class PagesTests : IDisposable
         Assert.Equal(HttpStatusCode.NotFound, answer.Status);
     }
 
+    [Theory]
+    [InlineData("/sources/hollin-vale.fir", HttpStatusCode.OK)]
+    [InlineData("/sign-in", HttpStatusCode.OK)]
+    [InlineData("/set-up", HttpStatusCode.OK)]
+    [InlineData("/trail?actor=labwatch", HttpStatusCode.OK)]
+    [InlineData("/people", HttpStatusCode.OK)]
+    [InlineData("/me", HttpStatusCode.OK)]
+    [InlineData("/nowhere", HttpStatusCode.NotFound)]
+    [InlineData("/sources/a/b", HttpStatusCode.NotFound)]
+    public async Task Every_address_opens_the_pages_and_one_that_leads_nowhere_says_so_with_its_status(string address, HttpStatusCode status)
+    {
+        await using ApiHost host = await WithPagesAsync();
+
+        Answer answer = await host.GetAsync(address, ("Accept", "text/html,application/xhtml+xml"));
+
+        Assert.Equal((status, "<p>page</p>", "no-cache"), (answer.Status, answer.Text, answer.Headers["Cache-Control"]));
+    }
+
+    [Fact]
+    public async Task A_program_at_an_address_that_leads_nowhere_gets_the_plain_status()
+    {
+        await using ApiHost host = await WithPagesAsync();
+
+        Answer answer = await host.GetAsync("/nowhere", ("Accept", "application/json"));
+
+        Assert.Equal((HttpStatusCode.NotFound, string.Empty), (answer.Status, answer.Text));
+    }
+
     private Task<ApiHost> WithPagesAsync()
     {
         Directory.CreateDirectory(Path.Combine(_folder, "assets"));
