@@ -1,11 +1,17 @@
 // What the service answers, as /openapi/v1.json describes it. Times are RFC 3339 in UTC; units stand in the names.
 
+import type { Run } from "../runs/types";
+
 export type ReadinessState = "off" | "heating" | "cooling" | "settling" | "ready" | "not-fit" | "unknown";
 export type AlertState = "raised-unacknowledged" | "raised-acknowledged" | "returned-unacknowledged" | "normal";
 export type DecisionWord = "pass" | "conditional-pass" | "conditional-fail" | "fail" | "not-decided";
 
-export interface Reason { code: string; text: string; blocks: boolean }
-export interface Readiness { state: ReadinessState; reasons: Reason[] }
+export interface Reason { code: string; text: string; blocks: boolean; passesByWaiting: boolean }
+
+/** When a source on its way can be at its set point, and ready; an estimate for planning. */
+export interface ReadyForecast { arrivesEarliest: string | null; arrivesLatest: string | null; readyNotBefore: string | null }
+
+export interface Readiness { state: ReadinessState; reasons: Reason[]; expected: ReadyForecast | null }
 
 export interface Temperature {
   celsius: number;
@@ -56,6 +62,8 @@ export interface SourceStatus {
   isSilent: boolean;
   newest: NewestReading[];
   openAlerts: Alert[];
+  /** The open calibration run. */
+  run?: Run | null;
 }
 
 export interface Channel {
@@ -80,7 +88,22 @@ export interface Cavity {
   lengthMillimetre: number;
   coneHalfAngleDegree: number | null;
   apertureRadiusMillimetre: number;
+  coating: Coating[];
+  secondMaterial: "none" | "bottom" | "aperture-plate" | "bottom-and-aperture-plate";
 }
+
+export interface Coating {
+  band: string;
+  emissivity: number;
+  emissivityStandardUncertainty: number | null;
+  diffuseFraction: number;
+  diffuseFractionStandardUncertainty: number | null;
+  secondEmissivity: number | null;
+  secondEmissivityStandardUncertainty: number | null;
+}
+
+/** How a source is looked at. */
+export interface ApertureView { kind: "cone" | "beam" | "hemispherical"; spotRadiusMillimetre: number; distanceMillimetre: number; isStated: boolean }
 
 export interface Band { id: string; name: string; lowerMicrometre: number; upperMicrometre: number }
 
@@ -95,6 +118,7 @@ export interface Source {
   maximumCelsius: number;
   purgeGas: string | null;
   cavity: Cavity;
+  view: ApertureView;
   bands: Band[];
   channels: Channel[];
   status: SourceStatus;
@@ -102,7 +126,8 @@ export interface Source {
 
 export interface Figure { name: string; value: number | null; standardUncertainty: number | null; unit: string }
 
-export interface Assessment {
+/** An assessment without what it was made from. */
+export interface Outcome {
   id: string;
   source: string;
   criterion: string;
@@ -116,11 +141,10 @@ export interface Assessment {
   unit: string;
   limit: number | null;
   decision: DecisionWord;
-  figures: Figure[];
-  explanation: string;
   computedAt: string;
-  supersedeReason: string | null;
 }
+
+export interface Assessment extends Outcome { figures: Figure[]; explanation: string; supersedeReason: string | null }
 
 export interface Site { id: string; name: string; timeZone: string; now: string; version: string; isDemo: boolean }
 export interface DemoProgress { fraction: number; text: string }

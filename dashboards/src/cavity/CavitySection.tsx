@@ -1,6 +1,6 @@
 import type { Source } from "../api/types";
 import { celsius, kelvin } from "../format/numbers";
-import { interpolate, outline, pieces, type Point, type Well } from "./geometry";
+import { interpolate, outline, pieces, radiusAt, type Point, type Well } from "./geometry";
 
 const width = 360;
 const height = 158;
@@ -149,20 +149,6 @@ function scale(line: Point[], wells: Well[]): { unit: number; middle: number } {
   const free = { x: width - frame.left - frame.right - 26, y: height - frame.top - frame.bottom };
   const unit = Math.min(free.x / longest, (free.y / 2 - 24) / widest);
   return { unit, middle: free.y / 2 };
-}
-
-/** Distance of the wall from the axis at a place: where the wall has two there (a re-entrant cone), the outer one. */
-function radiusAt(line: Point[], x: number): number {
-  let found = 0;
-  for (let i = 1; i < line.length; i++) {
-    const from = line[i - 1]!;
-    const to = line[i]!;
-    if (Math.min(from.x, to.x) <= x && x <= Math.max(from.x, to.x)) {
-      const share = to.x === from.x ? 1 : (x - from.x) / (to.x - from.x);
-      found = Math.max(found, to.x === from.x ? Math.max(from.r, to.r) : from.r + (to.r - from.r) * share);
-    }
-  }
-  return found;
 }
 
 function hollow(line: Point[], unit: number): string {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { Cavity } from "../api/types";
-import { coneDepth, interpolate, outline, type Well } from "./geometry";
+import { coneDepth, interpolate, outline, radiusAt, sightRadius, type Well } from "./geometry";
 
 const cavity = (shape: Cavity["shape"], over: Partial<Cavity> = {}): Cavity => ({
   shape,
@@ -8,6 +8,8 @@ const cavity = (shape: Cavity["shape"], over: Partial<Cavity> = {}): Cavity => (
   lengthMillimetre: 200,
   coneHalfAngleDegree: 60,
   apertureRadiusMillimetre: 20,
+  coating: [],
+  secondMaterial: "none",
   ...over,
 });
 
@@ -40,4 +42,22 @@ describe("the axial profile", () => {
     expect(interpolate(wells, 300)).toBe(100);
   });
   it("does not exist without a value", () => expect(interpolate([well(1, null)], 1)).toBeNull());
+});
+
+describe("a view", () => {
+  it("of a cone has its spot in the aperture plane and widens behind it: 10 mm at 700 mm are 12 mm at 140 mm", () => {
+    const view = { kind: "cone", spotRadiusMillimetre: 10, distanceMillimetre: 700, isStated: false } as const;
+    expect(sightRadius(view, 0)).toBe(10);
+    expect(sightRadius(view, 140)).toBeCloseTo(12, 9);
+    expect(sightRadius(view, -700)).toBe(0);
+  });
+  it("of a beam is as wide everywhere", () => expect(sightRadius({ kind: "beam", spotRadiusMillimetre: 8, distanceMillimetre: 0, isStated: true }, 100)).toBe(8));
+});
+
+describe("the wall at a place", () => {
+  it("is as far from the axis as the cylinder, and less in the cone", () => {
+    const line = outline(cavity("cylinder-outward-cone"));
+    expect(radiusAt(line, 100)).toBe(30);
+    expect(radiusAt(line, 200 + 17.3205 / 2)).toBeCloseTo(15, 3);
+  });
 });

@@ -1,4 +1,4 @@
-import type { Cavity } from "../api/types";
+import type { ApertureView, Cavity } from "../api/types";
 
 /** A point of the section: millimetres along the axis from the aperture plane, and from the axis. */
 export interface Point { x: number; r: number }
@@ -52,6 +52,26 @@ export function pieces(line: Point[], longest: number): [Point, Point][] {
     }
   }
   return made;
+}
+
+/** Distance of the wall from the axis at a place: where the wall has two there (a re-entrant cone), the outer one. */
+export function radiusAt(line: Point[], x: number): number {
+  let found = 0;
+  for (let i = 1; i < line.length; i++) {
+    const from = line[i - 1]!;
+    const to = line[i]!;
+    if (Math.min(from.x, to.x) <= x && x <= Math.max(from.x, to.x)) {
+      const share = to.x === from.x ? 1 : (x - from.x) / (to.x - from.x);
+      found = Math.max(found, to.x === from.x ? Math.max(from.r, to.r) : from.r + (to.r - from.r) * share);
+    }
+  }
+  return found;
+}
+
+/** Distance of the outermost ray of a view from the axis at a place, millimetres: a cone widens from the detector through its spot in the aperture plane. */
+export function sightRadius(view: ApertureView, x: number): number {
+  const { spotRadiusMillimetre: spot, distanceMillimetre: distance } = view;
+  return view.kind === "cone" && distance > 0 ? Math.max(0, (spot * (distance + x)) / distance) : spot;
 }
 
 /** A measured temperature at a place on the axis. */

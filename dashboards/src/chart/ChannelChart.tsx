@@ -1,15 +1,16 @@
 import { signal } from "@preact/signals";
+import type { ComponentChildren } from "preact";
 import { useEffect, useRef, useState } from "preact/hooks";
 import "uplot/dist/uPlot.min.css";
 import { readReadings, readingsAddress } from "../api/client";
-import type { Channel, Source } from "../api/types";
+import type { Channel, Readings, Source } from "../api/types";
 import { celsius, fixed } from "../format/numbers";
 import { clockTime, zoneName } from "../format/time";
 import { unitText } from "../format/units";
 import { typeset } from "../format/words";
 import { link, now, site, sources } from "../state";
-import { columnsOf, type Columns } from "./series";
 import { plot, type Level } from "./plot";
+import { columnsOf, withSetPoint, type Columns } from "./series";
 
 export const ranges = [
   { key: "1h", label: "1 hour", seconds: 3_600 },
@@ -35,34 +36,43 @@ export function ChannelChart() {
   return (
     <section id="chart" aria-labelledby="chart-title" tabIndex={-1} class="panel chart">
       <h2 id="chart-title">Chart</h2>
-      {source === undefined || channel === undefined ? <p>There is no channel to show yet.</p> : <Chart source={source} channel={channel} />}
+      {source === undefined || channel === undefined ? (
+        <p>There is no channel to show yet.</p>
+      ) : (
+        <Chart source={source} channel={channel} onChannel={(id) => (charted.value = { source: source.id, channel: id })}>
+          <label>
+            Source
+            <select value={source.id} onChange={(event) => (charted.value = { source: event.currentTarget.value, channel: null })}>
+              {sources.value.map((candidate) => (
+                <option key={candidate.id} value={candidate.id}>
+                  {typeset(candidate.name)}
+                </option>
+              ))}
+            </select>
+          </label>
+        </Chart>
+      )}
     </section>
   );
 }
 
-function Chart({ source, channel }: { source: Source; channel: Channel }) {
+interface ChartProps { source: Source; channel: Channel; onChannel: (id: string) => void; children?: ComponentChildren }
+
+/** One channel of a source with the choice of channel and stretch of time; thermometers with the set point as it was. */
+export function Chart({ source, channel, onChannel, children }: ChartProps) {
   const range = ranges.find((candidate) => candidate.key === rangeKey.value)!;
   const shown = useReadings(source, channel, range.seconds);
   const unit = shown?.columns.isTemperature === true ? "°C" : unitText(channel.unit);
-  const levels = levelsOf(source, channel);
+  const levels = levelsOf(channel);
   const zone = site.value?.timeZone ?? "UTC";
   const window = shown === null ? null : { from: new Date(shown.from * 1000), to: new Date(shown.to * 1000) };
   return (
     <>
       <div class="controls">
-        <label>
-          Source
-          <select value={source.id} onChange={(event) => (charted.value = { source: event.currentTarget.value, channel: null })}>
-            {sources.value.map((candidate) => (
-              <option key={candidate.id} value={candidate.id}>
-                {typeset(candidate.name)}
-              </option>
-            ))}
-          </select>
-        </label>
+        {children}
         <label>
           Channel
-          <select value={channel.id} onChange={(event) => (charted.value = { source: source.id, channel: event.currentTarget.value })}>
+          <select value={channel.id} onChange={(event) => onChannel(event.currentTarget.value)}>
             {source.channels.map((candidate) => (
               <option key={candidate.id} value={candidate.id}>
                 {candidate.name}
@@ -81,7 +91,7 @@ function Chart({ source, channel }: { source: Source; channel: Channel }) {
       </div>
       <Drawing shown={shown} unit={unit} name={channel.name} zone={zone} levels={levels} />
       <p class="quiet chart-note">
-        Times in {zoneName(zone, now.value)}. {summary(shown, unit, zone)}{" "}
+        Times in {zoneName(zone, now.value)}. {summary(shown, unit, zone)} {setPointText(shown, unit)}{" "}
         {levels.map((level) => `${level.label}.`).join(" ")}{" "}
         {window !== null && <a href={readingsAddress(source.id, channel.id, window.from, window.to)}>Download as CSV</a>}
       </p>
@@ -100,8 +110,11 @@ function useReadings(source: Source, channel: Channel, seconds: number): Shown |
     const read = async (): Promise<void> => {
       const to = Math.ceil(now.value / 1000);
       try {
-        const readings = await readReadings(source.id, channel.id, new Date((to - seconds) * 1000), new Date(to * 1000), abort.signal);
-        setShown({ columns: columnsOf(readings, channel.intervalSeconds), from: to - seconds, to, key });
+        const read = (id: string): Promise<Readings> => readReadings(source.id, id, new Date((to - seconds) * 1000), new Date(to * 1000), abort.signal);
+        const asked = setPointFor(source, channel);
+        const [readings, setPoints] = await Promise.all([read(channel.id), asked === undefined ? null : read(asked.id)]);
+        const columns = columnsOf(readings, channel.intervalSeconds);
+        setShown({ columns: setPoints === null ? columns : withSetPoint(columns, setPoints), from: to - seconds, to, key });
       } catch {
         // The link's own banner says that the service does not answer; the next round tries again.
       }
@@ -154,17 +167,24 @@ function Drawing({ shown, unit, name, zone, levels }: { shown: Shown | null; uni
   );
 }
 
-/** What lies across the chart: the set point for thermometers of the source, the limit of a touchable surface. */
-function levelsOf(source: Source, channel: Channel): Level[] {
+/** The channel of the set point that a thermometer of the source is to be compared with. */
+const setPointFor = (source: Source, channel: Channel): Channel | undefined =>
+  ["well-thermometer", "comparator-temperature"].includes(channel.quantity) ? source.channels.find((candidate) => candidate.quantity === "set-point") : undefined;
+
+/** What lies across the chart: the limit of a touchable surface. */
+function levelsOf(channel: Channel): Level[] {
   const levels: Level[] = [];
-  const setPoint = source.status.setPointCelsius;
-  if (channel.quantity === "well-thermometer" && setPoint !== null) {
-    levels.push({ value: setPoint, label: `Set point now ${celsius(setPoint)}`, isLimit: false });
-  }
   if (channel.hotLimitCelsius !== null) {
     levels.push({ value: channel.hotLimitCelsius, label: `Alert above ${celsius(channel.hotLimitCelsius, 0)}`, isLimit: true });
   }
   return levels;
+}
+
+/** The set point over the stretch, in words: it is drawn only where it lies near the values. */
+function setPointText(shown: Shown | null, unit: string): string {
+  const values = [...new Set((shown?.columns.setPoint ?? []).filter((value): value is number => value !== null))];
+  const text = (value: number): string => `${fixed(value, 2)} ${unit}`;
+  return values.length === 0 ? "" : values.length === 1 ? `Set point ${text(values[0]!)} throughout.` : `Set point ${text(Math.min(...values))} to ${text(Math.max(...values))}.`;
 }
 
 function summary(shown: Shown | null, unit: string, zone: string): string {

@@ -31,7 +31,7 @@ export function plot(target: HTMLElement, input: PlotInput): uPlot {
       width: input.width,
       height: input.height,
       tzDate: (seconds) => uPlot.tzDate(new Date(seconds * 1000), zone),
-      scales: { x: { min: input.from, max: input.to }, y: { range: (_, low, high) => range(low, high, input.levels) } },
+      scales: { x: { min: input.from, max: input.to }, y: { range: () => range(...extremes(columns), [...input.levels.map((level) => level.value), ...setPoints(columns)]) } },
       cursor: { drag: { x: false, y: false } },
       legend: { live: true },
       axes: [
@@ -47,28 +47,49 @@ export function plot(target: HTMLElement, input: PlotInput): uPlot {
               { label: "highest", stroke: "transparent", points: { show: false }, value: (_: uPlot, value: number | null) => number(value) },
             ]
           : []),
+        ...(columns.setPoint === undefined
+          ? []
+          : [
+              {
+                label: "Set point",
+                stroke: colour("--text-quiet"),
+                width: 1.5,
+                dash: [6, 4],
+                points: { show: false },
+                paths: uPlot.paths.stepped!({ align: 1 }),
+                value: (_: uPlot, value: number | null) => (value == null ? "–" : `${fixed(value, 2)} ${input.unit}`),
+              },
+            ]),
       ],
       bands: columns.isReduced ? [{ series: [3, 2], fill: colour("--trace-band") }] : [],
       hooks: { drawClear: [(chart) => drawGaps(chart, columns.gaps)], draw: [(chart) => drawLevels(chart, input.levels)] },
     },
-    (columns.isReduced ? [columns.time, columns.value, columns.low, columns.high] : [columns.time, columns.value]) as uPlot.AlignedData,
+    [columns.time, columns.value, ...(columns.isReduced ? [columns.low, columns.high] : []), ...(columns.setPoint === undefined ? [] : [columns.setPoint])] as uPlot.AlignedData,
     target,
   );
 }
 
-/** The scale shows the values; a level is drawn in where it lies near them, and mentioned below the chart where not. */
-function range(low: number | null, high: number | null, levels: Level[]): [number, number] {
+/** The scale shows the values; a level or set point is drawn in where it lies near them, and mentioned below the chart where not. */
+function range(low: number | null, high: number | null, levels: number[]): [number, number] {
   if (low === null || high === null) {
-    const known = levels.map((level) => level.value);
-    return known.length === 0 ? [0, 1] : [Math.min(...known) - 1, Math.max(...known) + 1];
+    return levels.length === 0 ? [0, 1] : [Math.min(...levels) - 1, Math.max(...levels) + 1];
   }
   const spread = Math.max(high - low, 1e-3);
-  const near = levels.map((level) => level.value).filter((value) => value > low - 4 * spread && value < high + 4 * spread);
+  const near = levels.filter((value) => value > low - 4 * spread && value < high + 4 * spread);
   const bottom = Math.min(low, ...near);
   const top = Math.max(high, ...near);
   const margin = (top - bottom) * 0.08 || 0.5;
   return [bottom - margin, top + margin];
 }
+
+/** Lowest and highest of what was measured, the set point apart. */
+function extremes(columns: Columns): [number | null, number | null] {
+  const low = columns.low.reduce<number | null>((least, value) => (value === null || (least !== null && least <= value) ? least : value), null);
+  const high = columns.high.reduce<number | null>((most, value) => (value === null || (most !== null && most >= value) ? most : value), null);
+  return [low, high];
+}
+
+const setPoints = (columns: Columns): number[] => [...new Set((columns.setPoint ?? []).filter((value): value is number => value !== null))];
 
 function tick(at: number, step: number, chart: uPlot, zone: string): string {
   const isLong = (chart.scales["x"]!.max ?? 0) - (chart.scales["x"]!.min ?? 0) > 86_400 * 1.5;

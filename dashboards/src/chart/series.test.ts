@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import type { Readings } from "../api/types";
-import { columnsOf } from "./series";
+import { columnsOf, withSetPoint } from "./series";
 
 const readings = (seconds: number[], over: Partial<Readings> = {}): Readings => ({
   source: "s.a",
@@ -32,4 +32,20 @@ describe("columns", () => {
     expect(columnsOf(readings([]), 1).gaps).toEqual([[0, 3600]]);
   });
   it("have no gap where nothing is missing", () => expect(columnsOf(readings(every(0, 3600)), 1).gaps).toEqual([]));
+});
+
+describe("the set point", () => {
+  const columns = columnsOf(readings(every(0, 60)), 10);
+  it("is the one that was in force at each row", () => {
+    const made = withSetPoint(columns, readings([0, 30], { raw: [100, 200], rawMinimum: null, rawMaximum: null }));
+    expect(made.setPoint).toEqual([100, 100, 100, 200, 200, 200]);
+  });
+  it("is never a mean of two", () => {
+    const made = withSetPoint(columns, readings([0, 20, 40], { raw: [100, 150, 200], rawMinimum: [100, 100, 200], rawMaximum: [100, 200, 200] }));
+    expect(made.setPoint).toEqual([100, 100, 100, 100, 200, 200]);
+  });
+  it("has the first known before it, and none where there is no reading of it", () => {
+    expect(withSetPoint(columns, readings([50], { raw: [7], rawMinimum: null, rawMaximum: null })).setPoint).toEqual([7, 7, 7, 7, 7, 7]);
+    expect(withSetPoint(columns, readings([])).setPoint).toEqual([null, null, null, null, null, null]);
+  });
 });

@@ -6,6 +6,8 @@ export interface Columns {
   value: (number | null)[];
   low: (number | null)[];
   high: (number | null)[];
+  /** Set point as it was; null where there is none, or where it was changed inside the row. Missing where none is asked for. */
+  setPoint?: (number | null)[];
   /** Spans without readings, seconds. */
   gaps: [number, number][];
   isTemperature: boolean;
@@ -42,6 +44,29 @@ export function columnsOf(readings: Readings, intervalSeconds: number): Columns 
     columns.gaps.push([before ?? from, to]);
   }
   return columns;
+}
+
+/**
+ * The same columns with the set point that was in force at each row: the newest before it. A bucket in which it was changed keeps the
+ * one from before, since a mean of two set points was never asked for.
+ */
+export function withSetPoint(columns: Columns, readings: Readings): Columns {
+  const known: { at: number; value: number }[] = [];
+  readings.time.forEach((text, i) => {
+    const value = readings.raw[i] ?? null;
+    const isChanged = readings.rawMinimum !== null && readings.rawMinimum[i] !== readings.rawMaximum?.[i];
+    if (value !== null && !isChanged) {
+      known.push({ at: Date.parse(text) / 1000, value });
+    }
+  });
+  let next = 0;
+  const setPoint = columns.time.map((at, row) => {
+    while (next < known.length && known[next]!.at <= at) {
+      next++;
+    }
+    return columns.value[row] === null ? null : (known[next - 1]?.value ?? known[0]?.value ?? null);
+  });
+  return { ...columns, setPoint };
 }
 
 function push(columns: Columns, time: number, value: number | null, low: number | null, high: number | null): void {

@@ -57,4 +57,4 @@ export const words = (code: string): string => {
 };
 
 /** The service's texts keep to plain characters; a page writes the unit as people do, and never parts it from its number. */
-export const typeset = (text: string): string => text.replaceAll(" degC", "\u00a0°C").replaceAll(/(\d) (mK|K|mm|um)\b/g, "$1\u00a0$2");
+export const typeset = (text: string): string => text.replaceAll(" degC", "\u00a0°C").replaceAll(/(\d) (mK|K|mm|um)\b/g, "$1\u00a0$2").replaceAll(/(\d\u00a0)um\b/g, "$1µm");

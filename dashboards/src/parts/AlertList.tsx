@@ -29,7 +29,7 @@ export function AlertList({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]) 
   );
 }
 
-function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (alerts: Alert[]) => void }) {
+export function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge?: (alerts: Alert[]) => void }) {
   const zone = site.value?.timeZone ?? "UTC";
   return (
     <li id={onAcknowledge === undefined ? undefined : `alert-${alert.id}`} tabIndex={-1} class={`alert ${alert.isHazard ? "hazard" : "deviation"} ${alert.state}`}>

@@ -52,7 +52,7 @@ function OneSource({ group, onAcknowledge }: { group: SourceHazards; onAcknowled
   );
 }
 
-function HazardItem({ alert, isFirst, onAcknowledge }: { alert: Alert; isFirst: boolean; onAcknowledge: (alerts: Alert[]) => void }) {
+export function HazardItem({ alert, isFirst, onAcknowledge }: { alert: Alert; isFirst: boolean; onAcknowledge: (alerts: Alert[]) => void }) {
   const zone = site.value?.timeZone ?? "UTC";
   const { what, advice } = detailParts(alert.detail);
   const { first, rest } = firstStep(advice);
