@@ -51,6 +51,8 @@ public sealed class DataVerifier
     private (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run()
     {
         IReadOnlyDictionary<string, AuditHead> heads = new Dictionary<string, AuditHead>(StringComparer.Ordinal);
+        // Before the database: beside a running service the chain goes on meanwhile, and must hold what was noted earlier.
+        IReadOnlyDictionary<string, AuditHead>? kept = TrailHeadFile.Read(_request.DataDirectory);
         try
         {
             using RecordsSnapshot records = RecordsSnapshot.Open(_request.Records);
@@ -61,7 +63,7 @@ public sealed class DataVerifier
             }
 
             heads = verifier.ReadTrail(TakeEntry, _progress);
-            CheckHeads(verifier);
+            CheckHeads(verifier, kept);
             verifier.CheckTables(_progress);
             CheckHours(verifier);
             if (verifier.CheckUnclaimed(OtherTables, NameOf) is > 0 and long unknown)
@@ -89,14 +91,13 @@ public sealed class DataVerifier
         }
     }
 
-    private void CheckHeads(TrailVerifier verifier)
+    private void CheckHeads(TrailVerifier verifier, IReadOnlyDictionary<string, AuditHead>? kept)
     {
         foreach ((string? site, AuditHead head) in _request.Noted)
         {
             verifier.CheckHead(site, head, "the head that was given");
         }
 
-        IReadOnlyDictionary<string, AuditHead>? kept = TrailHeadFile.Read(_request.DataDirectory);
         if (kept is null)
         {
             _findings.Add(new TrailFinding(

@@ -28,11 +28,14 @@ public sealed class KillTests
 
         await device.FinishAsync(TimeSpan.FromSeconds(30));
         await AssertStored(fixture, device, first, token);
+        await AssertVerified(fixture, token);
 
         // Once more from the disk alone: what memory held must not have helped.
         await fixture.Service.KillAsync();
         await fixture.StartAsync(token);
         await AssertStored(fixture, device, first, token);
+        await fixture.Service.KillAsync();
+        await AssertVerified(fixture, token);
         TestContext.Current.SendDiagnosticMessage($"{device.Acknowledged.Count} readings acknowledged over {Rounds} kills");
     }
 
@@ -44,6 +47,13 @@ public sealed class KillTests
         await fixture.StartAsync(token);
 
         Assert.Equal(0, await fixture.Service.StopAsync(token));
+    }
+
+    /// <summary>Beside the running service, and from what a kill left behind: no false alarm.</summary>
+    private static async Task AssertVerified(ServiceFixture fixture, CancellationToken token)
+    {
+        (int code, string output) = await LabWatchProcess.RunAsync(["verify", "--data", fixture.Data], token);
+        Assert.True(code == 0, output);
     }
 
     private static async Task AssertStored(ServiceFixture fixture, PersistentDevice device, long first, CancellationToken token)

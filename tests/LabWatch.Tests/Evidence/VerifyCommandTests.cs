@@ -71,6 +71,31 @@ public sealed class VerifyCommandTests
         Assert.Contains("... and 1050 more: row-altered 1100", output, StringComparison.Ordinal);
     }
 
+    [Fact]
+    public async Task Beside_a_service_that_goes_on_writing_nothing_is_found()
+    {
+        await using SqliteRecords records = await FilledAsync();
+        using CancellationTokenSource stop = new();
+        Task writing = Task.Run(
+            async () =>
+            {
+                for (int window = 10; !stop.IsCancellationRequested; window++)
+                {
+                    await records.Assessments.RecordAsync(Sample.Assessment(Sample.Fir, window), Token);
+                    records.Heads.Write();
+                }
+            },
+            Token);
+        for (int turn = 0; turn < 10; turn++)
+        {
+            (int code, string output, _) = Run("--data", records.Directory);
+            Assert.True(code == ExitCode.Success, output);
+        }
+
+        await stop.CancelAsync();
+        await writing;
+    }
+
     [Theory]
     [InlineData("--data", "no-such-directory")]
     [InlineData("--data", ".")]

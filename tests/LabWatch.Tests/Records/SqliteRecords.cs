@@ -42,6 +42,8 @@ internal sealed class SqliteRecords : IRecordsUnderTest
 
     public ILabRecords LabRecords => _services.GetRequiredService<ILabRecords>();
 
+    public TrailHeads Heads => _services.GetRequiredService<TrailHeads>();
+
     public IPositionLedger Positions => _services.GetRequiredService<IPositionLedger>();
 
     public IAuditLedger Audit => _services.GetRequiredService<IAuditLedger>();

@@ -17,7 +17,7 @@ internal sealed class ChainCheck(TrailFacts facts, TrailFindings findings)
             ref EntryFacts entry = ref facts.Entries[order[i]];
             bool isFirst = i == 0 || facts.Entries[order[i - 1]].Site != entry.Site;
             bool isLast = i == order.Length - 1 || facts.Entries[order[i + 1]].Site != entry.Site;
-            CheckDigest(ref entry, isFirst ? -1 : order[i - 1], isLast ? -1 : order[i + 1]);
+            CheckDigest(order[i], isFirst ? -1 : order[i - 1], isLast ? -1 : order[i + 1]);
             CheckNumber(entry, isFirst ? 0 : facts.Entries[order[i - 1]].Sequence);
             if (isLast)
             {
@@ -53,16 +53,17 @@ internal sealed class ChainCheck(TrailFacts facts, TrailFindings findings)
         return order;
     }
 
-    private void CheckDigest(ref EntryFacts entry, int before, int after)
+    private void CheckDigest(int place, int before, int after)
     {
-        if (entry.Digest == entry.Computed)
+        ref EntryFacts entry = ref facts.Entries[place];
+        if (!entry.IsAltered)
         {
             return;
         }
 
         // The entry after remembers the digest that this one had: it tells which of the two, content or digest, was altered.
-        bool isDigest = after >= 0 && facts.Entries[after].Previous == entry.Computed;
-        bool isPrevious = !isDigest && before >= 0 && facts.Entries[before].Digest != entry.Previous && facts.Entries[before].Digest == facts.Entries[before].Computed;
+        bool isDigest = after >= 0 && facts.Entries[after].Previous == facts.Computed[place];
+        bool isPrevious = !isDigest && before >= 0 && facts.Entries[before].Digest != entry.Previous && !facts.Entries[before].IsAltered;
         Report(ref entry, TrailCodes.EntryAltered, isDigest ? "digest" : isPrevious ? "previous" : null, "The digest is not that of the entry.", Altered);
     }
 

@@ -14,9 +14,6 @@ internal struct EntryFacts
 
     public Vector256<byte> Previous;
 
-    /// <summary>What the digest of the entry should be.</summary>
-    public Vector256<byte> Computed;
-
     /// <summary>Digest of the covered record; meaningless where <see cref="HasRecord"/> is false.</summary>
     public Vector256<byte> Record;
 
@@ -24,6 +21,9 @@ internal struct EntryFacts
 
     /// <summary>Whether a row was found that the entry covers.</summary>
     public bool IsClaimed;
+
+    /// <summary>Whether the digest is not that of the content; <see cref="TrailFacts.Computed"/> has the right one.</summary>
+    public bool IsAltered;
 
     /// <summary>Whether a finding tells of the entry already.</summary>
     public bool IsReported;

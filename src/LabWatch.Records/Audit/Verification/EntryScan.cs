@@ -66,18 +66,25 @@ internal sealed class EntryScan(RecordsSnapshot records, TrailFacts facts, Trail
         entry.Write(_canonical);
         Span<byte> computed = stackalloc byte[SHA256.HashSizeInBytes];
         SHA256.HashData(_canonical.WrittenSpan, computed);
+        Vector256<byte> right = Vector256.Create<byte>(computed);
+        Vector256<byte> digest = Vector256.Create(scan.Bytes(9));
         EntryFacts read = new()
         {
             Site = facts.SiteNumber(entry.Site),
             Sequence = entry.Sequence,
-            Digest = Vector256.Create(scan.Bytes(9)),
+            Digest = digest,
             Previous = Vector256.Create(entry.Previous),
-            Computed = Vector256.Create<byte>(computed),
+            IsAltered = digest != right,
             HasRecord = !entry.RecordDigest.IsEmpty,
             Record = entry.RecordDigest.IsEmpty ? default : Vector256.Create(entry.RecordDigest),
         };
         int place = facts.Entries.Length;
         facts.Add(read, entry.Subject);
+        if (read.IsAltered)
+        {
+            facts.Computed[place] = right;
+        }
+
         if (read.HasRecord)
         {
             OnEntry?.Invoke(place, entry.Subject, entry.Content);

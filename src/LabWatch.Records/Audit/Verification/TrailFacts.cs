@@ -1,5 +1,6 @@
 using System.Buffers.Binary;
 using System.Runtime.InteropServices;
+using System.Runtime.Intrinsics;
 using System.Security.Cryptography;
 using System.Text;
 
@@ -16,6 +17,9 @@ internal sealed class TrailFacts
 
     /// <summary>The entries, in the order of reading until the chain check sorts them.</summary>
     public Span<EntryFacts> Entries => CollectionsMarshal.AsSpan(_entries);
+
+    /// <summary>What the digest of an entry should be, for those that have another one, by place.</summary>
+    public Dictionary<int, Vector256<byte>> Computed { get; } = [];
 
     /// <summary>Ids of the sites met.</summary>
     public IReadOnlyList<string> Sites => _sites;
