@@ -25,7 +25,9 @@ public sealed class ChainScriptTests : IDisposable
         (VerifyReport? report, _) = DataVerifier.Run(new VerifyRequest(_data.Path, RecordsOptions.InDirectory(_data.Path), []));
         (int code, string output) = await RunAsync();
         Assert.Equal(0, code);
-        Assert.Equal([.. report!.Heads.Select(head => $"{head.Key} {head.Value.Sequence}:{head.Value.Digest}")], output.Split('\n', StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries));
+        Assert.Equal(
+            report!.Heads.Select(head => $"{head.Key} {head.Value.Sequence}:{head.Value.Digest}").Order(StringComparer.Ordinal),
+            output.Split('\n', StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries).Order(StringComparer.Ordinal));
 
         Execute("DROP TRIGGER audit_entries_refuse_update; UPDATE audit_entries SET actor = 'nobody' WHERE sequence = 7");
         (code, output) = await RunAsync();

@@ -5,12 +5,10 @@ namespace LabWatch.SystemTests.Evidence;
 /// <summary>The logical content of the tables that are vouched for, by row number, read without indexes.</summary>
 internal sealed class TrialDump
 {
-    private readonly Dictionary<(string Table, long Row), Dictionary<string, object>> _rows = [];
+    private readonly Dictionary<(string Table, long Row, int Time), Dictionary<string, object>> _rows = [];
 
     /// <summary>Why the content could not be read; null where it could.</summary>
     public string? Unreadable { get; private set; }
-
-    public IReadOnlyDictionary<(string Table, long Row), Dictionary<string, object>> Rows => _rows;
 
     public static TrialDump Of(string directory)
     {
@@ -36,8 +34,8 @@ internal sealed class TrialDump
     /// </summary>
     public IReadOnlyList<(TrialTable Table, string? Before, string? After)> Differences(TrialDump later)
     {
-        List<((string Table, long Row) Key, Dictionary<string, object>? Before, Dictionary<string, object>? After)> found = [];
-        foreach ((string Table, long Row) key in _rows.Keys.Union(later._rows.Keys))
+        List<((string Table, long Row, int Time) Key, Dictionary<string, object>? Before, Dictionary<string, object>? After)> found = [];
+        foreach ((string Table, long Row, int Time) key in _rows.Keys.Union(later._rows.Keys))
         {
             Dictionary<string, object>? before = _rows.GetValueOrDefault(key);
             Dictionary<string, object>? after = later._rows.GetValueOrDefault(key);
@@ -75,7 +73,14 @@ internal sealed class TrialDump
         using SqliteDataReader reader = command.ExecuteReader();
         while (reader.Read())
         {
-            _rows[(table.Name, reader.GetInt64(0))] = table.Columns.Select((column, place) => (column, Value: reader.GetValue(place + 1))).ToDictionary(cell => cell.column, cell => cell.Value);
+            // A damaged file can give two rows the same number.
+            int time = 0;
+            while (_rows.ContainsKey((table.Name, reader.GetInt64(0), time)))
+            {
+                time++;
+            }
+
+            _rows[(table.Name, reader.GetInt64(0), time)] = table.Columns.Select((column, place) => (column, Value: reader.GetValue(place + 1))).ToDictionary(cell => cell.column, cell => cell.Value);
         }
     }
 }

@@ -29,16 +29,19 @@ internal abstract class RecordsSnapshot(RecordsContext model) : IDisposable
         int number = columns.Count(letter => letter == ',') + 1;
         string sql = $"SELECT {columns}{(RowNumber is null ? string.Empty : ", " + RowNumber)} FROM \"{table}\"{WholeTable}";
         long last = long.MinValue;
+        bool isInOrder = true;
         try
         {
             using TableScan scan = Scan(sql);
             while (scan.Read())
             {
-                last = RowNumber is null ? 0 : scan.Whole(number);
+                long row = RowNumber is null ? 0 : scan.Whole(number);
+                isInOrder &= RowNumber is null || row > last;
+                last = row;
                 take(scan);
             }
 
-            return null;
+            return isInOrder ? null : "its rows do not lie in the order of their numbers, so that a search can miss one";
         }
         catch (UnreadableException exception)
         {

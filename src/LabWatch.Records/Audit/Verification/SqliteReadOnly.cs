@@ -5,6 +5,9 @@ namespace LabWatch.Records.Audit.Verification;
 /// <summary>Opens an SQLite file that may be in use, may be damaged and may lie where nothing can be written.</summary>
 internal static class SqliteReadOnly
 {
+    private static readonly string[] Statements =
+        ["PRAGMA trusted_schema = OFF", "PRAGMA cell_size_check = ON", "PRAGMA mmap_size = 0", "BEGIN", "SELECT COUNT(*) FROM sqlite_schema"];
+
     /// <summary>Opens the file for reading, in one transaction. Throws <see cref="UnreadableException"/> where that cannot be done.</summary>
     public static SqliteConnection Open(string path)
     {
@@ -31,9 +34,14 @@ internal static class SqliteReadOnly
         try
         {
             connection.Open();
-            using SqliteCommand command = connection.CreateCommand();
-            command.CommandText = "PRAGMA trusted_schema = OFF; PRAGMA cell_size_check = ON; PRAGMA mmap_size = 0; BEGIN; SELECT COUNT(*) FROM sqlite_schema;";
-            command.ExecuteScalar();
+            // One after the other: a batch ends at its first result, and the transaction is what makes all tables of one moment.
+            foreach (string statement in Statements)
+            {
+                using SqliteCommand command = connection.CreateCommand();
+                command.CommandText = statement;
+                command.ExecuteScalar();
+            }
+
             reason = string.Empty;
             return true;
         }
