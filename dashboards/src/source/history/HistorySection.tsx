@@ -1,25 +1,19 @@
 import { useEffect, useRef, useState } from "preact/hooks";
 import type { Assessment, Source } from "../../api/types";
 import { rangeKey, ranges } from "../../chart/ChannelChart";
-import { clockTime, day, zoneName } from "../../format/time";
-import { coverageText } from "../../format/uncertainty";
-import { decisionWord } from "../../format/words";
+import { day, zoneName } from "../../format/time";
 import { now, site } from "../../state";
-import { Cards, Cell } from "../Cards";
 import { byOrder, criterionMeaning, criterionName, scopeName } from "../criteria";
-import { Decision, DecisionShape } from "../Decision";
 import { Failed } from "../Failed";
 import { usePolled } from "../polled";
-import { assessedUncertainty, assessedValue, limitText } from "../quantity";
 import { readHistory } from "../requests";
 import type { Limit } from "../types";
 import { useWidth } from "../width";
 import { download, historyCsv } from "./csv";
 import { HistoryChart } from "./HistoryChart";
-import { isDecided, pointsOf, scopesOf, type HistoryPoint } from "./points";
-
-const rowsInTable = 60;
-const words = ["pass", "conditional-pass", "conditional-fail", "fail", "not-decided"] as const;
+import { HistoryKey } from "./HistoryKey";
+import { HistoryTable } from "./HistoryTable";
+import { pointsOf, scopesOf } from "./points";
 
 interface HistorySectionProps { source: Source; assessments: Assessment[]; limits: Limit[]; onOpen: (id: string) => void }
 
@@ -110,7 +104,7 @@ function History({ source, criterion, criteria, latest, onCriterion, onOpen }: H
       </div>
       {points.length > 0 && (
         <>
-          <Key points={points} />
+          <HistoryKey points={points} />
           <p class="quiet chart-note">
             {criterionMeaning(criterion)} Each point is one window, at its end. Times in {zoneName(zone, now.value)}.{" "}
             <button type="button" class="as-link" onClick={() => download(fileName(source, criterion, current), historyCsv(points.map((point) => point.assessment)))}>
@@ -133,70 +127,6 @@ export function RangeButtons() {
         </button>
       ))}
     </div>
-  );
-}
-
-/** What the shapes mean, and how many of each there are. */
-function Key({ points }: { points: HistoryPoint[] }) {
-  const factors = [...new Set(points.filter(isDecided).map((point) => coverageText(point.assessment.coverageFactor)))].filter((factor) => factor !== "–").sort((one, other) => Number(one) - Number(other));
-  const range = factors.length === 0 ? "" : `, k = ${factors.length === 1 ? factors[0] : `${factors[0]} to ${factors[factors.length - 1]}`}`;
-  return (
-    <ul class="history-key">
-      {words.map((decision) => {
-        const count = points.filter((point) => point.assessment.decision === decision).length;
-        return count === 0 ? null : (
-          <li key={decision}>
-            <DecisionShape decision={decision} /> {decisionWord[decision]}: {count}
-          </li>
-        );
-      })}
-      <li>
-        <span class="reach-sample" aria-hidden="true" /> expanded uncertainty U{range}
-      </li>
-      {points.some((point) => point.assessment.revision > 1) && (
-        <li>
-          <span class="revised-sample" aria-hidden="true" /> revised
-        </li>
-      )}
-    </ul>
-  );
-}
-
-const heads = ["Window to", "Decision", "Value", "U", "Limit", "Assessment"];
-
-function HistoryTable({ points, zone, onOpen }: { points: HistoryPoint[]; zone: string; onOpen: (id: string) => void }) {
-  const shown = [...points].reverse().slice(0, rowsInTable);
-  return (
-    <details>
-      <summary>As a table{shown.length < points.length ? ` (the newest ${shown.length} of ${points.length}; the file has all)` : ""}</summary>
-      <Cards caption="Assessments, newest first" heads={heads} isCaptionHidden>
-        {shown.map(({ assessment }) => (
-          <tr key={assessment.id} role="row">
-            <Cell head={heads[0]!} isHeader class="number">
-              {clockTime(assessment.windowEnd, zone, now.value)}
-            </Cell>
-            <Cell head={heads[1]!}>
-              <Decision decision={assessment.decision} />
-            </Cell>
-            <Cell head={heads[2]!} class="number">
-              {assessedValue(assessment)}
-            </Cell>
-            <Cell head={heads[3]!} class="number">
-              {assessedUncertainty(assessment)}
-            </Cell>
-            <Cell head={heads[4]!} class="number">
-              {limitText(assessment.limit, assessment.unit)}
-            </Cell>
-            <Cell head={heads[5]!}>
-              <button type="button" class="as-link" onClick={() => onOpen(assessment.id)}>
-                Open
-              </button>
-              {assessment.revision > 1 && <span class="quiet"> revision {assessment.revision}</span>}
-            </Cell>
-          </tr>
-        ))}
-      </Cards>
-    </details>
   );
 }
 
