@@ -43,6 +43,7 @@ internal sealed class LabImportPlanner
             planner.Take(entry, planner.Reason(digest));
         }
 
+        planner.TellKept(file);
         foreach (RecordHistory history in planner._histories.Values.Where(history => !history.IsWithdrawn && !planner._inFile.Contains((history.Kind, history.Id))))
         {
             planner.Withdraw(history, planner.Reason(digest));
@@ -95,14 +96,16 @@ internal sealed class LabImportPlanner
         {
             Refuse(entry, number, highest, history.Last);
         }
-        else if (number == highest || _changes.Exists(change => change.Subject == SubjectOf(entry.Kind, entry.Id, highest)))
-        {
-            // In force as the file has it.
-        }
-        else if (history.Last.Import is null)
-        {
-            _changes.Add(new LabChange("kept", SubjectOf(entry.Kind, entry.Id, highest)));
-        }
+    }
+
+    /// <summary>Later revisions that somebody recorded and that the file leaves alone.</summary>
+    private void TellKept(IReadOnlyList<LabEntry> file)
+    {
+        HashSet<(LabRecordKind, string, int?)> inFile = [.. file.Select(entry => (entry.Kind, entry.Id, entry.Revision))];
+        _changes.AddRange(_histories.Values
+            .Where(history => history is { IsWithdrawn: false, Last.Import: null } && _inFile.Contains((history.Kind, history.Id))
+                && LabEntry.CarriesRevision(history.Kind) && !inFile.Contains((history.Kind, history.Id, history.Last.Revision)))
+            .Select(history => new LabChange("kept", SubjectOf(history.Kind, history.Id, history.Last.Revision))));
     }
 
     private int Planned(LabEntry entry) => _revisions

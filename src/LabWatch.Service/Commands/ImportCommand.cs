@@ -70,11 +70,21 @@ internal static class ImportCommand
 
             return Report(parsed, outcome);
         }
+        catch (RecordsVersionException exception)
+        {
+            return Newer(parsed.InvocationConfiguration.Error, exception);
+        }
         catch (RecordsUnavailableException exception)
         {
             FindingPrinter.Write(parsed.InvocationConfiguration.Error, [new Finding("records-unavailable", "Records", exception.Message, null, "Try again when the database answers.")]);
             return ExitCode.Failure;
         }
+    }
+
+    private static int Newer(TextWriter error, RecordsVersionException exception)
+    {
+        FindingPrinter.Write(error, [LabStart.Newer(exception)]);
+        return ExitCode.BadInput;
     }
 
     private static int Report(ParseResult parsed, LabImportOutcome outcome)

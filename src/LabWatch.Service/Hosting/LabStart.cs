@@ -23,6 +23,22 @@ internal sealed class LabStart(string dataDirectory, RecordsOptions options, Tim
     /// <param name="cancellationToken">Ends the wait.</param>
     public async Task<(LabSnapshotSource? Lab, IReadOnlyList<Finding> Findings)> LoadAsync(LabOrder? order, bool lookOnly, CancellationToken cancellationToken)
     {
+        try
+        {
+            return await FindAsync(order, lookOnly, cancellationToken);
+        }
+        catch (RecordsVersionException exception)
+        {
+            return (null, [Newer(exception)]);
+        }
+    }
+
+    /// <summary>The finding for records that a newer program has written.</summary>
+    internal static Finding Newer(RecordsVersionException exception) =>
+        new("records-newer", "--data", exception.Message, null, "Install the newer version again, or restore the backup from before the upgrade.");
+
+    private async Task<(LabSnapshotSource? Lab, IReadOnlyList<Finding> Findings)> FindAsync(LabOrder? order, bool lookOnly, CancellationToken cancellationToken)
+    {
         LabInForce? known = Known();
         if (order is null or { IsFirst: true })
         {

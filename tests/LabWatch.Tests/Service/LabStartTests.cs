@@ -161,6 +161,21 @@ public sealed class LabStartTests : IDisposable
         Assert.Equal("no-lab-file", Assert.Single((await LoadAsync(null)).Findings).Code);
 
     [Fact]
+    public async Task Records_of_a_newer_program_refuse_the_start_with_a_finding()
+    {
+        await StartAsync(LabFileSample.Text);
+        await using (SqliteConnection connection = new($"Data Source={Database};Pooling=False"))
+        {
+            await connection.OpenAsync(Token);
+            await using SqliteCommand command = connection.CreateCommand();
+            command.CommandText = "INSERT INTO \"__EFMigrationsHistory\" VALUES ('29990101000000_Future', '99.0.0');";
+            await command.ExecuteNonQueryAsync(Token);
+        }
+
+        Assert.Equal("records-newer", Assert.Single((await LoadAsync(Changed)).Findings).Code);
+    }
+
+    [Fact]
     public async Task What_another_node_recorded_comes_into_force()
     {
         LabSnapshotSource lab = await StartAsync(LabFileSample.Text);

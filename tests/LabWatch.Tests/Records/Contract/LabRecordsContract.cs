@@ -129,6 +129,20 @@ public abstract class LabRecordsContract : IAsyncLifetime
     }
 
     [Fact]
+    public async Task A_later_revision_that_the_file_does_not_have_is_told_and_left_alone()
+    {
+        await ImportAsync(LabFileSample.Text);
+        await ReviseAsync(LabRecordKind.Limit, Limit(2, 15));
+        LabImportOutcome outcome = await ImportAsync(LabFileSample.Text + "\n", Day);
+        Assert.Empty(outcome.Refused);
+        Assert.Equal([new LabChange("kept", "limit/fir-stability@2")], outcome.Plan.Changes);
+        Assert.Equal((2, 13), (outcome.Import!.Sequence, outcome.Records!.Sequence));
+        LabImportOutcome both = await Records.ImportAsync(new LabImportOrder(outcome.Records.Compose()!, "copy.json", "os/kim", Sample.Noon + Day + Day), Token);
+        Assert.Empty(both.Refused);
+        Assert.Empty(both.Plan.Changes);
+    }
+
+    [Fact]
     public async Task What_the_file_would_revert_or_withdraw_is_refused_until_it_is_accepted()
     {
         await ImportAsync(LabFileSample.Text);
