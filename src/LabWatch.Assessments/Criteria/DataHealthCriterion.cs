@@ -15,7 +15,7 @@ namespace LabWatch.Assessments.Criteria;
 /// <para><b>Value.</b> Percent of the readings promised by a channel in the window that are missing or bad, of the worst channel on which a
 /// result or a hazard rests. With N promised, M missing and B bad among R received: (M + (N - M) B/R)/N. It is a count and has no uncertainty.</para>
 /// <para><b>Bad</b> is a reading without a value, outside the range of the sensor (a radiation thermometer that shows that it is out of range
-/// excepted), with a device time ahead of the clock, a spike (more than 6 standard deviations from the median of eleven neighbours), or stuck
+/// excepted), with a device time ahead of the clock, a spike (more than 8 standard deviations from the median of eleven neighbours), or stuck
 /// (see <see cref="StuckValue"/>).</para>
 /// <para>Of a source that was silent altogether in the lead-in the promise counts from its first reading: it has been put into service, or has come back.</para>
 /// <para><b>Not in the value.</b> Lateness is told only by the mark that the intake sets, because no time of arrival is stored: a late reading is as good as

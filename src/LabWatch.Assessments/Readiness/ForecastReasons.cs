@@ -32,7 +32,7 @@ internal static class ForecastReasons
         }
 
         Instant earliest = input.Now + approach.Earliest;
-        Instant? ready = Schedule(input) is { } schedule ? FirstJudged(schedule, earliest) : null;
+        Instant? ready = Schedule(input) is { } schedule ? FirstJudged(schedule, earliest + schedule.Reach) : null;
         string then = ready is { } at ? $"; its stability there can have been shown at {Moments.Text(at)} at the earliest" : string.Empty;
         return (
             new(earliest, input.Now + approach.Latest, ready),
@@ -48,15 +48,19 @@ internal static class ForecastReasons
         }
 
         Instant next = schedule.LastDue(input.Now) + schedule.Every + schedule.Grace;
-        Instant counted = ChangedAt(input) is { } changed ? FirstJudged(schedule, changed) : next;
-        Instant ready = counted > next ? counted : next;
+        Instant?[] bounds =
+        [
+            next,
+            ChangedAt(input) is { } changed ? FirstJudged(schedule, changed + schedule.Reach) : null,
+            FirstHeard(input) is { } heard ? FirstJudged(schedule, heard + schedule.Window + (schedule.LeadIn * StabilityObstacles.LeastLeadInCoverage)) : null,
+        ];
+        Instant ready = bounds.Max()!.Value;
         return (new(null, null, ready), Told($"The next window that can show its stability is judged at {Moments.Text(ready)}."));
     }
 
-    /// <summary>Windows count that begin a lead-in after the change, and end on the schedule.</summary>
-    private static Instant FirstJudged(CriterionSchedule schedule, Instant from)
+    /// <summary>When the first window on the schedule that ends then or later will have been judged.</summary>
+    private static Instant FirstJudged(CriterionSchedule schedule, Instant end)
     {
-        Instant end = from + schedule.Reach;
         Instant onSchedule = schedule.EndAtOrBefore(end);
         return (onSchedule < end ? onSchedule + schedule.Every : onSchedule) + schedule.Grace;
     }
@@ -67,6 +71,15 @@ internal static class ForecastReasons
     private static Instant? ChangedAt(ReadinessInput input) =>
         input.Source.Channels.FirstOrDefault(channel => channel.Quantity is ChannelQuantity.SetPoint) is { } channel
             ? SetPointHistory.Of(input.Recent?.Find(channel.Id)).ChangedAt
+            : null;
+
+    /// <summary>The first recent reading of the reference; null where it was heard all the time.</summary>
+    private static Instant? FirstHeard(ReadinessInput input) =>
+        SourceNow.ReferenceOf(input.Source) is { } reference
+        && input.Recent?.Find(reference.Id) is { Count: > 0 } series
+        && new Instant(series.TimeMicroseconds.Span[0]) is var first
+        && first - input.Recent.Window.Start > reference.Interval * 5
+            ? first
             : null;
 
     private static TemperatureSeries Temperatures(ReadinessInput input, Channel reference, ReadingWindow recent)

@@ -163,6 +163,10 @@ public sealed class ReadinessReasonsTests
         store.Add(TestLab.Rowan, TestLab.SetPoints(TestLab.Noon - TimeSpan.FromHours(1), Now, time => time < TestLab.Noon + TimeSpan.FromMinutes(3) ? 200 : 300));
         SourceReadiness changed = ReadinessEvaluator.Evaluate(input with { Recent = store.Read(TestLab.Rowan, null, new(Now - TimeSpan.FromHours(1), Now)) });
         Assert.Equal(Instant.From(new DateTimeOffset(2026, 12, 1, 13, 10, 30, TimeSpan.Zero)), changed.Forecast!.ReadyNotBefore);
+        FakeReadingStore fresh = new();
+        fresh.Add(TestLab.Rowan, TestLab.Run(TestLab.Noon + TimeSpan.FromMinutes(20), Now));
+        SourceReadiness begun = ReadinessEvaluator.Evaluate(input with { Recent = fresh.Read(TestLab.Rowan, null, new(Now - TimeSpan.FromHours(1), Now)) });
+        Assert.Equal(Instant.From(new DateTimeOffset(2026, 12, 1, 13, 10, 30, TimeSpan.Zero)), begun.Forecast!.ReadyNotBefore);
         SourceReadiness steady = ReadinessEvaluator.Evaluate(input);
         Assert.Equal(Instant.From(new DateTimeOffset(2026, 12, 1, 12, 40, 30, TimeSpan.Zero)), steady.Forecast!.ReadyNotBefore);
         Assert.Null(Judge([Stability()]).Forecast);

@@ -14,9 +14,10 @@ internal static class ChannelExamination
     private const int SpikeNeighbours = 5;
 
     /// <summary>
-    /// Standard deviations that make a spike: 6 where 3 is the custom, so that of a million readings with normal noise none is called one.
+    /// Standard deviations that make a spike: 8 where 3 is the custom, because a thermometer in a stirred or drawn fluid moves more than its white noise,
+    /// and a disturbance on a line is larger still.
     /// </summary>
-    private const double SpikeDeviations = 6;
+    private const double SpikeDeviations = 8;
 
     /// <summary>Examines a channel.</summary>
     /// <param name="channel">The channel.</param>
