@@ -7,13 +7,16 @@
   Then:           .\install-service.ps1 -Program C:\LabWatch\labwatch.exe -LabFile C:\LabWatch\lab.json
   The service runs as its own virtual account and keeps its data in ProgramData\labwatch. It starts with the machine and is started
   again when it ends by itself; it stays down when the lab file is wrong (see the Application event log for the findings).
+  The first start keeps a code for the set-up in ProgramData\labwatch\set-up-code: open the page /set-up and enter it.
   LabWatch is not a protective device.
 .PARAMETER Program
   Full path of labwatch.exe.
 .PARAMETER LabFile
   Full path of the lab file.
 .PARAMETER Urls
-  Where pages and API are served.
+  Where pages and API are served. For other machines https://0.0.0.0:5443 together with -Certificate.
+.PARAMETER Certificate
+  The word own for a self-signed certificate, or the full path of a PFX or PEM file.
 .PARAMETER Remove
   Stops the service and takes it away; the data stay.
 #>
@@ -21,6 +24,7 @@ param(
   [Parameter(ParameterSetName = 'Install', Mandatory)] [string] $Program,
   [Parameter(ParameterSetName = 'Install', Mandatory)] [string] $LabFile,
   [Parameter(ParameterSetName = 'Install')] [string] $Urls = 'http://127.0.0.1:5080',
+  [Parameter(ParameterSetName = 'Install')] [string] $Certificate,
   [Parameter(ParameterSetName = 'Remove', Mandatory)] [switch] $Remove
 )
 $ErrorActionPreference = 'Stop'
@@ -41,8 +45,9 @@ foreach ($path in $Program, $LabFile) {
 }
 
 # Wrong input is told now, not in an event log.
-& $Program check-config --lab $LabFile
-if ($LASTEXITCODE -ne 0) { throw 'The lab file has findings (above). Correct them first.' }
+if ($Certificate) { $env:LABWATCH__Web__Certificate = $Certificate }
+& $Program check-config --lab $LabFile --urls $Urls
+if ($LASTEXITCODE -ne 0) { throw 'Lab file or options have findings (above). Correct them first.' }
 
 $data = Join-Path $env:ProgramData 'labwatch'
 New-Item -ItemType Directory -Force -Path $data | Out-Null
@@ -50,6 +55,9 @@ $command = '"{0}" serve --lab "{1}" --urls {2} --data "{3}"' -f $Program, $LabFi
 & sc.exe create $name binPath= $command start= delayed-auto obj= $account DisplayName= 'LabWatch' | Out-Null
 if ($LASTEXITCODE -ne 0) { throw "The service could not be created (sc.exe says $LASTEXITCODE)." }
 & sc.exe description $name 'Watches reference blackbody sources. Not a protective device.' | Out-Null
+if ($Certificate) {
+  New-ItemProperty -Path "HKLM:\SYSTEM\CurrentControlSet\Services\$name" -Name Environment -PropertyType MultiString -Value "LABWATCH__Web__Certificate=$Certificate" -Force | Out-Null
+}
 # Start again after 2 s, 10 s, 60 s, also when the process ends with an exit code instead of a crash.
 & sc.exe failure $name reset= 86400 actions= restart/2000/restart/10000/restart/60000 | Out-Null
 & sc.exe failureflag $name 1 | Out-Null

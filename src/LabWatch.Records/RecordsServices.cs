@@ -1,4 +1,5 @@
 using LabWatch.Lab.Findings;
+using LabWatch.Records.Accounts;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
@@ -44,6 +45,8 @@ public static class RecordsServices
         services.TryAddSingleton<ILabImportLedger, LabImportLedger>();
         services.TryAddSingleton<ILabRecords, LabRecords>();
         services.TryAddSingleton<IRunLedger, RunLedger>();
+        services.TryAddSingleton<IAccountLedger, AccountLedger>();
+        services.TryAddSingleton<ISessionLedger, SessionLedger>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, RecordsStartup>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, TrailHeadKeeper>());
         return services;

@@ -1,4 +1,5 @@
 using LabWatch.Service.Api.Access;
+using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Api.Alerts;
 using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Audit;
@@ -21,14 +22,21 @@ internal static class ApiMapping
     public static WebApplication MapLabWatchApi(this WebApplication app)
     {
         ArgumentNullException.ThrowIfNull(app);
+        app.UseForwardedHeaders();
         app.UseResponseCompression();
         SecurityHeaders.Use(app);
         FailureAnswers.Use(app);
+        HostGuard.Use(app);
         CrossSiteGuard.Use(app);
         PagesMapping.ServeFiles(app);
         app.UseAuthentication();
+        app.UseRateLimiter();
         app.UseAuthorization();
         RouteGroupBuilder api = app.MapGroup("/api/v1");
+        SignInEndpoints.Map(api);
+        MeEndpoints.Map(api);
+        AccountEndpoints.Map(api);
+        TokenEndpoints.Map(api);
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
         AlertEndpoints.Map(api);

@@ -2,6 +2,7 @@ using System.IO.Compression;
 using System.Text.Json.Serialization;
 using LabWatch.Lab.Readings;
 using LabWatch.Service.Api.Access;
+using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Api.Configured;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
@@ -62,6 +63,7 @@ internal static class ApiRegistration
     private static void AddHttp(IServiceCollection services)
     {
         AccessRegistration.Add(services);
+        RateLimits.Add(services);
         services.AddProblemDetails();
         services.ConfigureHttpJsonOptions(options =>
         {

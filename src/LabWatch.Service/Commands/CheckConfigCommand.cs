@@ -3,6 +3,7 @@ using LabWatch.Lab.Findings;
 using LabWatch.Lab.LabFile;
 using LabWatch.Service.Configuration;
 using LabWatch.Service.Hosting;
+using LabWatch.Service.Web;
 
 namespace LabWatch.Service.Commands;
 
@@ -14,7 +15,7 @@ internal static class CheckConfigCommand
         Option<FileInfo> lab = new("--lab") { Description = "Lab file to check.", HelpName = "FILE" };
         Option<bool> json = new("--json") { Description = "Write the findings as a JSON array." };
         Option<bool> schema = new("--schema") { Description = "Write the JSON Schema of the lab file and do nothing else." };
-        Command command = new("check-config", "List all findings about a lab file and the options at once: where, value, cure.") { lab, CommonOptions.Config, json, schema };
+        Command command = new("check-config", "List all findings about a lab file and the options at once: where, value, cure.") { lab, CommonOptions.Config, CommonOptions.Urls, json, schema };
         command.SetAction(parsed =>
         {
             TextWriter output = parsed.InvocationConfiguration.Output;
@@ -24,7 +25,7 @@ internal static class CheckConfigCommand
                 return ExitCode.Success;
             }
 
-            List<Finding> findings = [.. CheckOptions(parsed.GetValue(CommonOptions.Config)?.FullName)];
+            List<Finding> findings = [.. CheckOptions(parsed.GetValue(CommonOptions.Config)?.FullName, parsed.GetValue(CommonOptions.Urls)!)];
             FileInfo? file = parsed.GetValue(lab);
             findings.AddRange(file is null ? [] : CheckLabFile(file.FullName));
             return Report(output, findings, parsed.GetValue(json), file is not null);
@@ -32,10 +33,16 @@ internal static class CheckConfigCommand
         return command;
     }
 
-    private static IReadOnlyList<Finding> CheckOptions(string? file)
+    private static IReadOnlyList<Finding> CheckOptions(string? file, string urls)
     {
         (IConfigurationRoot? configuration, IReadOnlyList<Finding> unreadable) = SettingsReader.Load(file);
-        return configuration is null ? unreadable : SettingsReader.Read(configuration, DataDirectory.DefaultPath("labwatch"), "check").Findings;
+        if (configuration is null)
+        {
+            return unreadable;
+        }
+
+        (ServiceSettings settings, IReadOnlyList<Finding> findings) = SettingsReader.Read(configuration, DataDirectory.DefaultPath("labwatch"), "check");
+        return [.. findings, .. WebAddresses.Check(WebAddresses.Parse(urls), settings.Web)];
     }
 
     private static IReadOnlyList<Finding> CheckLabFile(string path)

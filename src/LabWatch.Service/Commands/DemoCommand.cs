@@ -3,6 +3,7 @@ using System.Text;
 using LabWatch.Intake.Options;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
+using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Configuration;
 using LabWatch.Service.Hosting;
 using LabWatch.Simulator;
@@ -48,6 +49,7 @@ internal static class DemoCommand
 
         EmbeddedBrokerOptions broker = start.Settings.Intake.EmbeddedBroker!;
         DemoOptions demo = new((int)parsed.GetValue(Days), (long)parsed.GetValue(Seed), broker.Address, broker.Port, start.Data.Path) { TopicRoot = start.Settings.Intake.Root };
+        DemoCredentials people = DemoCredentials.For(DemoPeople.All.Select(person => person.Name));
         using (start.Data)
         {
             return await ServiceRun.RunAsync(
@@ -55,8 +57,10 @@ internal static class DemoCommand
                 {
                     services.AddLabWatchDemo(demo);
                     services.AddHostedService<DemoClockKeeper>();
+                    services.AddSingleton(people);
+                    services.AddHostedService<DemoPeople>();
                 }),
-                urls => Greet(parsed.InvocationConfiguration.Output, urls, start, speed),
+                urls => Greeting.Demo(parsed.InvocationConfiguration.Output, [.. urls], start, speed, people),
                 error,
                 cancellationToken);
         }
@@ -87,15 +91,4 @@ internal static class DemoCommand
     // The first start writes the lab file for its day; later starts go on with the one in force.
     private static (LabOrder? Order, Finding? Finding) GiveLab(DataDirectory data, TimeProvider clock) =>
         (new LabOrder(Encoding.UTF8.GetBytes(DemoLab.LabFileFor(Instant.Now(clock))), "the demo's lab file", "labwatch") { IsFirst = true }, null);
-
-    private static void Greet(TextWriter output, IEnumerable<string> urls, ServiceStart start, double speed)
-    {
-        output.WriteLine();
-        output.WriteLine($"  {start.Lab.Current.Site.Name}: an invented laboratory, its telemetry simulated{(speed == 1 ? string.Empty : FormattableString.Invariant($", {speed} times faster than the clock"))}.");
-        output.WriteLine($"  Open  {string.Join("  or  ", urls)}");
-        output.WriteLine($"  MQTT  127.0.0.1:{start.Settings.Intake.EmbeddedBroker!.Port}");
-        output.WriteLine($"  Data  {start.Data.Path}  (a later start goes on from there)");
-        output.WriteLine("  LabWatch is not a protective device. Ctrl-C ends it.");
-        output.WriteLine();
-    }
 }

@@ -33,7 +33,7 @@ internal static class ServeCommand
             {
                 return await ServiceRun.RunAsync(
                     LabWatchHost.Build(start),
-                    urls => output.WriteLine($"LabWatch watches {start.Lab.Current.Site.Name} at {string.Join(" and ", urls)}. It is not a protective device. Ctrl-C ends it."),
+                    urls => Greeting.Serve(output, [.. urls], start),
                     error,
                     cancellationToken);
             }

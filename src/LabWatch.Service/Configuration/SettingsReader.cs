@@ -4,6 +4,8 @@ using LabWatch.Intake.Options;
 using LabWatch.Lab.Findings;
 using LabWatch.Readings;
 using LabWatch.Records;
+using LabWatch.Service.Api.Access;
+using LabWatch.Service.Web;
 
 namespace LabWatch.Service.Configuration;
 
@@ -14,7 +16,7 @@ namespace LabWatch.Service.Configuration;
 internal static class SettingsReader
 {
     private const string Prefix = "LABWATCH__";
-    private static readonly string[] Sections = ["Intake", "Readings", "Records", "Assessments", "Alerts", "Logging"];
+    private static readonly string[] Sections = ["Intake", "Readings", "Records", "Assessments", "Alerts", "Access", "Web", "Logging"];
 
     /// <summary>The configuration of a file (none where null) and of the environment.</summary>
     public static (IConfigurationRoot? Configuration, IReadOnlyList<Finding> Findings) Load(string? file)
@@ -61,12 +63,16 @@ internal static class SettingsReader
             Bound(configuration, "Readings", new ReadingsOptions { DataDirectory = dataDirectory }, findings),
             Bound(configuration, "Records", RecordsOptions.InDirectory(dataDirectory), findings),
             Bound(configuration, "Assessments", new AssessmentsOptions { TraceDirectory = Path.Combine(dataDirectory, "cavities") }, findings),
-            Bound(configuration, "Alerts", new AlertsOptions { DataDirectory = dataDirectory, SecretsDirectory = secrets }, findings));
+            Bound(configuration, "Alerts", new AlertsOptions { DataDirectory = dataDirectory, SecretsDirectory = secrets }, findings),
+            Bound(configuration, "Access", new AccessOptions(), findings),
+            Bound(configuration, "Web", new WebOptions(), findings));
         findings.AddRange(Named("Intake", settings.Intake.Validate()));
         findings.AddRange(Named("Readings", settings.Readings.Validate()));
         findings.AddRange(Named("Records", settings.Records.Validate()));
         findings.AddRange(Named("Assessments", settings.Assessments.Validate()));
         findings.AddRange(Named("Alerts", settings.Alerts.Validate()));
+        findings.AddRange(Named("Access", settings.Access.Validate()));
+        findings.AddRange(Named("Web", settings.Web.Validate()));
         return (settings, findings);
     }
 

@@ -6,7 +6,9 @@ using LabWatch.Lab;
 using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Service.Api;
+using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Api.Health;
+using LabWatch.Service.Web;
 using Microsoft.Extensions.DependencyInjection.Extensions;
 
 namespace LabWatch.Service.Hosting;
@@ -27,6 +29,7 @@ internal static class LabWatchHost
         builder.Configuration.AddConfiguration(start.Configuration);
         builder.WebHost.UseUrls(start.Urls.Split(';', StringSplitOptions.RemoveEmptyEntries | StringSplitOptions.TrimEntries));
         builder.WebHost.UseKestrelHttpsConfiguration();
+        WebServing.Configure(builder, start.Settings.Web, start.Certificate);
         AddLogging(builder);
         builder.Services.AddSystemd();
         builder.Services.AddWindowsService(options => options.ServiceName = "LabWatch");
@@ -49,6 +52,9 @@ internal static class LabWatchHost
         services.AddSingleton(start.Settings);
         services.AddSingleton(start.Lab);
         services.AddSingleton<ILabSnapshotSource>(start.Lab);
+        services.AddSingleton(new HostNames(WebAddresses.AllowedHosts(WebAddresses.Parse(start.Urls), start.Settings.Web)));
+        services.AddSingleton(start.Settings.Access);
+        services.AddSingleton(new SetUpFile(Path.Combine(start.Data.Path, "set-up-code")));
         services.AddLabWatchRecords(start.Settings.Records);
         services.AddLabWatchReadings(start.Settings.Readings);
         services.AddLabWatchAlerts(start.Settings.Alerts);

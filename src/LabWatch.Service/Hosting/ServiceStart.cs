@@ -1,4 +1,5 @@
 using LabWatch.Service.Configuration;
+using LabWatch.Service.Web;
 
 namespace LabWatch.Service.Hosting;
 
@@ -9,5 +10,7 @@ namespace LabWatch.Service.Hosting;
 /// <param name="Configuration">What the options were read from, for logging levels.</param>
 /// <param name="Urls">Where pages and API are served.</param>
 /// <param name="Clock">The clock that everything asks.</param>
+/// <param name="Certificate">The certificate for https; null where nothing is served by it.</param>
 internal sealed record ServiceStart(
-    DataDirectory Data, LabSnapshotSource Lab, ServiceSettings Settings, IConfiguration Configuration, string Urls, TimeProvider Clock);
+    DataDirectory Data, LabSnapshotSource Lab, ServiceSettings Settings, IConfiguration Configuration, string Urls, TimeProvider Clock,
+    CertificateKeeper? Certificate);

@@ -1,5 +1,7 @@
+using LabWatch.Intake.Secrets;
 using LabWatch.Lab.Findings;
 using LabWatch.Service.Configuration;
+using LabWatch.Service.Web;
 
 namespace LabWatch.Service.Hosting;
 
@@ -34,8 +36,9 @@ internal static class StartPreparation
         TimeProvider clock = makeClock(data);
         (ServiceSettings settings, IReadOnlyList<Finding> optionFindings) = SettingsReader.Read(configuration, data.Path, InstallationId.Of(data.Path));
         settings = adapt?.Invoke(settings) ?? settings;
+        (CertificateKeeper? certificate, IReadOnlyList<Finding> webFindings) = WebFindings(urls, settings, data);
         (LabOrder? order, Finding? unreadableLab) = giveLab(data, clock);
-        List<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. PortFindings(settings), .. unreadableLab is null ? [] : new[] { unreadableLab }];
+        List<Finding> findings = [.. UrlFindings(urls), .. optionFindings, .. webFindings, .. PortFindings(settings), .. unreadableLab is null ? [] : new[] { unreadableLab }];
         (LabSnapshotSource? lab, IReadOnlyList<Finding> labFindings) = unreadableLab is not null || settings.Records.Validate().Count > 0
             ? (null, [])
             : await new LabStart(data.Path, settings.Records, clock).LoadAsync(order, lookOnly: findings.Count > 0, cancellationToken);
@@ -47,7 +50,21 @@ internal static class StartPreparation
         }
 
         lab.Keep();
-        return (new ServiceStart(data, lab, settings, configuration, urls, clock), []);
+        return (new ServiceStart(data, lab, settings, configuration, urls, clock, certificate), []);
+    }
+
+    private static (CertificateKeeper? Certificate, IReadOnlyList<Finding> Findings) WebFindings(string urls, ServiceSettings settings, DataDirectory data)
+    {
+        IReadOnlyList<Uri> addresses = WebAddresses.Parse(urls);
+        Finding[] findings = [.. WebAddresses.Check(addresses, settings.Web)];
+        if (findings.Length > 0 || settings.Web.Certificate is null || !addresses.Any(address => address.Scheme == Uri.UriSchemeHttps))
+        {
+            return (null, findings);
+        }
+
+        SecretReader secrets = new(settings.Intake.SecretsDirectory, Environment.GetEnvironmentVariable);
+        CertificateKeeper certificate = new(settings.Web, data.Keys, [.. addresses.Select(address => address.Host), .. settings.Web.HostNames], secrets, TimeProvider.System);
+        return (certificate, certificate.Open());
     }
 
     private static IEnumerable<Finding> PortFindings(ServiceSettings settings) => settings.Intake.EmbeddedBroker is { } broker
@@ -66,9 +83,7 @@ internal static class StartPreparation
         List<Uri> usable = [];
         foreach (string url in all)
         {
-            // A star or plus stands for every address of the machine.
-            string readable = url.Replace("//*", "//0.0.0.0", StringComparison.Ordinal).Replace("//+", "//0.0.0.0", StringComparison.Ordinal);
-            if (Uri.TryCreate(readable, UriKind.Absolute, out Uri? parsed) && (parsed.Scheme == Uri.UriSchemeHttp || parsed.Scheme == Uri.UriSchemeHttps))
+            if (WebAddresses.Read(url) is { } parsed)
             {
                 usable.Add(parsed);
             }

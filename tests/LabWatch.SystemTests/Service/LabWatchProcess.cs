@@ -21,6 +21,9 @@ internal sealed class LabWatchProcess : IAsyncDisposable
         _process = process;
         Address = address;
         Client = new HttpClient { BaseAddress = address, Timeout = TimeSpan.FromSeconds(30) };
+
+        // As a browser does: with a cookie, a change must come from the service's own pages.
+        Client.DefaultRequestHeaders.Add("Origin", address.GetLeftPart(UriPartial.Authority));
     }
 
     /// <summary>Where pages and API are.</summary>

@@ -12,6 +12,7 @@ internal sealed class ServiceFixture : IAsyncDisposable
     private readonly TemporaryDirectory _directory = new();
     private readonly int _port = LabWatchProcess.FreePort();
     private LabWatchProcess? _service;
+    private string? _token;
 
     /// <summary>Prepares a data directory and a lab file.</summary>
     /// <param name="editLab">Changes the text of the sample lab file.</param>
@@ -46,6 +47,8 @@ internal sealed class ServiceFixture : IAsyncDisposable
         Environment.TryAdd("LABWATCH__Intake__EmbeddedBroker__Port", BrokerPort.ToString(CultureInfo.InvariantCulture));
         _service = LabWatchProcess.Start(["serve", "--lab", _directory.At("lab.json"), "--data", Data], Environment, _port, Launcher);
         await _service.WaitUntilReadyAsync(cancellationToken);
+        _token ??= await _service.SetUpAsync(Data, cancellationToken);
+        _service.UseToken(_token);
     }
 
     /// <summary>The raw readings of a channel of the source fir: time in microseconds and value, in the order given.</summary>

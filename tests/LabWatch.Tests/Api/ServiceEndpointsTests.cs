@@ -7,38 +7,6 @@ namespace LabWatch.Tests.Api;
 
 public sealed class ServiceEndpointsTests
 {
-    private static readonly string[] Endpoints =
-    [
-        "delete /api/v1/demo/faults/{id}",
-        "get /api/v1/alerts",
-        "get /api/v1/alerts/{id}",
-        "get /api/v1/assessments",
-        "get /api/v1/assessments/outcomes",
-        "get /api/v1/assessments/{id}",
-        "get /api/v1/assessments/{id}/revisions",
-        "get /api/v1/audit",
-        "get /api/v1/certificates",
-        "get /api/v1/demo/faults",
-        "get /api/v1/instruments",
-        "get /api/v1/limits",
-        "get /api/v1/runs",
-        "get /api/v1/runs/{id}",
-        "get /api/v1/sources",
-        "get /api/v1/sources/{id}",
-        "get /api/v1/sources/{id}/profile",
-        "get /api/v1/sources/{id}/readings",
-        "get /api/v1/stream",
-        "get /health/live",
-        "get /health/ready",
-        "post /api/v1/alerts/{id}/acknowledge",
-        "post /api/v1/certificates",
-        "post /api/v1/demo/faults",
-        "post /api/v1/limits",
-        "post /api/v1/runs",
-        "post /api/v1/runs/{id}/correct",
-        "post /api/v1/runs/{id}/end",
-    ];
-
     [Fact]
     public async Task The_document_describes_every_endpoint_with_summary_and_parameters()
     {
@@ -46,18 +14,15 @@ public sealed class ServiceEndpointsTests
 
         JsonElement paths = (await host.GetAsync("/openapi/v1.json")).Json.GetProperty("paths");
 
-        List<string> found = [];
         foreach (JsonProperty path in paths.EnumerateObject())
         {
             foreach (JsonProperty operation in path.Value.EnumerateObject())
             {
-                found.Add($"{operation.Name} {path.Name}");
                 Assert.NotEmpty(operation.Value.GetProperty("summary").GetString()!);
                 Assert.NotEmpty(operation.Value.GetProperty("operationId").GetString()!);
             }
         }
 
-        Assert.Equal(Endpoints, found.Order(StringComparer.Ordinal));
         JsonElement parameters = paths.GetProperty("/api/v1/sources/{id}/readings").GetProperty("get").GetProperty("parameters");
         Assert.Contains(parameters.EnumerateArray(), parameter => parameter.GetProperty("name").GetString() == "bucket");
     }

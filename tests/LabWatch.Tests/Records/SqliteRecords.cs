@@ -1,4 +1,5 @@
 using LabWatch.Records;
+using LabWatch.Records.Accounts;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
@@ -35,6 +36,10 @@ internal sealed class SqliteRecords : IRecordsUnderTest
     public IAssessmentLedger Assessments => _services.GetRequiredService<IAssessmentLedger>();
 
     public IAlertLedger Alerts => _services.GetRequiredService<IAlertLedger>();
+
+    public IAccountLedger Accounts => _services.GetRequiredService<IAccountLedger>();
+
+    public ISessionLedger Sessions => _services.GetRequiredService<ISessionLedger>();
 
     public ILabImportLedger LabImports => _services.GetRequiredService<ILabImportLedger>();
 

@@ -19,6 +19,8 @@ internal static class CoveredTables
         CoveredTable.AppendOnly<LabImportRow>("lab-import/{sequence}"),
         CoveredTable.AppendOnly<RevisionRow>("record/{kind}/{id}@{revision}"),
         CoveredTable.AppendOnly<RunStepRow>("run/{run_id}/{number}"),
+        CoveredTable.AppendOnly<AccountRow>("account/{name}/{revision}"),
+        CoveredTable.Changing<TokenRow>("token/{id}", "last_used_at"),
     ];
 
     /// <summary>The description of a row's table.</summary>

@@ -10,6 +10,10 @@ internal static class AccessRules
         where TBuilder : IEndpointConventionBuilder =>
         endpoint.WithMetadata(new PermissionNeeded(permission)).RequireAuthorization(new AuthorizeAttribute(PolicyOf(permission)));
 
+    /// <summary>Everybody who is signed in, with whatever role, also while the password has to be changed.</summary>
+    public static TBuilder AllowSignedIn<TBuilder>(this TBuilder endpoint)
+        where TBuilder : IEndpointConventionBuilder => endpoint.RequireAuthorization();
+
     /// <summary>Everybody, strangers too.</summary>
     public static TBuilder AllowStrangers<TBuilder>(this TBuilder endpoint)
         where TBuilder : IEndpointConventionBuilder => endpoint.WithMetadata(new AllowAnonymousAttribute());

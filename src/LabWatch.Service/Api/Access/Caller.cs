@@ -1,4 +1,5 @@
 using System.Collections.Immutable;
+using LabWatch.Lab.Time;
 using LabWatch.Records.Accounts;
 
 namespace LabWatch.Service.Api.Access;
@@ -12,8 +13,23 @@ internal sealed record Caller(string Name, string DisplayName, ImmutableArray<Ro
     /// <summary>What the roles allow.</summary>
     public ImmutableHashSet<Permission> Permissions { get; } = Access.Permissions.Of(Roles);
 
-    /// <summary>Whether the roles allow something.</summary>
-    public bool May(Permission permission) => Permissions.Contains(permission);
+    /// <summary>Id of the session; null where a token calls.</summary>
+    public Guid? Session { get; init; }
+
+    /// <summary>When the session or token ends.</summary>
+    public Instant ExpiresAt { get; init; } = Instant.MaxValue;
+
+    /// <summary>When the password was last entered in the session; null where a token calls.</summary>
+    public Instant? ConfirmedAt { get; init; }
+
+    /// <summary>Whether nothing but a change of the password is allowed.</summary>
+    public bool MustChangePassword { get; init; }
+
+    /// <summary>What the roles allow, but not before the password is entered again.</summary>
+    public ImmutableHashSet<Permission> ToBeConfirmed { get; init; } = [];
+
+    /// <summary>Whether something is allowed now.</summary>
+    public bool May(Permission permission) => !MustChangePassword && Permissions.Contains(permission) && !ToBeConfirmed.Contains(permission);
 
     /// <summary>
     /// Who makes this request. Throws <see cref="InvalidOperationException"/> on an endpoint that is open to strangers; every other endpoint

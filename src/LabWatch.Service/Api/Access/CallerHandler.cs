@@ -1,7 +1,9 @@
 using System.Security.Claims;
 using System.Text.Encodings.Web;
+using LabWatch.Records;
 using LabWatch.Service.Api.Requests;
 using Microsoft.AspNetCore.Authentication;
+using Microsoft.AspNetCore.Authorization;
 using Microsoft.Extensions.Options;
 
 namespace LabWatch.Service.Api.Access;
@@ -19,7 +21,7 @@ internal sealed class CallerHandler(
 
     protected override async Task<AuthenticateResult> HandleAuthenticateAsync()
     {
-        Caller? caller = await callers.FindAsync(Context);
+        Caller? caller = await FindAsync();
         if (caller is null)
         {
             return AuthenticateResult.NoResult();
@@ -27,7 +29,10 @@ internal sealed class CallerHandler(
 
         Context.Features.Set(caller);
         ClaimsIdentity identity = new(
-            [new Claim(ClaimTypes.Name, caller.Name), .. caller.Permissions.Select(permission => new Claim(PermissionClaim, Names.Of(permission)))],
+            [
+                new Claim(ClaimTypes.Name, caller.Name),
+                .. caller.Permissions.Where(caller.May).Select(permission => new Claim(PermissionClaim, Names.Of(permission))),
+            ],
             SchemeName);
         return AuthenticateResult.Success(new AuthenticationTicket(new ClaimsPrincipal(identity), SchemeName));
     }
@@ -40,8 +45,20 @@ internal sealed class CallerHandler(
 
     protected override Task HandleForbiddenAsync(AuthenticationProperties properties)
     {
-        string? needed = Context.GetEndpoint()?.Metadata.GetMetadata<PermissionNeeded>() is { } metadata ? Names.Of(metadata.Permission) : null;
-        return Refusals.Forbidden(
-            "not-permitted", "The roles of this account do not allow this.", needed, "Ask somebody whose role does, or an administrator for the role.").ExecuteAsync(Context);
+        Permission? needed = Context.GetEndpoint()?.Metadata.GetMetadata<PermissionNeeded>()?.Permission;
+        return AccessRefusals.Of(Caller.Find(Context), needed).ExecuteAsync(Context);
+    }
+
+    // What strangers may see too, such as the health of the service, needs no records to say who asks.
+    private async ValueTask<Caller?> FindAsync()
+    {
+        try
+        {
+            return await callers.FindAsync(Context);
+        }
+        catch (RecordsUnavailableException) when (Context.GetEndpoint()?.Metadata.GetMetadata<IAllowAnonymous>() is not null)
+        {
+            return null;
+        }
     }
 }

@@ -5,25 +5,14 @@ namespace LabWatch.Service.Api.Alerts;
 
 /// <summary>Somebody has seen an alert and takes it on.</summary>
 internal sealed record AcknowledgeRequest(
-    [property: Description("Name of the person, 1 to 80 characters; required while the caller is not signed in.")] string? By,
     [property: Description("What that person saw or did, at most 1,000 characters; may be missing.")] string? Note)
 {
-    private const int MaximumName = 80;
     private const int MaximumNote = 1_000;
 
     /// <summary>What is wrong with it.</summary>
     public IReadOnlyList<Finding> Check()
     {
         List<Finding> findings = [];
-        if (string.IsNullOrWhiteSpace(By))
-        {
-            findings.Add(new Finding("missing", "/by", "The name of the person is missing.", null, "Say who acknowledges: the record names that person."));
-        }
-        else if (By.Trim().Length > MaximumName || By.Any(char.IsControl))
-        {
-            findings.Add(new Finding("not-a-name", "/by", "This is no name.", Finding.Quote(By), "Give 1 to 80 characters without line breaks."));
-        }
-
         if (Note is not null && (Note.Length > MaximumNote || Note.Any(c => char.IsControl(c) && c is not ('\n' or '\r' or '\t'))))
         {
             findings.Add(new Finding("not-a-note", "/note", "The note is too long or has control characters.", Finding.Quote(Note), "Give at most 1000 characters of text."));

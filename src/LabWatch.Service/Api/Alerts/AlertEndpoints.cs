@@ -77,7 +77,7 @@ internal static class AlertEndpoints
     }
 
     private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> AcknowledgeAsync(
-        string id, AcknowledgeRequest request, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)
+        string id, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)
     {
         IReadOnlyList<Finding> findings = request.Check();
         if (findings.Count > 0)
@@ -90,7 +90,7 @@ internal static class AlertEndpoints
             return Missing(id);
         }
 
-        string by = request.By!.Trim();
+        string by = Caller.Of(http).Name;
         string? note = string.IsNullOrWhiteSpace(request.Note) ? null : request.Note.Trim();
         AcknowledgeResult result = await desk.AcknowledgeAsync(guid, by, note, cancellationToken);
         if (result.Findings.Count > 0)

@@ -25,13 +25,14 @@ internal static class HealthEndpoints
 
     private static Ok<LiveView> Live() => TypedResults.Ok(new LiveView("live", SiteBoard.Version));
 
+    // Strangers learn whether, not what: the parts are for whoever is signed in.
     private static async Task<JsonHttpResult<HealthView>> ReadyAsync(
-        IEnumerable<IDependencyCheck> checks, TimeProvider clock, ILogger<HealthPartView> log, CancellationToken cancellationToken)
+        HttpContext http, IEnumerable<IDependencyCheck> checks, TimeProvider clock, ILogger<HealthPartView> log, CancellationToken cancellationToken)
     {
         HealthPartView[] parts = await Task.WhenAll(checks.Select(check => AskAsync(check, clock, log, cancellationToken)));
         bool isReady = parts.All(part => part.IsReady);
         return TypedResults.Json(
-            new HealthView(isReady ? "ready" : "not-ready", SiteBoard.Version, parts),
+            new HealthView(isReady ? "ready" : "not-ready", SiteBoard.Version, Caller.Find(http) is null ? [] : parts),
             statusCode: isReady ? StatusCodes.Status200OK : StatusCodes.Status503ServiceUnavailable);
     }
 

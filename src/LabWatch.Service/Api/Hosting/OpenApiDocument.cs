@@ -23,6 +23,7 @@ internal static class OpenApiDocument
             document.Servers?.Clear();
             return Task.CompletedTask;
         });
+        OpenApiAccess.Add(options);
         options.AddSchemaTransformer((schema, context, _) =>
         {
             Type type = Nullable.GetUnderlyingType(context.JsonTypeInfo.Type) ?? context.JsonTypeInfo.Type;

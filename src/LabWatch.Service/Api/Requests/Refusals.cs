@@ -33,7 +33,23 @@ internal static class Refusals
 
     /// <summary>Nobody is signed in.</summary>
     public static ProblemHttpResult NotSignedIn() =>
-        Refuse(StatusCodes.Status401Unauthorized, "not-signed-in", "Nobody is signed in.", null, "Sign in on the pages, or send a token: Authorization: Bearer lw_...");
+        Unauthorized("not-signed-in", "Nobody is signed in.", "Sign in on the pages, or send a token: Authorization: Bearer lw_...");
+
+    /// <summary>It is not known who calls.</summary>
+    public static ProblemHttpResult Unauthorized(string code, string message, string cure) =>
+        Refuse(StatusCodes.Status401Unauthorized, code, message, null, cure);
+
+    /// <summary>Too much was asked in a short time; <see cref="RetryAfter"/> says how long to wait.</summary>
+    public static ProblemHttpResult TooMany(string code, string message, string cure) =>
+        Refuse(StatusCodes.Status429TooManyRequests, code, message, null, cure);
+
+    /// <summary>Says in the answer's header how long to wait, in whole seconds, at least one.</summary>
+    public static void RetryAfter(HttpContext http, TimeSpan wait) =>
+        http.Response.Headers.RetryAfter = Math.Max(1, (long)Math.Ceiling(wait.TotalSeconds)).ToString(System.Globalization.CultureInfo.InvariantCulture);
+
+    /// <summary>The service was called by a name that is not its own.</summary>
+    public static ProblemHttpResult WrongHost(string name) =>
+        Refuse(StatusCodes.Status400BadRequest, "wrong-host", "The service has no such name.", name, "Call it by the address that it printed, or add the name to Web:Hosts.");
 
     /// <summary>The request could not be read at all.</summary>
     public static ProblemHttpResult Malformed(int status) =>

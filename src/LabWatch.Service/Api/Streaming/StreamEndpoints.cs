@@ -1,4 +1,5 @@
 using System.Buffers.Text;
+using LabWatch.Records;
 using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Requests;
@@ -24,7 +25,7 @@ internal static class StreamEndpoints
             .Produces<SnapshotView>(StatusCodes.Status200OK, "text/event-stream")
             .ProducesProblem(StatusCodes.Status503ServiceUnavailable);
 
-    private static async Task ListenAsync(HttpContext context, StreamHub hub, SiteBoard board, StreamOptions options)
+    private static async Task ListenAsync(HttpContext context, StreamHub hub, SiteBoard board, StreamOptions options, ICallers callers)
     {
         using StreamClient? client = hub.Join();
         if (client is null)
@@ -37,7 +38,16 @@ internal static class StreamEndpoints
         try
         {
             using CancellationTokenSource end = CancellationTokenSource.CreateLinkedTokenSource(context.RequestAborted, client.Cut);
-            await SendAsync(context, client, hub, board, options, end.Token);
+            Task watched = WatchAsync(context, client, callers, options, end.Token);
+            try
+            {
+                await SendAsync(context, client, hub, board, options, end.Token);
+            }
+            finally
+            {
+                await end.CancelAsync();
+                await watched;
+            }
         }
         catch (OperationCanceledException) when (context.RequestAborted.IsCancellationRequested || client.Cut.IsCancellationRequested)
         {
@@ -47,6 +57,29 @@ internal static class StreamEndpoints
         finally
         {
             hub.Leave(client);
+        }
+    }
+
+    // The stream ends with the session or token that it was asked for with: signed out, expired, taken back, closed account, lost role.
+    private static async Task WatchAsync(HttpContext context, StreamClient client, ICallers callers, StreamOptions options, CancellationToken cancellationToken)
+    {
+        while (!cancellationToken.IsCancellationRequested)
+        {
+            await Task.Delay(options.CallerCheck, options.Clock, cancellationToken).ConfigureAwait(ConfigureAwaitOptions.SuppressThrowing);
+            try
+            {
+                if (await callers.FindAsync(context) is { } caller && caller.May(Permission.Read))
+                {
+                    continue;
+                }
+
+                client.End();
+                return;
+            }
+            catch (Exception exception) when (exception is RecordsUnavailableException or OperationCanceledException)
+            {
+                // Nobody can tell now; the next look will.
+            }
         }
     }
 

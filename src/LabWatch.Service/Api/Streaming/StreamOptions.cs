@@ -12,6 +12,9 @@ internal sealed record StreamOptions
     /// <summary>Time between two signs of life where nothing changes.</summary>
     public TimeSpan Heartbeat { get; init; } = TimeSpan.FromSeconds(5);
 
+    /// <summary>Time between two looks whether the listener is still signed in.</summary>
+    public TimeSpan CallerCheck { get; init; } = TimeSpan.FromSeconds(5);
+
     /// <summary>Sources whose status is sent at every look; with more, each is sent less often, so that the stream stays small.</summary>
     public int SourcesAtOnce { get; init; } = 20;
 }

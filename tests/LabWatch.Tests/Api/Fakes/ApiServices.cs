@@ -6,11 +6,13 @@ using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
 using LabWatch.Readings;
+using LabWatch.Records.Accounts;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
 using LabWatch.Records.Runs;
 using LabWatch.Service.Api;
+using LabWatch.Service.Api.Access;
 using LabWatch.Simulator;
 using LabWatch.Simulator.Demo;
 using LabWatch.Tests.Assessments.Cavities;
@@ -38,6 +40,8 @@ internal sealed class ApiServices(TimeProvider clock)
 
     public FakeIntake Intake { get; } = new();
 
+    public TestCallers Callers { get; } = new();
+
     public void AddTo(IServiceCollection services, bool isDemo)
     {
         services.AddSingleton(clock);
@@ -58,6 +62,10 @@ internal sealed class ApiServices(TimeProvider clock)
             services.AddSingleton<IDemoProgress>(Demo);
         }
 
+        services.TryAddSingleton<ICallers>(Callers);
+        services.TryAddSingleton<IAccountLedger, NoPeople>();
+        services.TryAddSingleton<ISessionLedger, NoPeople>();
+        services.TryAddSingleton(new SessionClock(clock));
         services.AddLabWatchApi();
     }
 }

@@ -1,3 +1,4 @@
+using LabWatch.Records.Accounts;
 using LabWatch.Records.Alerts;
 using LabWatch.Records.Assessments;
 using LabWatch.Records.Audit;
@@ -21,4 +22,8 @@ internal interface IRecordsUnderTest : IAsyncDisposable
     IRunLedger Runs { get; }
 
     IAuditLedger Audit { get; }
+
+    IAccountLedger Accounts { get; }
+
+    ISessionLedger Sessions { get; }
 }

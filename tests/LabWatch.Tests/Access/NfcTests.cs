@@ -1,0 +1,76 @@
+using System.Globalization;
+using System.Text;
+using LabWatch.Records.Accounts.Passwords;
+
+namespace LabWatch.Tests.Access;
+
+public sealed class NfcTests
+{
+    // Unicode Standard Annex #15 (figures and table of examples) and NormalizationTest.txt, from memory.
+    [Theory]
+    [InlineData("0041 030A", "00C5")]
+    [InlineData("212B", "00C5")]
+    [InlineData("2126", "03A9")]
+    [InlineData("0073 0323 0307", "1E69")]
+    [InlineData("0073 0307 0323", "1E69")]
+    [InlineData("1E0B 0323", "1E0D 0307")]
+    [InlineData("0071 0307 0323", "0071 0323 0307")]
+    [InlineData("1112 1161 11AB", "D55C")]
+    [InlineData("0958", "0915 093C")]
+    [InlineData("1D15E", "1D157 1D165")]
+    [InlineData("FB01", "FB01")]
+    [InlineData("0061 0062", "0061 0062")]
+    public void The_examples_of_the_standard_hold(string text, string composed) => Assert.Equal(composed, Hex(Nfc.Compose(Text(text))));
+
+    // Drawn at random; composed forms by another implementation, the module unicodedata of CPython (Unicode 14).
+    [Theory]
+    [InlineData("110E 1170 0332 1EAC 1EFA 01AB 1EA0 03BF", "CDCC 0332 1EAC 1EFA 01AB 1EA0 03BF")]
+    [InlineData("AC01 013F 1FC9 1F10", "AC01 013F 0388 1F10")]
+    [InlineData("01C7 013A 030A 059B 05E5 034E 110A 1FE9 0157", "01C7 013A 059B 030A 05E5 034E 110A 1FE9 0157")]
+    [InlineData("1E59 0124 AC0B 110F 0978 1E05 1F79", "1E59 0124 AC0B 110F 0978 1E05 03CC")]
+    [InlineData("01D1 1FDB 010D 1E47 01B5", "01D1 038A 010D 1E47 01B5")]
+    [InlineData("05A0 020A 1F71 0948 1F8A 021A 1EBA", "05A0 020A 03AC 0948 1F8A 021A 1EBA")]
+    [InlineData("00C7 094F 090B 212B", "00C7 094F 090B 00C5")]
+    [InlineData("0054 1174 0338 01C4 0935 0368 0339 1161 0179", "0054 1174 0338 01C4 0935 0339 0368 1161 0179")]
+    [InlineData("1E38 1E6C 1E51 01B2 1F96 1E3F 093B 0970 1FBE", "1E38 1E6C 1E51 01B2 1F96 1E3F 093B 0970 03B9")]
+    [InlineData("1F53 00DD 1F82 0341 1FDA 0142 1EC6 091B 1FC6", "1F53 00DD 1F82 0301 1FDA 0142 1EC6 091B 1FC6")]
+    [InlineData("1E21 1107 1163 1EBD 024C 1FB9 1108 AC1F", "1E21 BC4C 1EBD 024C 1FB9 1108 AC1F")]
+    [InlineData("1FBB 090A 1FE3 11B6 0115 05DB 1ED7 0210 0591", "0386 090A 03B0 11B6 0115 05DB 1ED7 0210 0591")]
+    [InlineData("1E15 00EC 0968 0969 1D15E 03B4 1ED8 0106", "1E15 00EC 0968 0969 1D157 1D165 03B4 1ED8 0106")]
+    [InlineData("095D 05C7 F900 01BD 01C6 0248", "0922 093C 05C7 8C48 01BD 01C6 0248")]
+    [InlineData("0320 0103 01A4 0237 059D 059A AC0C 0395 03CD", "0320 0103 01A4 0237 059A 059D AC0C 0395 03CD")]
+    [InlineData("03AE 1EC1 1FE3 017B 01D8 1110", "03AE 1EC1 03B0 017B 01D8 1110")]
+    [InlineData("00FB 0213 0223 01E9 01CD 0344 0104", "00FB 0213 0223 01E9 01CD 0308 0301 0104")]
+    [InlineData("0368 1F65 0212 AC30 1F71 1EFE 11B7 0344 0325", "0368 1F65 0212 AC30 03AC 1EFE 11B7 0325 0308 0301")]
+    [InlineData("0942 05E6 00F3 033A 1F71 097F 0330 03AF", "0942 05E6 00F3 033A 03AC 097F 0330 03AF")]
+    [InlineData("1FCC 0313 0962 03B8 0965 1FEB 012E", "1F98 0962 03B8 0965 038E 012E")]
+    [InlineData("0300 032F 1174 0926 0139 1F8E 0353", "032F 0300 1174 0926 0139 1F8E 0353")]
+    [InlineData("1F70 0320 1101 0175 0349 095E 0172 AC0A AC19", "1F70 0320 1101 0175 0349 092B 093C 0172 AC0A AC19")]
+    [InlineData("0909 11B8 014D 1FFD 1EC4 1E5B 1E50", "0909 11B8 014D 00B4 1EC4 1E5B 1E50")]
+    [InlineData("00D7 0125 03C9 0367 033A 095D 1EB7 090C 0105", "00D7 0125 03C9 033A 0367 0922 093C 1EB7 090C 0105")]
+    [InlineData("03C9 05BE 01EF 0340 1EDB", "03C9 05BE 01EF 0300 1EDB")]
+    [InlineData("0344 1FBB 01B6 01A5 1EAD", "0308 0301 0386 01B6 01A5 1EAD")]
+    [InlineData("1EA3 095A 0364 1F8F 11B5 1E1B 1EAA 00F0 05B3", "1EA3 0917 093C 0364 1F8F 11B5 1E1B 1EAA 00F0 05B3")]
+    [InlineData("0199 03AF 0171 1F63 1F73 05E8 1EB1 0185", "0199 03AF 0171 1F63 03AD 05E8 1EB1 0185")]
+    [InlineData("1F12 01BB 1104 0343 1F09 03C6", "1F12 01BB 1104 0313 1F09 03C6")]
+    [InlineData("05C1 00D3 0368 035A 0962 1F96 0246", "05C1 00D3 035A 0368 0962 1F96 0246")]
+    [InlineData("0592 05D1 1FF2 0955 03A9 1F7B AC16 1E5A", "0592 05D1 1FF2 0955 03A9 03CD AC16 1E5A")]
+    [InlineData("00FA 1102 1E8E 01D9 0354 095B 1E4E 01DB 1EAE", "00FA 1102 1E8E 01D9 0354 091C 093C 1E4E 01DB 1EAE")]
+    [InlineData("0916 AC11 0163 0935 0121 1D15E 11AF 1F0D", "0916 AC11 0163 0935 0121 1D157 1D165 11AF 1F0D")]
+    [InlineData("1EB8 110A5 AC0E 1171 1E6B 01BF 1FFD", "1EB8 110A5 AC0E 1171 1E6B 01BF 00B4")]
+    [InlineData("0224 110D 116B 1F92 01E0 1E64 0315", "0224 CAF4 1F92 01E0 1E64 0315")]
+    [InlineData("01C0 033B 1EC4 1FBA 03C0 1D15E 1EEC", "01C0 033B 1EC4 1FBA 03C0 1D157 1D165 1EEC")]
+    [InlineData("1EBE 016E 1FAC 1F90 1F4B 095B AC05 0352", "1EBE 016E 1FAC 1F90 1F4B 091C 093C AC05 0352")]
+    [InlineData("1FFB 1E85 0214 01D8", "038F 1E85 0214 01D8")]
+    [InlineData("11AF 1FA2 095E 036C 1FE3 0149 01ED AC34", "11AF 1FA2 092B 093C 036C 03B0 0149 01ED AC34")]
+    [InlineData("1E09 1E4B 020D 1F19 030D 0972 00D4 022B 1F77", "1E09 1E4B 020D 1F19 030D 0972 00D4 022B 03AF")]
+    public void Another_implementation_agrees(string text, string composed)
+    {
+        Assert.Equal(composed, Hex(Nfc.Compose(Text(text))));
+        Assert.Equal(composed, Hex(Nfc.Compose(Text(composed))));
+    }
+
+    private static string Text(string hex) => string.Concat(hex.Split(' ').Select(part => new Rune(int.Parse(part, NumberStyles.HexNumber, CultureInfo.InvariantCulture)).ToString()));
+
+    private static string Hex(string text) => string.Join(' ', text.EnumerateRunes().Select(rune => rune.Value.ToString("X4", CultureInfo.InvariantCulture)));
+}
