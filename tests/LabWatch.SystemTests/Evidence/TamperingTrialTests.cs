@@ -59,7 +59,7 @@ public sealed class TamperingTrialTests : IAsyncLifetime, IDisposable
         {
             Copy();
             string what = new TrialChanges(new Random(seed)).Make(_copy.Path);
-            IReadOnlyList<(TrialTable Table, string? Before, string? After)> differences = before.Differences(TrialDump.Of(_copy.Path));
+            IReadOnlyList<(TrialTable Table, string? Lost, string? Got)> differences = before.Differences(TrialDump.Of(_copy.Path));
             if (differences.Count == 0)
             {
                 vain++;
@@ -89,7 +89,7 @@ public sealed class TamperingTrialTests : IAsyncLifetime, IDisposable
             Copy();
             string what = Flip(new Random(seed));
             TrialDump after = TrialDump.Of(_copy.Path);
-            IReadOnlyList<(TrialTable Table, string? Before, string? After)> differences = before.Differences(after);
+            IReadOnlyList<(TrialTable Table, string? Lost, string? Got)> differences = before.Differences(after);
             if (after.Unreadable is not null)
             {
                 unreadable++;
@@ -115,7 +115,7 @@ public sealed class TamperingTrialTests : IAsyncLifetime, IDisposable
     }
 
     /// <summary>Each row that differs must be named, by what it is called before or after the change; what lies in entries may show at the noted end.</summary>
-    private void Judge(string what, IReadOnlyList<(TrialTable Table, string? Before, string? After)> differences, List<string> missed)
+    private void Judge(string what, IReadOnlyList<(TrialTable Table, string? Lost, string? Got)> differences, List<string> missed)
     {
         (VerifyReport report, IReadOnlyList<Finding> unfit) = Verify(_copy.Path);
         if (report is null)
@@ -124,18 +124,24 @@ public sealed class TamperingTrialTests : IAsyncLifetime, IDisposable
             return;
         }
 
-        bool isWrittenAnew = report.Findings.Counts.ContainsKey(TrailCodes.HeadDiffers);
-        foreach ((TrialTable table, string? before, string? after) in differences)
+        foreach (IGrouping<TrialTable, (TrialTable Table, string? Lost, string? Got)> changed in differences.GroupBy(one => one.Table))
         {
-            bool isNamed = report.Findings.Kept.Any(finding => IsTable(finding, table)
-                && ((before is not null && Names(finding, before)) || (after is not null && Names(finding, after)) || IsBesideMissing(finding, table)));
-            if (!isNamed && !(table.Name == "audit_entries" && isWrittenAnew))
+            string[] lost = [.. changed.Select(one => one.Lost).OfType<string>()];
+            string[] got = [.. changed.Select(one => one.Got).OfType<string>()];
+            bool isOneRow = lost.Length == 1 && got.Length == 1 && IsNamed(report, changed.Key, got[0]);
+            // Every lost row must be named; what came in its place is told with it. Rows that came alone must be named themselves.
+            string? silent = isOneRow ? null : (lost.Length > 0 ? lost : got).FirstOrDefault(id => !IsNamed(report, changed.Key, id));
+            if (silent is not null)
             {
-                missed.Add($"{what}: {table.Name} {before} -> {after}; found: {string.Join("; ", report.Findings.Kept.Take(4).Select(finding => finding.Code + " " + finding.Where))}");
+                missed.Add($"{what}: {changed.Key.Name} {silent}; found: {string.Join("; ", report.Findings.Kept.Take(4).Select(finding => finding.Code + " " + finding.Where))}");
                 return;
             }
         }
     }
+
+    private static bool IsNamed(VerifyReport report, TrialTable table, string id) =>
+        (table.Name == "audit_entries" && report.Findings.Counts.ContainsKey(TrailCodes.HeadDiffers))
+        || report.Findings.Kept.Any(finding => (IsTable(finding, table) && Names(finding, id)) || IsBesideMissing(finding, table));
 
     private static bool IsTable(TrailFinding finding, TrialTable table) => finding.Table == table.Name || (table.Name == "source" && finding.Field == "source_id");
 

@@ -29,40 +29,45 @@ internal sealed class TrialDump
     }
 
     /// <summary>
-    /// Rows that differ, are gone or are new in a later dump: table and names of the row before and after. Under which number the engine keeps
-    /// a row is no content.
+    /// Rows that a later dump has lost, and rows that it has got, by content: under which number the engine keeps a row, and whether a damaged
+    /// file shows it twice, is no content.
     /// </summary>
-    public IReadOnlyList<(TrialTable Table, string? Before, string? After)> Differences(TrialDump later)
+    public IReadOnlyList<(TrialTable Table, string? Lost, string? Got)> Differences(TrialDump later)
     {
-        List<((string Table, long Row, int Time) Key, Dictionary<string, object>? Before, Dictionary<string, object>? After)> found = [];
-        foreach ((string Table, long Row, int Time) key in _rows.Keys.Union(later._rows.Keys))
+        List<(TrialTable, string?, string?)> differences = [];
+        foreach (TrialTable table in TrialTable.All)
         {
-            Dictionary<string, object>? before = _rows.GetValueOrDefault(key);
-            Dictionary<string, object>? after = later._rows.GetValueOrDefault(key);
-            if (before is null || after is null || !Same(before, after))
+            Dictionary<string, Dictionary<string, object>> before = Contents(table);
+            Dictionary<string, Dictionary<string, object>> after = later.Contents(table);
+            differences.AddRange(before.Where(row => !after.ContainsKey(row.Key)).Select(row => (table, (string?)table.IdOf(row.Value), (string?)null)));
+            differences.AddRange(after.Where(row => !before.ContainsKey(row.Key)).Select(row => (table, (string?)null, (string?)table.IdOf(row.Value))));
+        }
+
+        return differences;
+    }
+
+    private Dictionary<string, Dictionary<string, object>> Contents(TrialTable table)
+    {
+        Dictionary<string, Dictionary<string, object>> contents = new(StringComparer.Ordinal);
+        foreach (((string name, _, _), Dictionary<string, object> row) in _rows)
+        {
+            if (name == table.Name)
             {
-                found.Add((key, before, after));
+                contents[string.Join('\u001f', row.Select(cell => Text(cell.Value)))] = row;
             }
         }
 
-        found.RemoveAll(one => one is { Before: { } gone, After: null } && found.Exists(other => other.Key.Table == one.Key.Table && other.After is { } moved && Same(gone, moved)));
-        found.RemoveAll(one => one is { Before: null, After: { } came } && _rows.Any(other => other.Key.Table == one.Key.Table && Same(other.Value, came) && !later._rows.ContainsKey(other.Key)));
-        return
-        [
-            .. found.Select(one =>
-            {
-                TrialTable table = TrialTable.All.Single(candidate => candidate.Name == one.Key.Table);
-                return (table, one.Before is { } before ? table.IdOf(before) : null, one.After is { } after ? table.IdOf(after) : null);
-            }),
-        ];
+        return contents;
     }
 
-    private static bool Same(Dictionary<string, object> before, Dictionary<string, object> after) => before.All(column => (column.Value, after[column.Key]) switch
+    private static string Text(object value) => value switch
     {
-        (byte[] left, byte[] right) => left.AsSpan().SequenceEqual(right),
-        (double left, double right) => left == right,
-        (object left, object right) => left.Equals(right),
-    });
+        byte[] bytes => "b" + Convert.ToHexString(bytes),
+        double number => FormattableString.Invariant($"d{number + 0.0:R}"),
+        long number => FormattableString.Invariant($"i{number}"),
+        string text => "t" + text,
+        _ => "n",
+    };
 
     private void Read(string directory, TrialTable table)
     {
