@@ -36,8 +36,8 @@ internal sealed class ServiceFixture : IAsyncDisposable
     /// <summary>A shell that plays the service manager; none where null.</summary>
     public string? Launcher { get; set; }
 
-    /// <summary>Starts the service, or starts it again, and waits until it is ready.</summary>
-    public async Task StartAsync(CancellationToken cancellationToken)
+    /// <summary>Starts the service, or starts it again, and waits until it is ready. The first start is followed by the set-up, unless a test plays it.</summary>
+    public async Task StartAsync(CancellationToken cancellationToken, bool setsUp = true)
     {
         if (_service is not null)
         {
@@ -47,8 +47,11 @@ internal sealed class ServiceFixture : IAsyncDisposable
         Environment.TryAdd("LABWATCH__Intake__EmbeddedBroker__Port", BrokerPort.ToString(CultureInfo.InvariantCulture));
         _service = LabWatchProcess.Start(["serve", "--lab", _directory.At("lab.json"), "--data", Data], Environment, _port, Launcher);
         await _service.WaitUntilReadyAsync(cancellationToken);
-        _token ??= await _service.SetUpAsync(Data, cancellationToken);
-        _service.UseToken(_token);
+        if (setsUp)
+        {
+            _token ??= await _service.SetUpAsync(Data, cancellationToken);
+            _service.UseToken(_token);
+        }
     }
 
     /// <summary>The raw readings of a channel of the source fir: time in microseconds and value, in the order given.</summary>
