@@ -16,6 +16,7 @@ public sealed class DataVerifier
     private static readonly Dictionary<string, string> OtherTables = new(StringComparer.Ordinal) { [HourNote.Prefix] = "block" };
 
     private readonly VerifyRequest _request;
+    private readonly bool _inUse;
     private readonly Action<string, long> _progress;
     private readonly TrailFindings _findings = new();
     private readonly SortedDictionary<string, long> _examined = new(StringComparer.Ordinal);
@@ -23,8 +24,9 @@ public sealed class DataVerifier
     private readonly List<string> _notes = [];
     private long _readings;
 
-    private DataVerifier(VerifyRequest request, Action<string, long>? progress)
+    private DataVerifier(VerifyRequest request, Action<string, long>? progress, bool inUse)
     {
+        _inUse = inUse;
         _request = request;
         _progress = (table, count) =>
         {
@@ -39,14 +41,15 @@ public sealed class DataVerifier
     public static (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run(VerifyRequest request, Action<string, long>? progress = null)
     {
         ArgumentNullException.ThrowIfNull(request);
-        // A service that started meanwhile changed files that were read as if nobody used them: what was found may be its doing.
-        bool wasAtRest = IsAtRest(request);
-        (VerifyReport? Report, IReadOnlyList<Finding> BadInput) first = new DataVerifier(request, progress).Run();
-        return wasAtRest && !IsAtRest(request) ? new DataVerifier(request, progress).Run() : first;
+        // A file without a write-ahead log is read as if nobody used it. Where a service wrote it meanwhile, what was found may be its doing.
+        FileStates before = StatesOf(request);
+        (VerifyReport? Report, IReadOnlyList<Finding> BadInput) first = new DataVerifier(request, progress, inUse: false).Run();
+        bool mayBeTorn = (before.Records.IsAtRest || before.Readings.IsAtRest) && before != StatesOf(request);
+        return mayBeTorn ? new DataVerifier(request, progress, inUse: true).Run() : first;
     }
 
-    private static bool IsAtRest(VerifyRequest request) =>
-        SqliteReadOnly.IsAtRest(request.Records.FilePath) && SqliteReadOnly.IsAtRest(Path.Combine(request.DataDirectory, SqliteReadingStore.FileName));
+    private static FileStates StatesOf(VerifyRequest request) => new(
+        SqliteReadOnly.StateOf(request.Records.FilePath), SqliteReadOnly.StateOf(Path.Combine(request.DataDirectory, SqliteReadingStore.FileName)));
 
     private (VerifyReport? Report, IReadOnlyList<Finding> BadInput) Run()
     {
@@ -55,7 +58,7 @@ public sealed class DataVerifier
         IReadOnlyDictionary<string, AuditHead>? kept = TrailHeadFile.Read(_request.DataDirectory);
         try
         {
-            using RecordsSnapshot records = RecordsSnapshot.Open(_request.Records);
+            using RecordsSnapshot records = RecordsSnapshot.Open(_request.Records, _inUse);
             TrailVerifier verifier = new(records, _findings);
             if (verifier.Unfit() is { } unfit)
             {
@@ -128,7 +131,7 @@ public sealed class DataVerifier
 
         try
         {
-            using SealedFile file = SealedFile.Open(path);
+            using SealedFile file = SealedFile.Open(path, _inUse);
             HourCheck check = new(file, verifier.Facts, _hours, _findings);
             check.Run(count => _progress("block", count));
             _readings = check.Readings;
@@ -142,4 +145,6 @@ public sealed class DataVerifier
             _findings.Add(Unreadable.Table(SqliteReadingStore.FileName, exception.Message));
         }
     }
+
+    private readonly record struct FileStates((bool IsAtRest, long Length, long Written) Records, (bool IsAtRest, long Length, long Written) Readings);
 }

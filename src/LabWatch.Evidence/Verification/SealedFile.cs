@@ -16,7 +16,7 @@ internal sealed class SealedFile : IDisposable
     private SealedFile(SqliteConnection connection) => _connection = connection;
 
     /// <summary>Opens the file. Throws <see cref="UnreadableException"/> where that cannot be done.</summary>
-    public static SealedFile Open(string path) => new(SqliteReadOnly.Open(path));
+    public static SealedFile Open(string path, bool inUse) => new(SqliteReadOnly.Open(path, inUse));
 
     /// <summary>The sources by their number in the file.</summary>
     public Dictionary<long, SourceKey> Sources(out string? damage)

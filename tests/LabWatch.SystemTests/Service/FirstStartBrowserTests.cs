@@ -18,7 +18,8 @@ public sealed class FirstStartBrowserTests
         await using ServiceFixture fixture = new();
         await fixture.StartAsync(token, setsUp: false);
         string code = (await File.ReadAllTextAsync(Path.Combine(fixture.Data, "set-up-code"), token)).Trim();
-        Assert.Contains(code, fixture.Service.Output, StringComparison.Ordinal);
+        await Poll.UntilAsync(
+            "the code is printed", () => Task.FromResult(fixture.Service.Output.Contains(code, StringComparison.Ordinal)), TimeSpan.FromSeconds(30), token);
         await using Browser browser = await Browser.StartAsync();
         Person administrator = new(await browser.OpenAsync(new Uri(fixture.Service.Address, "trail"), width, height), width);
 

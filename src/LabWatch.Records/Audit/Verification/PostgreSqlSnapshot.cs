@@ -18,7 +18,7 @@ internal sealed class PostgreSqlSnapshot : RecordsSnapshot
 
     public override string? RowNumber => null;
 
-    public static new PostgreSqlSnapshot Open(RecordsOptions options)
+    public static PostgreSqlSnapshot Open(RecordsOptions options)
     {
         NpgsqlConnection connection = new(options.ConnectionString);
         try

@@ -72,8 +72,10 @@ internal abstract class RecordsSnapshot(RecordsContext model) : IDisposable
     }
 
     /// <summary>Opens the records of the options. Throws <see cref="UnreadableException"/> where they cannot be opened.</summary>
-    public static RecordsSnapshot Open(RecordsOptions options) => options.Provider is RecordsProvider.Sqlite
-        ? SqliteSnapshot.Open(options)
+    /// <param name="options">Where they are.</param>
+    /// <param name="inUse">Whether a process is known to use them.</param>
+    public static RecordsSnapshot Open(RecordsOptions options, bool inUse) => options.Provider is RecordsProvider.Sqlite
+        ? SqliteSnapshot.Open(options, inUse)
         : PostgreSqlSnapshot.Open(options);
 
     /// <inheritdoc/>

@@ -9,7 +9,9 @@ internal static class SqliteReadOnly
         ["PRAGMA trusted_schema = OFF", "PRAGMA cell_size_check = ON", "PRAGMA mmap_size = 0", "BEGIN", "SELECT COUNT(*) FROM sqlite_schema"];
 
     /// <summary>Opens the file for reading, in one transaction. Throws <see cref="UnreadableException"/> where that cannot be done.</summary>
-    public static SqliteConnection Open(string path)
+    /// <param name="path">The file.</param>
+    /// <param name="inUse">Whether a process is known to use the file although it may have no write-ahead log at this moment.</param>
+    public static SqliteConnection Open(string path, bool inUse)
     {
         if (!File.Exists(path))
         {
@@ -20,13 +22,20 @@ internal static class SqliteReadOnly
         // a medium that cannot be written, too. With one the log belongs to it.
         string reason = string.Empty;
         SqliteConnection? connection;
-        bool isOpen = IsAtRest(path) && TryOpen($"file:{Uri.EscapeDataString(path).Replace("%2F", "/", StringComparison.Ordinal)}?immutable=1", out connection, out reason)
+        bool isOpen = !inUse && IsAtRest(path) && TryOpen($"file:{Uri.EscapeDataString(path).Replace("%2F", "/", StringComparison.Ordinal)}?immutable=1", out connection, out reason)
             || TryOpen(path, out connection, out reason);
         return isOpen ? connection! : throw new UnreadableException(reason);
     }
 
     /// <summary>Whether the file has no write-ahead log, so that no process uses it.</summary>
     public static bool IsAtRest(string path) => !File.Exists(path + "-wal");
+
+    /// <summary>What changes when a process writes the file: whether it is at rest, its length, when it was last written.</summary>
+    public static (bool IsAtRest, long Length, long Written) StateOf(string path)
+    {
+        FileInfo file = new(path);
+        return (IsAtRest(path), file.Exists ? file.Length : 0, file.Exists ? file.LastWriteTimeUtc.Ticks : 0);
+    }
 
     private static bool TryOpen(string source, out SqliteConnection? connection, out string reason)
     {

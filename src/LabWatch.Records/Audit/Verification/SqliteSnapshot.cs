@@ -16,8 +16,8 @@ internal sealed class SqliteSnapshot : RecordsSnapshot
 
     public override string? RowNumber => "rowid";
 
-    public static new SqliteSnapshot Open(RecordsOptions options) =>
-        new(new RecordsContexts(options).Create(), SqliteReadOnly.Open(options.FilePath));
+    public static new SqliteSnapshot Open(RecordsOptions options, bool inUse) =>
+        new(new RecordsContexts(options).Create(), SqliteReadOnly.Open(options.FilePath, inUse));
 
     public override TableScan Scan(string sql) => new SqliteScan(_connection, sql);
 
