@@ -3,7 +3,9 @@ using Microsoft.Data.Sqlite;
 using Microsoft.EntityFrameworkCore;
 using Microsoft.EntityFrameworkCore.Infrastructure;
 using Microsoft.EntityFrameworkCore.Migrations;
+using Microsoft.EntityFrameworkCore.Storage;
 using Microsoft.Extensions.Logging;
+using Npgsql;
 
 namespace LabWatch.Records.Storage;
 
@@ -13,11 +15,34 @@ namespace LabWatch.Records.Storage;
 /// </summary>
 internal sealed class RecordsMigrator(RecordsContexts contexts, TimeProvider clock, ILogger<RecordsMigrator> logger)
 {
+    /// <summary>Key of the PostgreSQL advisory lock of migrations ("LabWatcM" in ASCII).</summary>
+    private const long MigrationKey = 0x4C61_6257_6174_634D;
+
     /// <summary>Prepares the database. Throws <see cref="RecordsVersionException"/> where it is newer than this program.</summary>
     public async Task MigrateAsync(CancellationToken cancellationToken)
     {
         using FileStream? alone = contexts.IsSqlite ? TakeMigrationLock() : null;
         await using RecordsContext context = contexts.Create();
+        if (contexts.IsSqlite)
+        {
+            await MigrateAsync(context, cancellationToken);
+            return;
+        }
+
+        await TakeTurnAsync(context, cancellationToken);
+        try
+        {
+            await MigrateAsync(context, cancellationToken);
+        }
+        finally
+        {
+            // The pool keeps the connection open, and a lock of its session with it.
+            await context.Database.ExecuteSqlAsync($"SELECT pg_advisory_unlock({MigrationKey})", CancellationToken.None);
+        }
+    }
+
+    private async Task MigrateAsync(RecordsContext context, CancellationToken cancellationToken)
+    {
         IHistoryRepository history = context.GetService<IHistoryRepository>();
         IMigrationsAssembly known = context.GetService<IMigrationsAssembly>();
         bool exists = await history.ExistsAsync(cancellationToken);
@@ -58,6 +83,29 @@ internal sealed class RecordsMigrator(RecordsContexts contexts, TimeProvider clo
                 + $"(schema {unknown}; this version knows up to {known.Migrations.Keys.LastOrDefault()}). Nothing was changed. Install the newer version again, "
                 + "or restore the backup that was made before the upgrade.");
         }
+    }
+
+    /// <summary>
+    /// Nodes that start together migrate one after the other: the lock is the session's, taken before anybody looks which migrations are
+    /// missing, and ends with the connection, so that a killed node holds nothing up.
+    /// </summary>
+    private static async Task TakeTurnAsync(RecordsContext context, CancellationToken cancellationToken)
+    {
+        IRelationalDatabaseCreator creator = context.GetService<IRelationalDatabaseCreator>();
+        if (!await creator.ExistsAsync(cancellationToken))
+        {
+            try
+            {
+                await creator.CreateAsync(cancellationToken);
+            }
+            catch (PostgresException exception) when (exception.SqlState is PostgresErrorCodes.DuplicateDatabase or PostgresErrorCodes.UniqueViolation)
+            {
+                // Another node was quicker.
+            }
+        }
+
+        await context.Database.OpenConnectionAsync(cancellationToken);
+        await context.Database.ExecuteSqlAsync($"SELECT pg_advisory_lock({MigrationKey})", cancellationToken);
     }
 
     private FileStream TakeMigrationLock()

@@ -71,7 +71,8 @@ internal sealed record CavityLab
             Channel("comparator", ChannelQuantity.ComparatorTemperature) with { Band = "8-14", SensorMinimum = -20, SensorMaximum = 1000 },
         ];
         ReferenceSource source = new(
-            Key, "Rowan", SourceKind.BlockFurnace, TraceabilityRoute.Contact, -20, 500, Cavity, [new("8-14", "8 to 14 um", 8, 14)], channels) { Baselines = Baselines };
+            Key, "Rowan", SourceKind.BlockFurnace, TraceabilityRoute.Contact, -20, 500, Cavity, [new("8-14", "8 to 14 um", 8, 14)], channels)
+        { Baselines = Baselines };
         Channel[] certified = [.. channels.Where(channel => channel.Quantity is not (ChannelQuantity.SetPoint or ChannelQuantity.Shutter) && !Uncertified.Contains(channel.Id))];
         return new(
             new LabSite("hollin-vale", "Hollin Vale", "Europe/Dublin"),

@@ -62,7 +62,8 @@ internal sealed record CheckCavity(IReadOnlyDictionary<string, string> Row)
         }
 
         ReferenceSource source = new(
-            Key, "check", SourceKind.BlockFurnace, TraceabilityRoute.Contact, 0, 3000, Cavity(band), [new(band, band, lower, upper)], channels) { View = View(), WellToWallDrop = new(0, 0) };
+            Key, "check", SourceKind.BlockFurnace, TraceabilityRoute.Contact, 0, 3000, Cavity(band), [new(band, band, lower, upper)], channels)
+        { View = View(), WellToWallDrop = new(0, 0) };
         LabSnapshot snapshot = new(
             new LabSite("check", "check", "UTC"),
             [source],

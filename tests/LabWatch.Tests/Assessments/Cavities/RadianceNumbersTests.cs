@@ -25,7 +25,11 @@ public sealed class RadianceNumbersTests
         CavityLab lab = new()
         {
             Cavity = new(CavityShape.FlatPlate, 50, 0, null, 50, [new("8-14", new(0.995, 0), new(1, 0))]),
-            SetPoint = celsius, Bottom = celsius, Middle = celsius, Front = celsius, Lip = celsius,
+            SetPoint = celsius,
+            Bottom = celsius,
+            Middle = celsius,
+            Front = celsius,
+            Lip = celsius,
         };
         CriterionResult result = lab.Evaluate(new EffectiveEmissivityCriterion(EffectiveEmissivityCriterion.DefaultSchedule, DemoRun.Models))[0];
         Assert.Equal(0.995, CriterionResult.Figure(result.Figures, "effective-emissivity"), 1e-12);
