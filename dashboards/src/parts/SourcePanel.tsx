@@ -1,4 +1,4 @@
-import type { Assessment, Source } from "../api/types";
+import type { Assessment, Source, Reason } from "../api/types";
 import { CavitySection } from "../cavity/CavitySection";
 import { celsius, decimalsFor, fixed, kelvin, significant } from "../format/numbers";
 import { clockTime, span } from "../format/time";
@@ -128,22 +128,27 @@ function Reasons({ source, fresh }: { source: Source; fresh: boolean }) {
   if (reasons.length === 0) {
     return <p class="reasons quiet">{readinessMeaning[state]}</p>;
   }
-  const list = (
+  const list = (shown: Reason[]) => (
     <ul>
-      {reasons.map((reason) => (
+      {shown.map((reason) => (
         <li key={reason.code + reason.text} class={reason.blocks ? "" : "quiet"}>
           {typeset(reason.text.startsWith(`${source.name}, `) ? reason.text.slice(source.name.length + 2) : reason.text)}
         </li>
       ))}
     </ul>
   );
-  return state === "ready" ? (
-    <details class="reasons">
-      <summary>Why ready</summary>
-      {list}
-    </details>
-  ) : (
-    <div class="reasons">{list}</div>
+  const missing = reasons.filter((reason) => reason.blocks);
+  const others = reasons.filter((reason) => !reason.blocks);
+  return (
+    <>
+      {missing.length > 0 && <div class="reasons">{list(missing)}</div>}
+      {others.length > 0 && (
+        <details class="reasons">
+          <summary>{state === "ready" ? "Why ready" : `What else is known (${others.length})`}</summary>
+          {list(others)}
+        </details>
+      )}
+    </>
   );
 }
 

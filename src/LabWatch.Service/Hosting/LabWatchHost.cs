@@ -75,6 +75,9 @@ internal static class LabWatchHost
         builder.Logging.AddFilter("System", LogLevel.Warning);
         builder.Logging.AddFilter("Quartz", LogLevel.Warning);
 
+        // A call without a session is an everyday event, and refused sign-ins stand in the trail.
+        builder.Logging.AddFilter("LabWatch.Service.Api.Access.CallerHandler", LogLevel.Warning);
+
         // Ends of the start and of the stop are worth a line; the framework's address lines are printed in words of our own.
         builder.Logging.AddFilter("Microsoft.Hosting.Lifetime", LogLevel.Warning);
         builder.Logging.AddConfiguration(builder.Configuration.GetSection("Logging"));
