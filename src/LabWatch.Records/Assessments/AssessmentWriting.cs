@@ -18,6 +18,7 @@ internal static class AssessmentWriting
         string[] ids = [.. assessments.Select(assessment => assessment.Id)];
         HashSet<string> seen = [.. await context.Assessments.Where(row => ids.Contains(row.Id)).Select(row => row.Id).ToListAsync(cancellationToken)];
         long sequence = await context.Assessments.MaxAsync(row => (long?)row.Sequence, cancellationToken) ?? 0;
+        await LoadSeriesAsync(context, assessments, cancellationToken);
         int added = 0;
         foreach (Assessment assessment in assessments)
         {
@@ -48,6 +49,16 @@ internal static class AssessmentWriting
         else if (row.WindowEnd < end.Microseconds)
         {
             row.WindowEnd = end.Microseconds;
+        }
+    }
+
+    /// <summary>Reads heads and watermarks of the sources at once, so that moving them finds them in the context.</summary>
+    private static async Task LoadSeriesAsync(RecordsContext context, IReadOnlyList<Assessment> assessments, CancellationToken cancellationToken)
+    {
+        foreach (SourceKey source in assessments.Select(assessment => assessment.Source).Distinct())
+        {
+            await context.AssessmentHeads.Where(row => row.Site == source.Site && row.Source == source.Source).LoadAsync(cancellationToken);
+            await context.Watermarks.Where(row => row.Site == source.Site && row.Source == source.Source).LoadAsync(cancellationToken);
         }
     }
 

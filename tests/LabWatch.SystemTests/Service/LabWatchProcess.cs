@@ -1,7 +1,10 @@
 using System.Collections.Concurrent;
 using System.Diagnostics;
+using System.Globalization;
 using System.Net;
 using System.Net.Sockets;
+using System.Security.Cryptography;
+using System.Security.Cryptography.X509Certificates;
 
 namespace LabWatch.SystemTests.Service;
 
@@ -20,7 +23,11 @@ internal sealed class LabWatchProcess : IAsyncDisposable
     {
         _process = process;
         Address = address;
-        Client = new HttpClient { BaseAddress = address, Timeout = TimeSpan.FromSeconds(30) };
+        Client = new HttpClient(new SocketsHttpHandler { SslOptions = { RemoteCertificateValidationCallback = (_, certificate, _, _) => IsPrinted(certificate) } })
+        {
+            BaseAddress = address,
+            Timeout = TimeSpan.FromSeconds(30),
+        };
 
         // As a browser does: with a cookie, a change must come from the service's own pages.
         Client.DefaultRequestHeaders.Add("Origin", address.GetLeftPart(UriPartial.Authority));
@@ -48,9 +55,10 @@ internal sealed class LabWatchProcess : IAsyncDisposable
     /// <param name="environment">Variables besides those of this process.</param>
     /// <param name="port">Port of the pages; a free one where null.</param>
     /// <param name="launcher">A shell that starts the service and passes the request to end on, as a service manager does; none where null.</param>
-    public static LabWatchProcess Start(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment = null, int? port = null, string? launcher = null)
+    /// <param name="scheme">http, or https with a certificate whose fingerprint the service prints.</param>
+    public static LabWatchProcess Start(IEnumerable<string> arguments, IReadOnlyDictionary<string, string>? environment = null, int? port = null, string? launcher = null, string scheme = "http")
     {
-        Uri address = new($"http://127.0.0.1:{port ?? FreePort()}");
+        Uri address = new($"{scheme}://127.0.0.1:{port ?? FreePort()}");
         Process process = Launch([.. arguments, "--urls", address.GetLeftPart(UriPartial.Authority)], environment, launcher);
         LabWatchProcess service = new(process, address);
         process.OutputDataReceived += (_, line) => service._output.Enqueue(line.Data ?? string.Empty);
@@ -105,7 +113,7 @@ internal sealed class LabWatchProcess : IAsyncDisposable
     /// <summary>Asks the process to end (SIGTERM) and gives its exit code.</summary>
     public async Task<int> StopAsync(CancellationToken cancellationToken)
     {
-        using Process kill = Process.Start("kill", ["-TERM", _process.Id.ToString(System.Globalization.CultureInfo.InvariantCulture)]);
+        using Process kill = Process.Start("kill", ["-TERM", _process.Id.ToString(CultureInfo.InvariantCulture)]);
         await kill.WaitForExitAsync(cancellationToken);
         await _process.WaitForExitAsync(cancellationToken);
         return _process.ExitCode;
@@ -122,6 +130,11 @@ internal sealed class LabWatchProcess : IAsyncDisposable
 
         _process.Dispose();
     }
+
+    /// <summary>What a person does who compares the fingerprint once.</summary>
+    private bool IsPrinted(X509Certificate? certificate) =>
+        certificate is not null
+        && Output.Contains(string.Join(':', SHA256.HashData(certificate.GetRawCertData()).Select(value => value.ToString("X2", CultureInfo.InvariantCulture))), StringComparison.Ordinal);
 
     private static string FindProgram()
     {
