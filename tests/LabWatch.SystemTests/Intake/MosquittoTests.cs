@@ -28,6 +28,7 @@ public sealed class MosquittoTests : IDisposable
             Assert.False(first.State.SessionPresent);
             await device.PublishAsync(20, Stop);
             await first.UntilStoredAsync(20, Stop);
+            await Poll.UntilAsync("all are acknowledged", () => Task.FromResult(first.State.Totals.Acknowledged == 20), TimeSpan.FromSeconds(60), Stop);
             await first.StopAsync(Stop);
         }
 
