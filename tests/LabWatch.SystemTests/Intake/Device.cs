@@ -14,7 +14,7 @@ internal sealed class Device : IDisposable
 
     public async Task ConnectAsync(int port, CancellationToken cancellationToken) =>
         await _client.ConnectAsync(
-            new MqttClientOptionsBuilder().WithTcpServer("127.0.0.1", port).WithClientId("device").WithTimeout(TimeSpan.FromSeconds(30)).Build(), cancellationToken);
+            new MqttClientOptionsBuilder().WithTcpServer("127.0.0.1", port).WithClientId("device").WithTimeout(TimeSpan.FromSeconds(120)).Build(), cancellationToken);
 
     public async Task PublishAsync(int count, CancellationToken cancellationToken)
     {

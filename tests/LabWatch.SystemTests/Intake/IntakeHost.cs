@@ -84,14 +84,14 @@ internal sealed class IntakeHost : IAsyncDisposable, ILabSnapshotSource, IReadin
         return Poll.UntilAsync(
             $"{count} readings are stored",
             async () => (seen = (await StoredAsync(cancellationToken)).Length) >= count,
-            TimeSpan.FromSeconds(60),
+            TimeSpan.FromSeconds(120),
             cancellationToken,
             () => $"{seen} are; link {State.Link} ({State.LinkNote}), {State.Totals}");
     }
 
     public Task UntilLinkAsync(BrokerLinkState link, CancellationToken cancellationToken) =>
         Poll.UntilAsync(
-            $"the link is {link}", () => Task.FromResult(State.Link == link), TimeSpan.FromSeconds(60), cancellationToken, () => $"It is {State.Link} ({State.LinkNote}).");
+            $"the link is {link}", () => Task.FromResult(State.Link == link), TimeSpan.FromSeconds(120), cancellationToken, () => $"It is {State.Link} ({State.LinkNote}).");
 
     public async ValueTask DisposeAsync()
     {

@@ -52,7 +52,7 @@ internal sealed class MosquittoBroker : IDisposable
         _process.OutputDataReceived += static (_, _) => { };
         _process.BeginErrorReadLine();
         _process.BeginOutputReadLine();
-        await Poll.UntilAsync("the broker listens", ListensAsync, TimeSpan.FromSeconds(30), cancellationToken);
+        await Poll.UntilAsync("the broker listens", ListensAsync, TimeSpan.FromSeconds(120), cancellationToken);
     }
 
     /// <summary>Stops it as an administrator would: sessions and retained messages are saved.</summary>

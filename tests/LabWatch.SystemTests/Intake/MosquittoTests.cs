@@ -28,7 +28,7 @@ public sealed class MosquittoTests : IDisposable
             Assert.False(first.State.SessionPresent);
             await device.PublishAsync(20, Stop);
             await first.UntilStoredAsync(20, Stop);
-            await Poll.UntilAsync("all are acknowledged", () => Task.FromResult(first.State.Totals.Acknowledged == 20), TimeSpan.FromSeconds(60), Stop);
+            await Poll.UntilAsync("all are acknowledged", () => Task.FromResult(first.State.Totals.Acknowledged == 20), TimeSpan.FromSeconds(120), Stop);
             await first.StopAsync(Stop);
         }
 
@@ -55,7 +55,7 @@ public sealed class MosquittoTests : IDisposable
             Directory.Delete(Path.Combine(_data.Path, "spool"), recursive: true);
             first.Store.IsOff = true;
             await device.PublishAsync(40, Stop);
-            await Poll.UntilAsync("commits stop", () => Task.FromResult(first.State.CommitsStopped), TimeSpan.FromSeconds(30), Stop);
+            await Poll.UntilAsync("commits stop", () => Task.FromResult(first.State.CommitsStopped), TimeSpan.FromSeconds(120), Stop);
             Assert.Equal(10, first.State.Totals.Acknowledged);
             await first.StopAsync(Stop);
         }
@@ -79,7 +79,7 @@ public sealed class MosquittoTests : IDisposable
         }
 
         await broker.StopAsync(Stop);
-        await Poll.UntilAsync("the loss is noticed", () => Task.FromResult(intake.State.Link == BrokerLinkState.Connecting), TimeSpan.FromSeconds(30), Stop);
+        await Poll.UntilAsync("the loss is noticed", () => Task.FromResult(intake.State.Link == BrokerLinkState.Connecting), TimeSpan.FromSeconds(120), Stop);
         await broker.StartAsync(Stop);
         await intake.UntilLinkAsync(BrokerLinkState.Connected, Stop);
         Assert.True(intake.State.SessionPresent);
@@ -100,13 +100,13 @@ public sealed class MosquittoTests : IDisposable
 
         // More than the 20 messages that the broker sends without an acknowledgement.
         await device.PublishAsync(200, Stop);
-        await Poll.UntilAsync("the tap has seen all", () => Task.FromResult(intake.Seen.Count == 200), TimeSpan.FromSeconds(30), Stop);
-        await Poll.UntilAsync("all is acknowledged", () => Task.FromResult(intake.State.Totals.Acknowledged == 200), TimeSpan.FromSeconds(30), Stop);
+        await Poll.UntilAsync("the tap has seen all", () => Task.FromResult(intake.Seen.Count == 200), TimeSpan.FromSeconds(120), Stop);
+        await Poll.UntilAsync("all is acknowledged", () => Task.FromResult(intake.State.Totals.Acknowledged == 200), TimeSpan.FromSeconds(120), Stop);
         Assert.Empty(await intake.StoredAsync(Stop));
         intake.Store.IsOff = false;
         await intake.UntilStoredAsync(200, Stop);
         await AssertStoredOnceAsync(intake, 200);
-        Assert.Equal(0, intake.State.SpoolBytes);
+        await Poll.UntilAsync("the spool is empty", () => Task.FromResult(intake.State.SpoolBytes == 0), TimeSpan.FromSeconds(120), Stop);
     }
 
     [Fact]
@@ -122,7 +122,7 @@ public sealed class MosquittoTests : IDisposable
         await device.PublishAsync(100, Stop);
         await intake.UntilLinkAsync(BrokerLinkState.WatchingOnly, Stop);
         await device.PublishAsync(50, Stop);
-        await Poll.UntilAsync("the tap sees what is new", () => Task.FromResult(intake.Seen.ContainsKey(150)), TimeSpan.FromSeconds(30), Stop);
+        await Poll.UntilAsync("the tap sees what is new", () => Task.FromResult(intake.Seen.ContainsKey(150)), TimeSpan.FromSeconds(120), Stop);
         Assert.Equal(0, intake.State.Totals.Acknowledged);
 
         intake.Store.IsOff = false;
@@ -163,10 +163,10 @@ public sealed class MosquittoTests : IDisposable
         await Poll.UntilAsync(
             "one gives way and watches, the other has the session",
             () => Task.FromResult(both.Select(host => host.State.Link).Order().SequenceEqual([BrokerLinkState.Connected, BrokerLinkState.TakenOver])),
-            TimeSpan.FromSeconds(60),
+            TimeSpan.FromSeconds(120),
             Stop);
         await device.PublishAsync(3, Stop);
-        await Poll.UntilAsync("both taps see it", () => Task.FromResult(both.All(host => host.Seen.Count == 3)), TimeSpan.FromSeconds(30), Stop);
+        await Poll.UntilAsync("both taps see it", () => Task.FromResult(both.All(host => host.Seen.Count == 3)), TimeSpan.FromSeconds(120), Stop);
         Assert.Contains(both, host => host.State.LinkNote == "Another client has taken the session.");
     }
 
@@ -201,7 +201,7 @@ public sealed class MosquittoTests : IDisposable
         await Poll.UntilAsync(
             "the refusal is reported",
             () => Task.FromResult(intake.State.LinkNote?.Contains("NotAuthorized", StringComparison.Ordinal) == true),
-            TimeSpan.FromSeconds(30),
+            TimeSpan.FromSeconds(120),
             Stop,
             () => intake.State.LinkNote ?? string.Empty);
         await File.WriteAllTextAsync(files.At("password"), "open sesame\n", Stop);

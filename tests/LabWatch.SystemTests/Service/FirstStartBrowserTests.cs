@@ -19,7 +19,7 @@ public sealed class FirstStartBrowserTests
         await fixture.StartAsync(token, setsUp: false);
         string code = (await File.ReadAllTextAsync(Path.Combine(fixture.Data, "set-up-code"), token)).Trim();
         await Poll.UntilAsync(
-            "the code is printed", () => Task.FromResult(fixture.Service.Output.Contains(code, StringComparison.Ordinal)), TimeSpan.FromSeconds(30), token);
+            "the code is printed", () => Task.FromResult(fixture.Service.Output.Contains(code, StringComparison.Ordinal)), TimeSpan.FromSeconds(120), token);
         await using Browser browser = await Browser.StartAsync();
         Person administrator = new(await browser.OpenAsync(new Uri(fixture.Service.Address, "trail"), width, height), width);
 

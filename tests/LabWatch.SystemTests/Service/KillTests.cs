@@ -20,13 +20,13 @@ public sealed class KillTests
         for (int round = 0; round < Rounds; round++)
         {
             int before = device.Acknowledged.Count;
-            await Poll.UntilAsync("readings are acknowledged", () => Task.FromResult(device.Acknowledged.Count > before + 50), TimeSpan.FromSeconds(30), token, () => fixture.Service.Output);
+            await Poll.UntilAsync("readings are acknowledged", () => Task.FromResult(device.Acknowledged.Count > before + 50), TimeSpan.FromSeconds(120), token, () => fixture.Service.Output);
             await Task.Delay(TimeSpan.FromMilliseconds(random.Next(500)), TimeProvider.System, token);
             await fixture.Service.KillAsync();
             await fixture.StartAsync(token);
         }
 
-        await device.FinishAsync(TimeSpan.FromSeconds(30));
+        await device.FinishAsync(TimeSpan.FromSeconds(120));
         await AssertStored(fixture, device, first, token);
         await AssertVerified(fixture, token);
 

@@ -26,7 +26,7 @@ internal sealed class LabWatchProcess : IAsyncDisposable
         Client = new HttpClient(new SocketsHttpHandler { SslOptions = { RemoteCertificateValidationCallback = (_, certificate, _, _) => IsPrinted(certificate) } })
         {
             BaseAddress = address,
-            Timeout = TimeSpan.FromSeconds(30),
+            Timeout = TimeSpan.FromSeconds(120),
         };
 
         // As a browser does: with a cookie, a change must come from the service's own pages.
@@ -99,7 +99,7 @@ internal sealed class LabWatchProcess : IAsyncDisposable
                 return false;
             }
         },
-        TimeSpan.FromSeconds(60),
+        TimeSpan.FromSeconds(120),
         cancellationToken,
         () => Output);
 

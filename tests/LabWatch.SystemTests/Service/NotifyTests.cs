@@ -23,11 +23,11 @@ public sealed class NotifyTests
 
         Task<string> ready = ReceiveAsync(socket, token);
         await fixture.StartAsync(token);
-        Assert.Equal("READY=1", await ready.WaitAsync(TimeSpan.FromSeconds(30), TimeProvider.System, token));
+        Assert.Equal("READY=1", await ready.WaitAsync(TimeSpan.FromSeconds(120), TimeProvider.System, token));
 
         Task<string> stopping = ReceiveAsync(socket, token);
         await fixture.Service.StopAsync(token);
-        Assert.Equal("STOPPING=1", await stopping.WaitAsync(TimeSpan.FromSeconds(30), TimeProvider.System, token));
+        Assert.Equal("STOPPING=1", await stopping.WaitAsync(TimeSpan.FromSeconds(120), TimeProvider.System, token));
     }
 
     private static async Task<string> ReceiveAsync(Socket socket, CancellationToken token)

@@ -18,7 +18,7 @@ internal static partial class SignedIn
     /// <summary>Signs the client of a demo in as one of its people. Its cookie counts from then on.</summary>
     public static async Task SignInAsync(this LabWatchProcess demo, string name, CancellationToken cancellationToken)
     {
-        await Poll.UntilAsync("the codes are printed", () => Task.FromResult(demo.DemoCodes().ContainsKey(name)), TimeSpan.FromSeconds(30), cancellationToken, () => demo.Output);
+        await Poll.UntilAsync("the codes are printed", () => Task.FromResult(demo.DemoCodes().ContainsKey(name)), TimeSpan.FromSeconds(120), cancellationToken, () => demo.Output);
         await Poll.UntilAsync(
             "the person is signed in",
             async () =>
@@ -26,7 +26,7 @@ internal static partial class SignedIn
                 using HttpResponseMessage answer = await demo.Client.PostAsJsonAsync("api/v1/sign-in", new { name, password = demo.DemoCodes()[name] }, cancellationToken);
                 return answer.IsSuccessStatusCode;
             },
-            TimeSpan.FromSeconds(30), cancellationToken, () => demo.Output);
+            TimeSpan.FromSeconds(120), cancellationToken, () => demo.Output);
     }
 
     /// <summary>Plays the set-up of a fresh service with the code that it printed.</summary>
@@ -34,7 +34,7 @@ internal static partial class SignedIn
     public static async Task<string> SetUpAsync(this LabWatchProcess service, string dataDirectory, CancellationToken cancellationToken)
     {
         string file = Path.Combine(dataDirectory, "set-up-code");
-        await Poll.UntilAsync("the code of the set-up is there", () => Task.FromResult(File.Exists(file) && service.Output.Contains("/set-up", StringComparison.Ordinal)), TimeSpan.FromSeconds(30), cancellationToken, () => service.Output);
+        await Poll.UntilAsync("the code of the set-up is there", () => Task.FromResult(File.Exists(file) && service.Output.Contains("/set-up", StringComparison.Ordinal)), TimeSpan.FromSeconds(120), cancellationToken, () => service.Output);
         string code = (await File.ReadAllTextAsync(file, cancellationToken)).Trim();
         await PostAsync(service, "api/v1/set-up", new { code, name = "first", displayName = "First Administrator", password = Password }, cancellationToken);
         Assert.False(File.Exists(file), "The code is good once.");

@@ -26,11 +26,11 @@ public sealed class StoreStoppedTests
         await Poll.UntilAsync(
             "the reading that came in meanwhile is stored",
             async () => (await fixture.ReadAsync("case", time, time + 1, token)).Count == 1,
-            TimeSpan.FromSeconds(30), token, () => fixture.Service.Output);
+            TimeSpan.FromSeconds(120), token, () => fixture.Service.Output);
         await Poll.UntilAsync(
             "the alert is on the record",
             async () => (await CountAsync(Path.Combine(fixture.Data, "records.db"), token)) > 0,
-            TimeSpan.FromSeconds(30), token, () => fixture.Service.Output);
+            TimeSpan.FromSeconds(120), token, () => fixture.Service.Output);
         Assert.Single(receiver.Bodies, body => body.Contains("hot-surface", StringComparison.Ordinal));
     }
 
