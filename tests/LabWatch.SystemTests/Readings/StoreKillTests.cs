@@ -2,6 +2,7 @@ using System.Diagnostics;
 using System.Globalization;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
+using LabWatch.SystemTests.Reliability;
 
 namespace LabWatch.SystemTests.Readings;
 
@@ -26,10 +27,14 @@ public sealed class StoreKillTests
             Assert.Empty(store.Findings);
             said = stored - 1;
         }
+
+        long readings = (said + 1L) * StoreWriterProcess.PackWidth;
+        ReliabilityReport.Record(
+            "store of readings", "writing process killed (kill -9) at random moments while it appends and seals", $"{Rounds()} kills",
+            "after each kill the whole store was read back, compared, and everything appended again", readings, 0, 0);
     }
 
-    private static int Rounds() =>
-        int.TryParse(Environment.GetEnvironmentVariable("LABWATCH_KILLS"), CultureInfo.InvariantCulture, out int rounds) ? rounds : 4;
+    private static int Rounds() => TestLength.Of(shortForm: 4, longForm: 100);
 
     private static async Task<int> KillAfterAsync(string folder, int from, int commits, int milliseconds)
     {

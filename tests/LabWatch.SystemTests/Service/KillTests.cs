@@ -1,4 +1,5 @@
 using LabWatch.Lab.Time;
+using LabWatch.SystemTests.Reliability;
 
 namespace LabWatch.SystemTests.Service;
 
@@ -36,7 +37,6 @@ public sealed class KillTests
         await AssertStored(fixture, device, first, token);
         await fixture.Service.KillAsync();
         await AssertVerified(fixture, token);
-        TestContext.Current.SendDiagnosticMessage($"{device.Acknowledged.Count} readings acknowledged over {Rounds} kills");
     }
 
     [Fact]
@@ -60,8 +60,12 @@ public sealed class KillTests
     {
         long last = device.Acknowledged.Keys.Max();
         IReadOnlyList<(long Time, double Value)> stored = await fixture.ReadAsync("well-1", first, last + 1, token);
-        Assert.Equal(stored.Count, stored.Select(reading => reading.Time).Distinct().Count());
-        Dictionary<long, double> byTime = stored.ToDictionary(reading => reading.Time, reading => reading.Value);
-        Assert.DoesNotContain(device.Acknowledged, sent => !byTime.TryGetValue(sent.Key, out double value) || value != sent.Value);
+        Dictionary<long, double> byTime = stored.GroupBy(reading => reading.Time).ToDictionary(group => group.Key, group => group.First().Value);
+        int doubled = stored.Count - byTime.Count;
+        int lost = device.Acknowledged.Count(sent => !byTime.TryGetValue(sent.Key, out double value) || value != sent.Value);
+        ReliabilityReport.Record(
+            "service with its own broker", "killed (kill -9) at random moments under load", $"{Rounds} kills",
+            "read back through the API, verified against the trail beside the running service and after a last kill", device.Acknowledged.Count, lost, doubled);
+        Assert.Equal((0, 0), (lost, doubled));
     }
 }
