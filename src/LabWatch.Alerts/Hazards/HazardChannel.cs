@@ -4,7 +4,8 @@ using LabWatch.Lab.Sources;
 namespace LabWatch.Alerts.Hazards;
 
 /// <summary>One hazard channel with what it is judged by at present and what is remembered of it.</summary>
-internal sealed class HazardChannel(ReferenceSource source, Channel channel, SurfaceLimit? limit, long silence, HazardChannelState state)
+internal sealed class HazardChannel(
+    ReferenceSource source, Channel channel, SurfaceLimit? limit, long silence, HazardChannelState state, HazardJunction? junction = null)
 {
     public ReferenceSource Source { get; } = source;
 
@@ -19,6 +20,9 @@ internal sealed class HazardChannel(ReferenceSource source, Channel channel, Sur
     public long Silence { get; } = silence;
 
     public HazardChannelState State { get; } = state;
+
+    /// <summary>Its reference junctions, where it is a thermocouple whose description says where their temperature comes from; else null.</summary>
+    public HazardJunction? Junction { get; } = junction;
 
     /// <summary>How raw becomes temperature now; replaced when another certificate comes into force.</summary>
     public SurfaceThermometer Thermometer { get; set; }

@@ -2,6 +2,7 @@ using System.Collections.Frozen;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Identity;
+using LabWatch.Lab.Instruments;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 
@@ -29,7 +30,9 @@ internal sealed class HazardMap
     /// <param name="before">The map before.</param>
     /// <param name="silence">Length of a channel's silence in monotonic ticks.</param>
     /// <param name="newState">Makes the state of a channel that was not watched before.</param>
-    public static HazardMap Build(LabSnapshot snapshot, HazardMap before, Func<Channel, long> silence, Func<Channel, HazardChannelState> newState) => new(
+    /// <param name="clock">Clock by which a reading of reference junctions is fresh.</param>
+    public static HazardMap Build(
+        LabSnapshot snapshot, HazardMap before, Func<Channel, long> silence, Func<Channel, HazardChannelState> newState, TimeProvider clock) => new(
         snapshot,
         snapshot.Sources.ToFrozenDictionary(
             source => source.Key,
@@ -41,7 +44,10 @@ internal sealed class HazardMap
                         channel,
                         channel.IsTouchable ? SurfaceLimit.For(channel.Contact) : null,
                         silence(channel),
-                        before.Find(channel.Key)?.State ?? newState(channel))),
+                        before.Find(channel.Key)?.State ?? newState(channel),
+                        channel.ReferenceJunction is { } junction
+                            ? new HazardJunction(junction, junction.Channel is { } id ? source.FindChannel(id) : null, clock)
+                            : null)),
                 ])));
 
     /// <summary>The watched channel of a key; null where it is not watched.</summary>
@@ -54,10 +60,15 @@ internal sealed class HazardMap
         {
             foreach (HazardChannel channel in source.Channels)
             {
-                SurfaceThermometer thermometer = SurfaceThermometer.For(channel.Channel, Snapshot.CertificateInForce(channel.Key, at));
+                SurfaceThermometer thermometer = SurfaceThermometer.For(channel.Channel, Snapshot.CertificateInForce(channel.Key, at), channel.Junction);
+                Certificate? ofJunction = channel.Junction?.Measured is { } measured ? Snapshot.CertificateInForce(measured.Key, at) : null;
                 lock (source.Gate)
                 {
                     channel.Thermometer = thermometer;
+                    if (channel.Junction is { } junction)
+                    {
+                        junction.Certificate = ofJunction;
+                    }
                 }
             }
         }

@@ -10,4 +10,12 @@ internal sealed class HazardSource(Lock gate, IReadOnlyList<HazardChannel> chann
     public IReadOnlyList<HazardChannel> Channels { get; } = channels;
 
     public FrozenDictionary<string, HazardChannel> ById { get; } = channels.ToFrozenDictionary(channel => channel.Channel.Id, StringComparer.Ordinal);
+
+    /// <summary>Reference junctions that a channel measures, by the id of that channel; empty for a source without such thermocouples on its surfaces.</summary>
+    public FrozenDictionary<string, HazardJunction[]> Junctions { get; } = channels
+        .Select(channel => channel.Junction)
+        .OfType<HazardJunction>()
+        .Where(junction => junction.Measured is not null)
+        .GroupBy(junction => junction.Measured!.Id, StringComparer.Ordinal)
+        .ToFrozenDictionary(group => group.Key, group => group.ToArray(), StringComparer.Ordinal);
 }

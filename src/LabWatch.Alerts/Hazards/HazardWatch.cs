@@ -54,7 +54,7 @@ internal sealed class HazardWatch : IReadingTap
         {
             HazardMap before = _map;
             HazardMap map = HazardMap.Build(
-                snapshot, before, channel => ConditionDelays.Ticks(_rules.SilenceOf(channel.Interval), _clock), NewState);
+                snapshot, before, channel => ConditionDelays.Ticks(_rules.SilenceOf(channel.Interval), _clock), NewState, _clock);
             map.RefreshThermometers(Instant.Now(_clock));
             _judge.Texts = new HazardTexts(new SiteTime(snapshot.Site));
             _map = map;
@@ -153,6 +153,18 @@ internal sealed class HazardWatch : IReadingTap
         IReadOnlyList<Reading> readings = pack.Readings;
         lock (source.Gate)
         {
+            // Junctions first: the order of the channels in a pack says nothing.
+            for (int i = 0; source.Junctions.Count > 0 && i < readings.Count; i++)
+            {
+                if (source.Junctions.TryGetValue(readings[i].Channel, out HazardJunction[]? junctions) && !_rules.IsOld(readings[i].Time, pack.Arrival))
+                {
+                    foreach (HazardJunction junction in junctions)
+                    {
+                        junction.Hear(readings[i]);
+                    }
+                }
+            }
+
             for (int i = 0; i < readings.Count; i++)
             {
                 Reading reading = readings[i];

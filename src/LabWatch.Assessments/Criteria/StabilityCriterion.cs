@@ -1,4 +1,5 @@
 using LabWatch.Assessments.Criteria.StabilityParts;
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Limits;
 using LabWatch.Lab.Sources;
 
@@ -46,8 +47,7 @@ public sealed class StabilityCriterion(CriterionSchedule schedule) : ICriterion
     {
         ArgumentNullException.ThrowIfNull(source);
         return source.ReferenceChannel is not { } reference ? []
-            : SetPointChannel(source) is { } setPoint ? [reference.Id, setPoint.Id]
-            : [reference.Id];
+            : JunctionTemperatures.With(source, SetPointChannel(source) is { } setPoint ? [reference.Id, setPoint.Id] : [reference.Id]);
     }
 
     /// <inheritdoc/>

@@ -3,6 +3,7 @@ using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Metrology.Thermometry;
+using LabWatch.Metrology.Uncertainty;
 using LabWatch.Readings;
 
 namespace LabWatch.Assessments.Evaluation;
@@ -30,6 +31,9 @@ public sealed record TemperatureSeries(
     /// <summary>No readings.</summary>
     public static TemperatureSeries Empty { get; } = new(default, default, 0, 0, 0, double.NaN);
 
+    /// <summary>Readings of a thermocouple left out because its reference junctions had no fresh temperature.</summary>
+    public int WithoutJunction { get; init; }
+
     /// <summary>Number of temperatures.</summary>
     public int Count => Celsius.Length;
 
@@ -48,8 +52,36 @@ public sealed record TemperatureSeries(
         }
     }
 
+    /// <summary>Readings in degree Celsius as they are indicated, where no certificate is in force.</summary>
+    public static TemperatureSeries Indicated(ReadingSeries? series)
+    {
+        if (series is null)
+        {
+            return Empty;
+        }
+
+        long[] times = new long[series.Count];
+        double[] celsius = new double[series.Count];
+        int kept = 0;
+        for (int i = 0; i < series.Count; i++)
+        {
+            double value = series.Values.Span[i];
+            if ((series.Qualities.Span[i] & Unusable) == 0 && double.IsFinite(value))
+            {
+                (times[kept], celsius[kept]) = (series.TimeMicroseconds.Span[i], value);
+                kept++;
+            }
+        }
+
+        return new(times.AsMemory(0, kept), celsius.AsMemory(0, kept), series.Count - kept, 0, 0, double.NaN);
+    }
+
     /// <summary>Evaluates the raw readings of a channel.</summary>
-    public static TemperatureSeries Of(ReadingSeries? series, Channel channel, CertificateTimeline certificates)
+    /// <param name="series">The readings; null for none.</param>
+    /// <param name="channel">The channel.</param>
+    /// <param name="certificates">Certificates in force over the readings.</param>
+    /// <param name="junction">The reference junctions of a thermocouple; null where only the certificate may say what they are kept at.</param>
+    public static TemperatureSeries Of(ReadingSeries? series, Channel channel, CertificateTimeline certificates, JunctionTemperatures? junction = null)
     {
         ArgumentNullException.ThrowIfNull(channel);
         ArgumentNullException.ThrowIfNull(certificates);
@@ -60,7 +92,7 @@ public sealed record TemperatureSeries(
 
         long[] times = new long[series.Count];
         double[] celsius = new double[series.Count];
-        int kept = 0, leftOut = 0, without = 0, outside = 0;
+        int kept = 0, leftOut = 0, without = 0, withoutJunction = 0, outside = 0;
         double uncertainty = double.NaN;
         foreach (CertificateStretch stretch in certificates.Stretches)
         {
@@ -73,8 +105,15 @@ public sealed record TemperatureSeries(
                     continue;
                 }
 
+                Estimate? cold = stretch.Certificate?.Characteristic is ThermocoupleCharacteristic ? junction?.At(part.TimeMicroseconds.Span[i]) : null;
+                if (cold is { HasValue: false })
+                {
+                    withoutJunction++;
+                    continue;
+                }
+
                 TemperatureEvaluation evaluation = stretch.Certificate is { } certificate
-                    ? CertificateEvaluation.Evaluate(certificate, part.Values.Span[i], channel.Unit)
+                    ? CertificateEvaluation.Evaluate(certificate, part.Values.Span[i], channel.Unit, new(null, cold))
                     : TemperatureEvaluation.None;
                 if (!evaluation.HasValue)
                 {
@@ -91,7 +130,7 @@ public sealed record TemperatureSeries(
             }
         }
 
-        return new(times.AsMemory(0, kept), celsius.AsMemory(0, kept), leftOut, without, outside, uncertainty);
+        return new(times.AsMemory(0, kept), celsius.AsMemory(0, kept), leftOut, without, outside, uncertainty) { WithoutJunction = withoutJunction };
     }
 
     /// <summary>The temperatures in a window; the counts stay those of the whole.</summary>

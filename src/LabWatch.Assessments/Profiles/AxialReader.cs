@@ -42,8 +42,8 @@ internal sealed class AxialReader
 
     /// <summary>The ids of the channels that are read.</summary>
     public static IReadOnlyList<string> Channels(ReferenceSource source) =>
-        [.. source.Channels.Where(channel => channel.Quantity is ChannelQuantity.WellThermometer or ChannelQuantity.SetPoint or ChannelQuantity.ApertureLip
-            or ChannelQuantity.AmbientTemperature or ChannelQuantity.Shutter or ChannelQuantity.ComparatorTemperature or ChannelQuantity.ComparatorSignal).Select(channel => channel.Id)];
+        JunctionTemperatures.With(source, [.. source.Channels.Where(channel => channel.Quantity is ChannelQuantity.WellThermometer or ChannelQuantity.SetPoint or ChannelQuantity.ApertureLip
+            or ChannelQuantity.AmbientTemperature or ChannelQuantity.Shutter or ChannelQuantity.ComparatorTemperature or ChannelQuantity.ComparatorSignal).Select(channel => channel.Id)]);
 
     /// <summary>Reads the evidence.</summary>
     /// <param name="snapshot">What is configured.</param>
@@ -109,7 +109,7 @@ internal sealed class AxialReader
         }
         else if (mean.Count == 0 || mean.Count < _leastCoverage * expected)
         {
-            string clause = $"{well.Id} gave {Quantities.Count(mean.Count)} of {Quantities.Count(expected)} readings";
+            string clause = $"{well.Id} gave {Quantities.Count(mean.Count)} of {Quantities.Count(expected)} readings{JunctionText.Behind(_source, well, mean.WithoutJunction)}";
             (_leastCoverage > 0 || well.IsReference ? _obstacles : _leftOut).Add(clause);
         }
         else if (mean.OutsideCertificate > 0)

@@ -1,7 +1,6 @@
 using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab;
 using LabWatch.Lab.Instruments;
-using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
 using LabWatch.Readings;
@@ -20,7 +19,8 @@ namespace LabWatch.Assessments.Profiles;
 internal readonly record struct WindowMean(
     double Celsius, double NoiseKelvin, double CalibrationKelvin, int Count, int LeftOut, int OutsideCertificate, Certificate? Certificate, bool CertificateChanged)
 {
-    private const ReadingQuality Unusable = ReadingQuality.NoValue | ReadingQuality.OutsideSensorRange;
+    /// <summary>Readings of a thermocouple without a fresh temperature of its reference junctions.</summary>
+    public int WithoutJunction { get; init; }
 
     public bool HasValue => double.IsFinite(Celsius);
 
@@ -33,8 +33,8 @@ internal readonly record struct WindowMean(
         ReadingSeries? series = readings.Find(channel.Id)?.Slice(window);
         bool hasCertificate = timeline.Stretches.Any(stretch => stretch.Certificate is not null);
         TemperatureSeries temperatures = hasCertificate || !string.Equals(channel.Unit, "Cel", StringComparison.Ordinal)
-            ? TemperatureSeries.Of(series, channel, timeline)
-            : Indicated(series);
+            ? TemperatureSeries.Of(series, channel, timeline, JunctionTemperatures.Of(snapshot, channel, window, readings))
+            : TemperatureSeries.Indicated(series);
         double noise = BatchMeans.StandardError(temperatures.TimeMicroseconds.Span, temperatures.Celsius.Span, window);
         return new(
             temperatures.MeanCelsius,
@@ -44,29 +44,9 @@ internal readonly record struct WindowMean(
             temperatures.LeftOut,
             temperatures.OutsideCertificate,
             timeline.Stretches[^1].Certificate,
-            timeline.Stretches.Count > 1);
-    }
-
-    private static TemperatureSeries Indicated(ReadingSeries? series)
-    {
-        if (series is null)
+            timeline.Stretches.Count > 1)
         {
-            return TemperatureSeries.Empty;
-        }
-
-        long[] times = new long[series.Count];
-        double[] celsius = new double[series.Count];
-        int kept = 0;
-        for (int i = 0; i < series.Count; i++)
-        {
-            double value = series.Values.Span[i];
-            if ((series.Qualities.Span[i] & Unusable) == 0 && double.IsFinite(value))
-            {
-                (times[kept], celsius[kept]) = (series.TimeMicroseconds.Span[i], value);
-                kept++;
-            }
-        }
-
-        return new(times.AsMemory(0, kept), celsius.AsMemory(0, kept), series.Count - kept, 0, 0, double.NaN);
+            WithoutJunction = temperatures.WithoutJunction,
+        };
     }
 }

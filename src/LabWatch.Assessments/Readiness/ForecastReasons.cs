@@ -87,7 +87,9 @@ internal static class ForecastReasons
         TimeWindow span = new(ChangedAt(input) ?? recent.Window.Start, recent.Window.End);
         return span.End <= span.Start
             ? TemperatureSeries.Empty
-            : TemperatureSeries.Of(recent.Find(reference.Id)?.Slice(span), reference, CertificateTimeline.Of(input.Snapshot, reference.Key, span));
+            : TemperatureSeries.Of(
+                recent.Find(reference.Id)?.Slice(span), reference, CertificateTimeline.Of(input.Snapshot, reference.Key, span),
+                JunctionTemperatures.Of(input.Snapshot, reference, span, recent));
     }
 
     private static ReadinessReason Told(string text) => new(ReasonCode.Expected, text, false);

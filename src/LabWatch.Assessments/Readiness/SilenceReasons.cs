@@ -2,6 +2,7 @@ using LabWatch.Assessments.Criteria.DataHealthParts;
 using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
+using LabWatch.Lab.Time;
 
 namespace LabWatch.Assessments.Readiness;
 
@@ -24,7 +25,7 @@ internal static class SilenceReasons
 
         TimeSpan silent = input.Now - last;
         return silent > Longest(channel) ? [Unknown($"The newest reading of {channel.Id} is {Quantities.Duration(silent)} old.")]
-            : double.IsNaN(now.Celsius) ? [Unknown($"The newest reading of {channel.Id} gives no temperature.")]
+            : double.IsNaN(now.Celsius) ? [Unknown($"The newest reading of {channel.Id} gives no temperature{Junction(input, channel, last)}.")]
             : [];
     }
 
@@ -51,6 +52,11 @@ internal static class SilenceReasons
 
         return silent.Count == 0 ? [] : [new(ReasonCode.Silent, $"Silent: {string.Join("; ", silent)}.", false)];
     }
+
+    private static string Junction(ReadinessInput input, Channel channel, Instant at) =>
+        NewestJunction.Of(input.Snapshot, input.Source, channel, at, id => SourceNow.Find(input, input.Source.FindChannel(id)!)) is { HasValue: false }
+            ? $": {JunctionText.Subject(input.Source, channel)} has no fresh reading"
+            : string.Empty;
 
     private static ReadinessReason Unknown(string text) => new(ReasonCode.NoData, text, true) { PassesByWaiting = true };
 

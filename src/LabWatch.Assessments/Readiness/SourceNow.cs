@@ -1,4 +1,5 @@
 using LabWatch.Assessments.Criteria.StabilityParts;
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Instruments;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
@@ -44,11 +45,13 @@ internal sealed record SourceNow(
         source.ReferenceChannel ?? source.Channels.FirstOrDefault(channel => channel.Quantity is ChannelQuantity.ComparatorTemperature);
 
     /// <summary>The newest reading of a channel; null where there is none.</summary>
-    public static Reading? Find(ReadinessInput input, Channel channel)
+    public static Reading? Find(ReadinessInput input, Channel channel) => Find(input, channel.Id);
+
+    private static Reading? Find(ReadinessInput input, string channel)
     {
         foreach (Reading reading in input.Newest)
         {
-            if (string.Equals(reading.Channel, channel.Id, StringComparison.Ordinal))
+            if (string.Equals(reading.Channel, channel, StringComparison.Ordinal))
             {
                 return reading;
             }
@@ -59,7 +62,8 @@ internal sealed record SourceNow(
 
     private static double Temperature(ReadinessInput input, Channel? channel, Reading? reading) =>
         channel is null || reading is not { } last ? double.NaN
-        : input.Snapshot.CertificateInForce(channel.Key, last.Time) is { } certificate ? CertificateEvaluation.Evaluate(certificate, last.Value, channel.Unit).Celsius.Value
+        : input.Snapshot.CertificateInForce(channel.Key, last.Time) is { } certificate
+            ? CertificateEvaluation.Evaluate(certificate, last.Value, channel.Unit, new(null, NewestJunction.Of(input.Snapshot, input.Source, channel, last.Time, id => Find(input, id)))).Celsius.Value
         : string.Equals(channel.Unit, "Cel", StringComparison.Ordinal) ? last.Value
         : double.NaN;
 

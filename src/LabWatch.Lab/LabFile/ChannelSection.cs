@@ -1,6 +1,7 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
 using LabWatch.Metrology.Hazards;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Lab.LabFile;
 
@@ -10,7 +11,8 @@ internal static class ChannelSection
     public static Channel Read(JsonCursor item, SourceKey source)
     {
         item.OnlyMembers(
-            "id", "name", "quantity", "unit", "intervalSeconds", "axialPositionMillimetre", "sensorMinimum", "sensorMaximum", "band", "contact", "hazard", "reference");
+            "id", "name", "quantity", "unit", "intervalSeconds", "axialPositionMillimetre", "sensorMinimum", "sensorMaximum", "band", "contact", "hazard", "reference",
+            "referenceJunction");
         ChannelQuantity quantity = item.Choice<ChannelQuantity>("quantity");
         string unit = item.Text("unit");
         IReadOnlyList<string> permitted = ChannelUnits.Of(quantity);
@@ -35,10 +37,35 @@ internal static class ChannelSection
             SensorMinimum = minimum,
             SensorMaximum = maximum,
             Band = item.OptionalText("band"),
+            ReferenceJunction = Junction(item, unit),
             Contact = contact,
             IsHazardChannel = contact is not null || item.Flag("hazard"),
             IsReference = item.Flag("reference"),
         };
+    }
+
+    private static ReferenceJunction? Junction(JsonCursor item, string unit)
+    {
+        if (item.Object("referenceJunction", required: false) is not { } junction)
+        {
+            return null;
+        }
+
+        junction.OnlyMembers("channel", "celsius", "standardUncertaintyKelvin");
+        string? channel = junction.OptionalText("channel");
+        double? celsius = junction.OptionalNumber("celsius", -50, 200, required: channel is null);
+        double u = junction.OptionalNumber("standardUncertaintyKelvin", 0, 100, required: channel is null) ?? 0;
+        if (channel is not null && celsius is not null)
+        {
+            junction.Report("contradiction", "The reference junctions are measured and kept at once.", "Give either the channel or the temperature.", "celsius");
+        }
+
+        if (unit.Length > 0 && !string.Equals(unit, "mV", StringComparison.Ordinal))
+        {
+            item.Report("not-a-thermocouple", "Only a channel read in mV has reference junctions.", "Remove \"referenceJunction\" or correct the unit.", "referenceJunction");
+        }
+
+        return new ReferenceJunction(channel, new Estimate(channel is null ? celsius ?? double.NaN : 0, u));
     }
 
     private static SurfaceContact? Contact(JsonCursor item)

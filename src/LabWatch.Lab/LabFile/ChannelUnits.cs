@@ -13,6 +13,7 @@ internal static class ChannelUnits
     public static IReadOnlyList<string> Of(ChannelQuantity quantity) => quantity switch
     {
         ChannelQuantity.WellThermometer or ChannelQuantity.OuterSurface or ChannelQuantity.ApertureLip or ChannelQuantity.AmbientTemperature => Thermometer,
+        ChannelQuantity.ReferenceJunction => ["Cel", "Ohm"],
         ChannelQuantity.SetPoint or ChannelQuantity.DewPoint or ChannelQuantity.ComparatorTemperature => ["Cel"],
         ChannelQuantity.HeaterPower => ["W", "kW"],
         ChannelQuantity.HeaterCurrent => ["A"],

@@ -110,6 +110,13 @@ internal static class LabFileChecks
             findings.Add(new Finding("missing", at + "/axialPositionMillimetre", "A well needs its place on the axis.", null, "Give the distance of the sensing element from the aperture plane."));
         }
 
+        if (channel.ReferenceJunction?.Channel is { } junction && source.FindChannel(junction) is not { Unit: "Cel" or "Ohm" })
+        {
+            findings.Add(new Finding(
+                "reference-junction", at + "/referenceJunction/channel", "The reference junctions are not measured by a channel of this source that is read in Cel or Ohm.", Finding.Quote(junction),
+                "Name a channel of the quantity reference-junction, or another thermometer at the junctions that is no thermocouple itself."));
+        }
+
         if (channel.Contact is not null && channel.Quantity is not (ChannelQuantity.OuterSurface or ChannelQuantity.ApertureLip))
         {
             findings.Add(new Finding("not-a-surface", at + "/contact", "Only an outer surface or the aperture lip can be touched.", channel.Id, "Remove \"contact\" or correct the quantity."));

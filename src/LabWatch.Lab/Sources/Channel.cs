@@ -25,6 +25,9 @@ public sealed record Channel(ChannelKey Key, string Name, ChannelQuantity Quanti
     /// <summary>Working band of a comparator channel; null for the others.</summary>
     public string? Band { get; init; }
 
+    /// <summary>Where the reference junctions of a thermocouple read in millivolt have their temperature from; null to take the certificate's word.</summary>
+    public ReferenceJunction? ReferenceJunction { get; init; }
+
     /// <summary>How a touchable surface can hurt; null where the channel is no touchable surface.</summary>
     public SurfaceContact? Contact { get; init; }
 

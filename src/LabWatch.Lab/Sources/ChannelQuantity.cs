@@ -33,6 +33,9 @@ public enum ChannelQuantity
     /// <summary>Ambient air temperature, degree Celsius.</summary>
     AmbientTemperature,
 
+    /// <summary>Temperature of the reference junctions of thermocouples, degree Celsius (raw in ohm or degree Celsius).</summary>
+    ReferenceJunction,
+
     /// <summary>Relative humidity of the room, percent.</summary>
     RelativeHumidity,
 

@@ -270,6 +270,24 @@ public sealed class HotSurfaceTests
     }
 
     [Fact]
+    public void A_thermocouple_on_a_surface_takes_its_reference_junctions_from_their_channel()
+    {
+        // IEC 60584-1:2013, type K: 2.023 mV at 50 degC and 1.000 mV at 25 degC against 0 degC.
+        WatchBench bench = new(Thermocouple());
+        bench.Watch.OnPack(new ReadingPack(TestSite.Rowan, bench.Now, [new Reading("case", bench.Now, 2.03 - 1.000), new Reading("junction", bench.Now, 25)]));
+        Assert.Equal([Raised], bench.Edges);
+        Assert.InRange(bench.Conditions.Found[0].Value!.Value, 50, 50.3);
+    }
+
+    [Fact]
+    public void A_thermocouple_whose_reference_junctions_are_silent_counts_as_silent_itself()
+    {
+        WatchBench bench = new(Thermocouple());
+        bench.Pass(400, 1.03);
+        Assert.Equal([(HazardCode.HazardSilent, true)], bench.Edges);
+    }
+
+    [Fact]
     public void The_message_says_what_where_value_limit_since_when_and_the_caution()
     {
         WatchBench bench = new(TestSite.OneSurface());
@@ -279,6 +297,17 @@ public sealed class HotSurfaceTests
         Assert.Contains("2026-12-01 08:00:00 +00:00", found.Detail, StringComparison.Ordinal);
         Assert.Contains("hollin-vale.rowan", found.Detail, StringComparison.Ordinal);
         Assert.EndsWith(AlertTexts.Caution, found.Detail, StringComparison.Ordinal);
+    }
+
+    private static LabWatch.Lab.LabSnapshot Thermocouple()
+    {
+        Channel channel = TestSite.Surface(TestSite.Rowan, unit: "mV") with { ReferenceJunction = new("junction", new(0, 0)) };
+        Channel junction = new(new ChannelKey(TestSite.Rowan, "junction"), "Terminal block", ChannelQuantity.ReferenceJunction, "Cel", TimeSpan.FromSeconds(1));
+        Certificate paper = new(
+            "case-cert", 1, "case-sensor", "HV-1", "Hollin Vale", TestSite.Start - TimeSpan.FromDays(30), null, 0, 300,
+            new ThermocoupleCharacteristic(0.5, 2, ThermocoupleType.K, [], null));
+        Installation stay = new("case-sensor", channel.Key, TestSite.Start - TimeSpan.FromDays(20), null);
+        return TestSite.Lab([], [stay], [paper], TestSite.Source(TestSite.Rowan, channel, junction));
     }
 
     private static LabWatch.Lab.LabSnapshot Resistance(bool certificate)

@@ -41,8 +41,10 @@ internal sealed record StabilityEvidence(
             schedule,
             reference,
             certificates,
-            TemperatureSeries.Of(input.Readings.Find(reference.Id)?.Slice(before), reference, certificates),
-            TemperatureSeries.Of(input.Readings.Find(reference.Id)?.Slice(input.Window), reference, certificates),
+            TemperatureSeries.Of(
+                input.Readings.Find(reference.Id)?.Slice(before), reference, certificates, JunctionTemperatures.Of(input.Snapshot, reference, before, input.Readings)),
+            TemperatureSeries.Of(
+                input.Readings.Find(reference.Id)?.Slice(input.Window), reference, certificates, JunctionTemperatures.Of(input.Snapshot, reference, input.Window, input.Readings)),
             setPoint is not null,
             SetPointHistory.Of(setPoint is null ? null : input.Readings.Find(setPoint.Id)));
     }

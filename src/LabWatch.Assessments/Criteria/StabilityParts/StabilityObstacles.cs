@@ -57,6 +57,12 @@ internal static class StabilityObstacles
             yield return $"{Quantities.Count(within.WithoutCertificate)} readings of {evidence.Reference.Id} give no temperature through the certificate";
         }
 
+        if (within.WithoutJunction > 0)
+        {
+            yield return $"{Quantities.Count(within.WithoutJunction)} readings of {evidence.Reference.Id} have no temperature, because "
+                + $"{JunctionText.Subject(evidence.Input.Source, evidence.Reference)} had no fresh reading";
+        }
+
         if (within.OutsideCertificate > 0)
         {
             yield return $"{Quantities.Count(within.OutsideCertificate)} of {Quantities.Count(within.Count)} readings lie outside the range of the certificate"

@@ -1,4 +1,5 @@
 using System.Collections.Concurrent;
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
@@ -24,7 +25,7 @@ internal sealed class RecentReadings(IReadingStore store, TimeProvider clock)
             return known.Readings;
         }
 
-        string[] channels = [.. source.Channels.Where(channel => channel.IsReference || channel.Quantity is ChannelQuantity.SetPoint or ChannelQuantity.ComparatorTemperature).Select(channel => channel.Id)];
+        IReadOnlyList<string> channels = JunctionTemperatures.With(source, [.. source.Channels.Where(channel => channel.IsReference || channel.Quantity is ChannelQuantity.SetPoint or ChannelQuantity.ComparatorTemperature).Select(channel => channel.Id)]);
         ReadingWindow? readings;
         try
         {

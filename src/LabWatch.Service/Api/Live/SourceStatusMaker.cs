@@ -26,9 +26,9 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
         List<NewestReadingView> shown = [];
         foreach (Channel channel in source.Channels)
         {
-            if (newest.TryGetValue(channel.Id, out Reading reading))
+            if (newest.ContainsKey(channel.Id))
             {
-                shown.Add(Show(lab, channel, reading, now));
+                shown.Add(Show(lab, source, channel, newest, now));
             }
         }
 
@@ -44,20 +44,24 @@ internal sealed class SourceStatusMaker(LiveReadings live, LatestAssessments ass
             run is null ? null : RunViews.Of(run));
     }
 
-    private static NewestReadingView Show(LabSnapshot lab, Channel channel, Reading reading, Instant now) => new(
-        channel.Id,
-        reading.Time,
-        Numbers.OrNull(reading.Value),
-        Temperatures.IsTemperature(channel) ? Temperatures.Of(lab, channel, reading.Time, reading.Value)?.Celsius : null,
-        Names.OfFlags(reading.Quality),
-        Silence.IsSilent(channel, reading.Time, now));
+    private static NewestReadingView Show(LabSnapshot lab, ReferenceSource source, Channel channel, IReadOnlyDictionary<string, Reading> newest, Instant now)
+    {
+        Reading reading = newest[channel.Id];
+        return new(
+            channel.Id,
+            reading.Time,
+            Numbers.OrNull(reading.Value),
+            Temperatures.IsTemperature(channel) ? Temperatures.Of(lab, source, channel, newest)?.Celsius : null,
+            Names.OfFlags(reading.Quality),
+            Silence.IsSilent(channel, reading.Time, now));
+    }
 
     private static TemperatureView? Reference(LabSnapshot lab, ReferenceSource source, IReadOnlyDictionary<string, Reading> newest)
     {
         Channel? channel = source.ReferenceChannel
             ?? source.Channels.FirstOrDefault(candidate => candidate.Quantity == ChannelQuantity.ComparatorTemperature);
-        return channel is not null && newest.TryGetValue(channel.Id, out Reading reading)
-            ? Temperatures.Of(lab, channel, reading.Time, reading.Value)
+        return channel is not null && newest.ContainsKey(channel.Id)
+            ? Temperatures.Of(lab, source, channel, newest)
             : null;
     }
 

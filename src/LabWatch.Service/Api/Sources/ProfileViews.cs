@@ -25,7 +25,7 @@ internal static class ProfileViews
             at,
             Numbers.OrNull(profile.SetPointCelsius),
             profile.Evidence.Reference is { } reference ? new(reference.Celsius, 2 * reference.CalibrationKelvin, 2) : null,
-            [.. source.Channels.Where(channel => KindOf(channel) is not null).Select(channel => Point(lab, channel, newest, at))],
+            [.. source.Channels.Where(channel => KindOf(channel) is not null).Select(channel => Point(lab, source, channel, newest, at))],
             [.. profile.Curve.Select(point => new CurvePointView(point.PositionMillimetre, point.Celsius))],
             [.. profile.Bands.Select(Band)],
             profile.Notes);
@@ -39,11 +39,11 @@ internal static class ProfileViews
         _ => null,
     };
 
-    private static ProfilePointView Point(LabSnapshot lab, Channel channel, IReadOnlyDictionary<string, Reading> newest, Instant at)
+    private static ProfilePointView Point(LabSnapshot lab, ReferenceSource source, Channel channel, IReadOnlyDictionary<string, Reading> newest, Instant at)
     {
         bool isKnown = newest.TryGetValue(channel.Id, out Reading reading);
         TemperatureView? temperature = isKnown && (reading.Quality & (ReadingQuality.NoValue | ReadingQuality.OutsideSensorRange)) == 0
-            ? Temperatures.Of(lab, channel, reading.Time, reading.Value)
+            ? Temperatures.Of(lab, source, channel, newest)
             : null;
         return new(
             channel.Id,

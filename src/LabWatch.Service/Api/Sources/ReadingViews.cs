@@ -1,7 +1,9 @@
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Lab;
 using LabWatch.Lab.Instruments;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Metrology.Uncertainty;
 using LabWatch.Readings;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Views;
@@ -19,11 +21,15 @@ internal static class ReadingViews
         if (request.Bucket is { } bucket)
         {
             IReadOnlyList<ReadingSummary> rows = await store.ReduceAsync(request.Channel.Key, request.Window, bucket, cancellationToken).ConfigureAwait(false);
-            return Reduced(lab, request.Channel, empty, rows);
+            BucketJunctions? junctions = await BucketJunctions.ReadAsync(lab, source, request.Channel, request.Window, bucket, store, cancellationToken).ConfigureAwait(false);
+            return Reduced(lab, request.Channel, empty, rows, junctions);
         }
 
-        ReadingWindow window = await store.ReadAsync(source.Key, [request.Channel.Id], request.Window, cancellationToken).ConfigureAwait(false);
-        return window.Find(request.Channel.Id) is { } series ? Raw(lab, request.Channel, empty, series) : empty with { Quality = [] };
+        IReadOnlyList<string> channels = JunctionTemperatures.With(source, [request.Channel.Id]);
+        ReadingWindow window = await store.ReadAsync(source.Key, channels, request.Window, cancellationToken).ConfigureAwait(false);
+        return window.Find(request.Channel.Id) is { } series
+            ? Raw(lab, request.Channel, empty, series, JunctionTemperatures.Of(lab, request.Channel, request.Window, window))
+            : empty with { Quality = [] };
     }
 
     private static ReadingsView Empty(ReferenceSource source, ReadingRequest request) => new(
@@ -43,7 +49,7 @@ internal static class ReadingViews
         CelsiusMaximum: null,
         Quality: null);
 
-    private static ReadingsView Raw(LabSnapshot lab, Channel channel, ReadingsView view, ReadingSeries series)
+    private static ReadingsView Raw(LabSnapshot lab, Channel channel, ReadingsView view, ReadingSeries series, JunctionTemperatures? junctions)
     {
         CertificateLookup certificates = new(lab, channel);
         Instant[] times = new Instant[series.Count];
@@ -57,18 +63,18 @@ internal static class ReadingViews
             quality[i] = (int)series.Qualities.Span[i];
             if (celsius is not null)
             {
-                celsius[i] = Celsius(channel, certificates.At(times[i]), times[i], series.Values.Span[i]);
+                celsius[i] = Celsius(channel, certificates.At(times[i]), times[i], series.Values.Span[i], junctions?.At(times[i].Microseconds));
             }
         }
 
         return view with { Time = times, Raw = raw, Quality = quality, Celsius = celsius };
     }
 
-    private static ReadingsView Reduced(LabSnapshot lab, Channel channel, ReadingsView view, IReadOnlyList<ReadingSummary> rows)
+    private static ReadingsView Reduced(LabSnapshot lab, Channel channel, ReadingsView view, IReadOnlyList<ReadingSummary> rows, BucketJunctions? junctions)
     {
         bool isTemperature = view.Celsius is not null;
         CertificateLookup certificates = new(lab, channel);
-        (double? Low, double? Mean, double? High)[] celsius = isTemperature ? [.. rows.Select(row => Celsius(channel, certificates.At(row.Start), row))] : [];
+        (double? Low, double? Mean, double? High)[] celsius = isTemperature ? [.. rows.Select(row => Celsius(channel, certificates.At(row.Start), row, junctions?.At(row.Start)))] : [];
         return view with
         {
             Time = [.. rows.Select(row => row.Start)],
@@ -83,14 +89,14 @@ internal static class ReadingViews
     }
 
     /// <summary>A bucket's temperatures: the characteristic of a thermometer is monotonic, so its extremes come from the raw extremes (swapped where it falls).</summary>
-    private static (double? Low, double? Mean, double? High) Celsius(Channel channel, Certificate? certificate, ReadingSummary row)
+    private static (double? Low, double? Mean, double? High) Celsius(Channel channel, Certificate? certificate, ReadingSummary row, Estimate? junction)
     {
-        double? one = Celsius(channel, certificate, row.Start, row.Minimum);
-        double? other = Celsius(channel, certificate, row.Start, row.Maximum);
-        double? mean = Celsius(channel, certificate, row.Start, row.Mean);
+        double? one = Celsius(channel, certificate, row.Start, row.Minimum, junction);
+        double? other = Celsius(channel, certificate, row.Start, row.Maximum, junction);
+        double? mean = Celsius(channel, certificate, row.Start, row.Mean, junction);
         return one <= other ? (one, mean, other) : (other, mean, one);
     }
 
-    private static double? Celsius(Channel channel, Certificate? certificate, Instant time, double raw) =>
-        Temperatures.Of(channel, certificate, time, raw)?.Celsius;
+    private static double? Celsius(Channel channel, Certificate? certificate, Instant time, double raw, Estimate? junction) =>
+        Temperatures.Of(channel, certificate, time, raw, junction)?.Celsius;
 }
