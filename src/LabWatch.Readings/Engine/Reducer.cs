@@ -7,9 +7,14 @@ using LabWatch.Readings.Summaries;
 
 namespace LabWatch.Readings.Engine;
 
-/// <summary>Reduces a channel: whole sealed hours from their summaries where these are fine enough, everything else from the raw readings.</summary>
+/// <summary>
+/// Reduces a channel: to whole hours from the rows of hours of each day, to minutes from the summaries of sealed hours where these are fine
+/// enough, everything else from the raw readings.
+/// </summary>
 internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents incidents, WindowReader windows)
 {
+    private readonly HourlyReader _hourly = new(readers);
+
     public IReadOnlyList<ReadingSummary> Reduce(ChannelKey channel, TimeWindow window, TimeSpan bucket, CancellationToken cancellationToken)
     {
         long step = bucket.Ticks / TimeSpan.TicksPerMicrosecond;
@@ -19,8 +24,40 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
             return [];
         }
 
-        SortedDictionary<long, ChannelSummary?> ready = step % SummaryCodec.Minute == 0 ? Ready(channel, window, step) : [];
         List<ReadingSummary> rows = [];
+        if (step % Instant.MicrosecondsPerHour != 0 || !TryHours(rows, channel, window, step, cancellationToken))
+        {
+            AddSummaries(rows, channel, window, step, cancellationToken);
+        }
+
+        return SummaryFold.Coarsen(rows, step);
+    }
+
+    /// <summary>Takes whole hours from the rows of hours, and the edges and the hours these do not tell of in the other ways.</summary>
+    private bool TryHours(List<ReadingSummary> rows, ChannelKey channel, TimeWindow window, long step, CancellationToken cancellationToken)
+    {
+        (long from, long to) = WholeHours(window);
+        HashSet<long> open = [.. HeadCapture.Take(head, channel.Source, [], from, to, out HeadSource? source).Select(slice => slice.Hour)];
+        if (source is null || from >= to || _hourly.Read(source, channel.Channel, from, to, open) is not { } hours)
+        {
+            return false;
+        }
+
+        rows.AddRange(hours.Where(hour => !open.Contains(hour.Key)).Select(hour => hour.Value));
+        AddSummaries(rows, channel, new TimeWindow(window.Start, new Instant(from)), step, cancellationToken);
+        foreach (TimeWindow run in Runs(open.Where(hour => hour >= from && hour < to)))
+        {
+            AddSummaries(rows, channel, run, step, cancellationToken);
+        }
+
+        AddSummaries(rows, channel, new TimeWindow(new Instant(to), window.End), step, cancellationToken);
+        rows.Sort((left, right) => left.Start.CompareTo(right.Start));
+        return true;
+    }
+
+    private void AddSummaries(List<ReadingSummary> rows, ChannelKey channel, TimeWindow window, long step, CancellationToken cancellationToken)
+    {
+        SortedDictionary<long, ChannelSummary?> ready = step % SummaryCodec.Minute == 0 ? Ready(channel, window, step) : [];
         Instant raw = window.Start;
         foreach ((long hour, ChannelSummary? summary) in ready)
         {
@@ -30,8 +67,31 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
         }
 
         AddRaw(rows, channel, new TimeWindow(raw, window.End), step, cancellationToken);
-        return SummaryFold.Coarsen(rows, step);
     }
+
+    /// <summary>Hours as stretches without a gap.</summary>
+    private static IEnumerable<TimeWindow> Runs(IEnumerable<long> hours)
+    {
+        (long start, long end) = (0, long.MinValue);
+        foreach (long hour in hours.Order())
+        {
+            if (hour != end && end > start)
+            {
+                yield return new TimeWindow(new Instant(start), new Instant(end));
+            }
+
+            (start, end) = (hour == end ? start : hour, hour + Instant.MicrosecondsPerHour);
+        }
+
+        if (end > start)
+        {
+            yield return new TimeWindow(new Instant(start), new Instant(end));
+        }
+    }
+
+    /// <summary>The hours that lie wholly in a window: first, and first after.</summary>
+    private static (long From, long To) WholeHours(TimeWindow window) =>
+        (new Instant(window.Start.Microseconds + Instant.MicrosecondsPerHour - 1).StartOfHour().Microseconds, window.End.StartOfHour().Microseconds);
 
     private void AddRaw(List<ReadingSummary> rows, ChannelKey channel, TimeWindow window, long step, CancellationToken cancellationToken)
     {
@@ -51,8 +111,7 @@ internal sealed class Reducer(HeadState head, ReaderPool readers, StoreIncidents
     private SortedDictionary<long, ChannelSummary?> Ready(ChannelKey channel, TimeWindow window, long step)
     {
         SortedDictionary<long, ChannelSummary?> ready = [];
-        long from = new Instant(window.Start.Microseconds + Instant.MicrosecondsPerHour - 1).StartOfHour().Microseconds;
-        long to = window.End.StartOfHour().Microseconds;
+        (long from, long to) = WholeHours(window);
         HashSet<long> unready = [.. HeadCapture.Take(head, channel.Source, [], from, to, out HeadSource? source).Select(slice => slice.Hour)];
         if (source is null || from >= to)
         {

@@ -18,6 +18,8 @@ internal sealed class Sealer(
     /// <summary>Each is one short transaction, so that commits come in between.</summary>
     private const int ReleasesPerPass = 16;
 
+    private const int RollUpsPerPass = 64;
+
     private readonly SemaphoreSlim _passing = new(1, 1);
     private readonly PartSealer _sealer = new();
 
@@ -46,6 +48,11 @@ internal sealed class Sealer(
             }
 
             while (chosen.Count > 0 && await WriteAsync(Drop, cancellationToken))
+            {
+                cancellationToken.ThrowIfCancellationRequested();
+            }
+
+            for (int turn = 0; turn < RollUpsPerPass && await WriteAsync(writer => new HourlyRollUp(writer, head, incidents).Run(), cancellationToken); turn++)
             {
                 cancellationToken.ThrowIfCancellationRequested();
             }

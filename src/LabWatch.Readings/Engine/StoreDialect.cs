@@ -9,7 +9,7 @@ namespace LabWatch.Readings.Engine;
 internal abstract class StoreDialect
 {
     /// <summary>Version of the tables that this program writes.</summary>
-    public const int SchemaVersion = 1;
+    public const int SchemaVersion = 2;
 
     public const string Sources = "SELECT id, site, source FROM source ORDER BY id";
 
@@ -75,6 +75,26 @@ internal abstract class StoreDialect
 
     public const string SealsAfter =
         "SELECT id, source_id, hour, part, readings, digest, sealed_at, last_change FROM block WHERE id > @id ORDER BY id LIMIT @count";
+
+    /// <summary>Name of the state that says up to which block the rows of whole hours are made.</summary>
+    public const string HourlyThrough = "hourly_through";
+
+    public const string State = "SELECT value FROM state WHERE name = @name";
+
+    public const string SetState = "UPDATE state SET value = @value WHERE name = @name";
+
+    public const string BlocksAfter = "SELECT id, source_id, hour, part FROM block WHERE id > @id ORDER BY id LIMIT @count";
+
+    public const string Summary = "SELECT data FROM summary WHERE block_id = @id";
+
+    public const string Hourly = "SELECT data FROM hourly WHERE source_id = @source AND channel = @channel AND day = @day";
+
+    public const string HourlyInWindow =
+        "SELECT day, data FROM hourly WHERE source_id = @source AND channel = @channel AND day >= @from AND day < @to ORDER BY day";
+
+    public const string SetHourly =
+        "INSERT INTO hourly(source_id, channel, day, data) VALUES (@source, @channel, @day, @data) " +
+        "ON CONFLICT(source_id, channel, day) DO UPDATE SET data = excluded.data";
 
     public const string SetAside = "INSERT INTO set_aside(id, kind, reference, reason, found_at, data) VALUES (@id, @kind, @reference, @reason, @at, @data)";
 

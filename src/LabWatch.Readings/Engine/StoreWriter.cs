@@ -1,6 +1,8 @@
 using System.Data.Common;
+using LabWatch.Lab.Time;
 using LabWatch.Readings.Blocks;
 using LabWatch.Readings.Head;
+using LabWatch.Readings.Summaries;
 
 namespace LabWatch.Readings.Engine;
 
@@ -38,7 +40,7 @@ internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connecti
     {
         int parts = (int)HourState(hour.Source.Id, hour.Hour).Parts;
         List<(long Id, SealedBlock Block)> blocks = [];
-        foreach (long id in parts == 0 ? [] : BlockIds(hour))
+        foreach (long id in parts == 0 ? [] : BlockIds(hour.Source.Id, hour.Hour))
         {
             if (!incidents.IsBlockSetAside(id) && OpenBlock(id) is { } block)
             {
@@ -47,6 +49,28 @@ internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connecti
         }
 
         hour.Load(parts, blocks.Count == 0 ? null : new SealedIdentity(blocks, incidents.ReportBlock));
+    }
+
+    /// <summary>The bytes that a query of one column gives; null where there is no row.</summary>
+    public byte[]? Bytes(string sql, params ReadOnlySpan<object?> values)
+    {
+        using DbDataReader reader = connection.Query(sql, values);
+        return reader.Read() ? reader.GetFieldValue<byte[]>(0) : null;
+    }
+
+    /// <summary>An hour as one row a channel, computed from the readings of all its parts; damaged ones are reported and passed over.</summary>
+    public IReadOnlyList<ChannelSummary> FoldHour(int source, long hour)
+    {
+        SeriesBuilder builder = new(new TimeWindow(new Instant(hour), new Instant(hour + Instant.MicrosecondsPerHour)));
+        foreach (long id in BlockIds(source, hour))
+        {
+            if (!incidents.IsBlockSetAside(id) && OpenBlock(id) is { } block)
+            {
+                AddAll(builder, id, block);
+            }
+        }
+
+        return [.. builder.Build().Select(one => new ChannelSummary(one.Channel, SummaryFold.Fold(one.TimeMicroseconds.Span, one.Values.Span, Instant.MicrosecondsPerHour)))];
     }
 
     /// <summary>The last commit whose readings of an hour are sealed, and how many parts are.</summary>
@@ -128,10 +152,25 @@ internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connecti
         }
     }
 
-    private List<long> BlockIds(HeadHour hour)
+    private void AddAll(SeriesBuilder builder, long id, SealedBlock block)
+    {
+        try
+        {
+            for (int channel = 0; channel < block.Channels.Count; channel++)
+            {
+                builder.Add(block.Decode(channel));
+            }
+        }
+        catch (DamagedDataException damage)
+        {
+            incidents.ReportBlock(id, damage);
+        }
+    }
+
+    private List<long> BlockIds(int source, long hour)
     {
         List<long> ids = [];
-        using DbDataReader reader = connection.Query(StoreDialect.HourBlocks, hour.Source.Id, hour.Hour);
+        using DbDataReader reader = connection.Query(StoreDialect.HourBlocks, source, hour);
         while (reader.Read())
         {
             ids.Add(reader.GetInt64(0));

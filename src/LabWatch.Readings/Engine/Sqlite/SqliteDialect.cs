@@ -15,7 +15,7 @@ internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWri
     private const string ReleasePages = "PRAGMA incremental_vacuum(256)";
     private const int NotADatabase = 26;
 
-    private const string Tables =
+    private const string VersionOne =
         """
         CREATE TABLE state(name TEXT PRIMARY KEY, value INTEGER NOT NULL) WITHOUT ROWID;
         INSERT INTO state(name, value) VALUES ('journal_floor', 0);
@@ -32,6 +32,18 @@ internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWri
         CREATE TABLE set_aside(id INTEGER PRIMARY KEY, kind TEXT NOT NULL, reference INTEGER NOT NULL, reason TEXT NOT NULL,
           found_at INTEGER NOT NULL, data BLOB);
         """;
+
+    /// <summary>Rows of whole hours for charts of years, and what retention removed from sealed parts.</summary>
+    private const string VersionTwo =
+        """
+        CREATE TABLE hourly(source_id INTEGER NOT NULL, channel INTEGER NOT NULL, day INTEGER NOT NULL, data BLOB NOT NULL,
+          PRIMARY KEY(source_id, channel, day)) WITHOUT ROWID;
+        CREATE TABLE thinned(block_id INTEGER PRIMARY KEY, removed_at INTEGER NOT NULL, digest BLOB NOT NULL);
+        INSERT INTO state(name, value) VALUES ('hourly_through', 0);
+        """;
+
+    /// <summary>What leads from each version to the next; an older file is brought up in one transaction.</summary>
+    private static readonly string[] Steps = [VersionOne, VersionTwo];
 
     public override string Location => path;
 
@@ -97,10 +109,14 @@ internal sealed class SqliteDialect(string path, Action<SqliteConnection>? onWri
             throw new StoreUnavailableException($"The readings are in version {found} of the format; this program knows {SchemaVersion}. Run the newer program.");
         }
 
-        if (found == 0)
+        if (found < SchemaVersion)
         {
             using SqliteTransaction transaction = connection.BeginTransaction(deferred: false);
-            Execute(connection, Tables);
+            foreach (string step in Steps.AsSpan((int)found))
+            {
+                Execute(connection, step);
+            }
+
             Execute(connection, string.Create(CultureInfo.InvariantCulture, $"PRAGMA user_version = {SchemaVersion}"));
             transaction.Commit();
         }
