@@ -1,6 +1,7 @@
 using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Clock;
 using LabWatch.Assessments.Criteria;
+using LabWatch.Assessments.Forecasts;
 using LabWatch.Assessments.Planning;
 using LabWatch.Lab.Findings;
 using Microsoft.Extensions.DependencyInjection;
@@ -39,6 +40,7 @@ public static class AssessmentsServices
             provider => new AxialUniformityCriterion(options.AxialUniformity, provider.GetRequiredService<ICavityModels>())));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, EffectiveEmissivityCriterion>(
             provider => new EffectiveEmissivityCriterion(options.EffectiveEmissivity, provider.GetRequiredService<ICavityModels>())));
+        services.TryAddSingleton<AssessmentHistory>();
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();

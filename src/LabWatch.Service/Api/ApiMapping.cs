@@ -7,6 +7,7 @@ using LabWatch.Service.Api.Configured;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
+using LabWatch.Service.Api.Insight;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Runs;
 using LabWatch.Service.Api.Sources;
@@ -39,6 +40,7 @@ internal static class ApiMapping
         TokenEndpoints.Map(api);
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
+        ForecastEndpoints.Map(api);
         AlertEndpoints.Map(api);
         AuditEndpoints.Map(api);
         RunEndpoints.Map(api);

@@ -53,6 +53,8 @@ public sealed class EndpointAccessTests
         ["get /api/v1/assessments/outcomes"] = "read",
         ["get /api/v1/assessments/{id}"] = "read",
         ["get /api/v1/assessments/{id}/revisions"] = "read",
+        ["get /api/v1/sources/{id}/forecasts"] = "read",
+        ["get /api/v1/assessments/{id}/forecasts"] = "read",
         ["get /api/v1/alerts"] = "read",
         ["get /api/v1/alerts/{id}"] = "read",
         ["post /api/v1/alerts/{id}/acknowledge"] = "acknowledge",

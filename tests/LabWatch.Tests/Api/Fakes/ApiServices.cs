@@ -2,6 +2,7 @@ using LabWatch.Alerts;
 using LabWatch.Assessments;
 using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
+using LabWatch.Assessments.Forecasts;
 using LabWatch.Assessments.Planning;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
@@ -54,6 +55,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IPlannerState>(Planner);
         services.AddSingleton<ICriterion>(new StabilityCriterion(StabilityCriterion.DefaultSchedule));
         services.AddSingleton<ICavityModels>(DemoRun.Models);
+        services.AddSingleton<AssessmentHistory>();
         services.AddSingleton<IIntakeState>(Intake);
         services.TryAddSingleton<IRunLedger, NoRuns>();
         if (isDemo)

@@ -40,7 +40,9 @@ internal sealed class FakeAssessments : IAssessmentLedger
     public ValueTask<AssessmentPage> ListAsync(AssessmentQuery query, CancellationToken cancellationToken)
     {
         LastQuery = query;
-        return new(new AssessmentPage([.. _all.OrderByDescending(assessment => assessment.Window.End).Take(query.Count)], _all.Count > query.Count ? "more" : null));
+        List<Assessment> matching =
+            [.. _all.Where(assessment => (query.Source ?? assessment.Source) == assessment.Source && (query.Criterion ?? assessment.Criterion) == assessment.Criterion)];
+        return new(new AssessmentPage([.. matching.OrderByDescending(assessment => assessment.Window.End).Take(query.Count)], matching.Count > query.Count ? "more" : null));
     }
 
     public ValueTask<IReadOnlyList<(long Sequence, Assessment Assessment)>> QueuedAsync(long afterSequence, int count, CancellationToken cancellationToken) => new([]);
