@@ -44,6 +44,7 @@ public static class AssessmentsServices
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();
+        services.TryAddSingleton<Recomputation.Recomputer>();
         services.TryAddSingleton<ClockStepWatchdog>();
         services.TryAddSingleton<IClockStepSource>(provider => provider.GetRequiredService<ClockStepWatchdog>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, ClockStepWatchdog>(provider => provider.GetRequiredService<ClockStepWatchdog>()));

@@ -13,6 +13,7 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     CheckConfigCommand.Create(),
     ImportCommand.Create(),
     VerifyCommand.Create(),
+    RecomputeCommand.Create(),
     AccountCommand.Create(),
     CalcCommand.Create(),
 };

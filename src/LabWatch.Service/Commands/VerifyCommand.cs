@@ -37,7 +37,7 @@ internal static class VerifyCommand
             return ExitCode.BadInput;
         }
 
-        using VerifyProgress progress = new(parsed.InvocationConfiguration.Error);
+        using ProgressLine progress = new(parsed.InvocationConfiguration.Error);
         (VerifyReport? report, IReadOnlyList<Finding> unfit) = DataVerifier.Run(new VerifyRequest(data, options, Noted(parsed)), progress.Report);
         progress.Dispose();
         if (report is null)

@@ -33,7 +33,7 @@ internal static class TrialData
         await using (ServiceProvider services = rooms.BuildServiceProvider())
         {
             await services.GetRequiredService<ILabRecords>().ImportAsync(
-                new LabImportOrder(Encoding.UTF8.GetBytes(LabFileSample.Text), "lab.json", "kim", Sample.Noon), cancellationToken);
+                new LabImportOrder(Encoding.UTF8.GetBytes(LabFileSample.Text.Replace("\"id\": \"sample\"", "\"id\": \"hollin-vale\"", StringComparison.Ordinal)), "lab.json", "kim", Sample.Noon), cancellationToken);
             await AssessAsync(services.GetRequiredService<IAssessmentLedger>(), cancellationToken);
             await AlertAsync(services.GetRequiredService<IAlertLedger>(), cancellationToken);
             await ReadAsync(services, cancellationToken);

@@ -67,4 +67,25 @@ public sealed class CommandTests
         await second.WaitUntilReadyAsync(token);
         Assert.Equal(digest, await File.ReadAllTextAsync(data.At("demo", "lab-in-force.json"), token));
     }
+
+    [Fact]
+    public async Task Recompute_says_what_can_not_be_computed_again_and_which_sources_there_are()
+    {
+        CancellationToken token = TestContext.Current.CancellationToken;
+        using TemporaryDirectory data = new();
+        (int exitCode, string output) = await LabWatchProcess.RunAsync(["recompute", "--data", data.At("none")], token);
+        Assert.Equal(2, exitCode);
+        Assert.Contains("There is no such data directory", output, StringComparison.Ordinal);
+
+        // Assessments and readings that were written apart: none of the assessments has the readings that it says.
+        await Evidence.TrialData.MakeAsync(data.Path, token);
+        (exitCode, output) = await LabWatchProcess.RunAsync(["recompute", "--data", data.Path, "--criterion", "stability"], token);
+        Assert.True(exitCode == 3, output);
+        Assert.Matches(@"stability +60 (not possible|rest on other inputs)", output);
+        Assert.Contains("60 assessments computed again", output, StringComparison.Ordinal);
+
+        (exitCode, output) = await LabWatchProcess.RunAsync(["recompute", "--data", data.Path, "--source", "birch"], token);
+        Assert.Equal(2, exitCode);
+        Assert.Contains("The sources are:", output, StringComparison.Ordinal);
+    }
 }

@@ -22,9 +22,9 @@ public sealed class PlannerOfAllCriteriaTests
     private static readonly Instant From = PlannerHarness.Start;
     private static readonly Instant Until = From + TimeSpan.FromHours(4);
     private static readonly Instant Change = From + TimeSpan.FromHours(2);
-    private static readonly Lazy<(LabSnapshot Lab, IReadOnlyList<Reading> Readings)> Demo = new(Simulate);
+    internal static readonly Lazy<(LabSnapshot Lab, IReadOnlyList<Reading> Readings)> Demo = new(Simulate);
 
-    private static ICriterion[] Criteria { get; } =
+    internal static ICriterion[] Criteria { get; } =
     [
         new StabilityCriterion(StabilityCriterion.DefaultSchedule),
         new DataHealthCriterion(DataHealthCriterion.DefaultSchedule),
@@ -153,7 +153,7 @@ public sealed class PlannerOfAllCriteriaTests
     private static IEnumerable<string> Names(IEnumerable<Assessment> items) =>
         items.Select(item => $"{item.Criterion} {item.Scope} {item.Window.End}").Order(StringComparer.Ordinal);
 
-    private static async Task<PlannerHarness> AssessedAsync(Func<Reading, bool>? isThere = null)
+    internal static async Task<PlannerHarness> AssessedAsync(Func<Reading, bool>? isThere = null)
     {
         PlannerHarness lab = await PlannerHarness.NewAsync(Demo.Value.Lab, Criteria);
         lab.Add(Demo.Value.Readings.Where(isThere ?? (_ => true)));
@@ -163,7 +163,7 @@ public sealed class PlannerOfAllCriteriaTests
     }
 
     /// <summary>The demo's lab with something changed.</summary>
-    private static LabSnapshot With(
+    internal static LabSnapshot With(
         IReadOnlyList<Certificate>? certificates = null, IReadOnlyList<AcceptanceLimit>? limits = null, Func<ReferenceSource, ReferenceSource>? revised = null)
     {
         LabSnapshot demo = Demo.Value.Lab;

@@ -1,7 +1,7 @@
 namespace LabWatch.Service.Commands;
 
-/// <summary>One line on a terminal that says how far a verification has come; nothing where the output goes to a file.</summary>
-internal sealed class VerifyProgress(TextWriter error) : IDisposable
+/// <summary>One line on a terminal that says how far a long command has come; nothing where the output goes to a file.</summary>
+internal sealed class ProgressLine(TextWriter error) : IDisposable
 {
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(200);
 
@@ -9,7 +9,7 @@ internal sealed class VerifyProgress(TextWriter error) : IDisposable
     private long _last = TimeProvider.System.GetTimestamp();
     private int _shown;
 
-    /// <summary>Tells of a table and the rows read in it.</summary>
+    /// <summary>Tells of what is being gone through, and how many are done.</summary>
     public void Report(string table, long count)
     {
         if (_isTerminal && TimeProvider.System.GetElapsedTime(_last) >= Pause)
