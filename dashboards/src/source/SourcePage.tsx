@@ -22,6 +22,7 @@ import { assessmentAddress } from "./assessment/address";
 import { AssessmentDialog } from "./assessment/AssessmentDialog";
 import { ChannelSection } from "./ChannelSection";
 import { assessmentsOf } from "./criteria";
+import { DriftSection } from "./drift/DriftSection";
 import { Guarded } from "./Guarded";
 import { HistorySection } from "./history/HistorySection";
 import { usePolled } from "./polled";
@@ -54,6 +55,7 @@ const sections: [id: string, name: string][] = [
   ["cavity", "Cavity"],
   ["radiance", "Radiance"],
   ["history", "Criteria"],
+  ["drift", "Drift"],
   ["chart", "Channels"],
   ["runs", "Runs"],
   ["instruments", "Instruments"],
@@ -109,6 +111,9 @@ function Known({ source, onAcknowledge }: { source: Source; onAcknowledge: (aler
       </Guarded>
       <Guarded name="Criteria over time">
         <HistorySection source={source} assessments={assessments} limits={detail.value?.limits ?? []} onOpen={open} />
+      </Guarded>
+      <Guarded name="Drift and forecast">
+        <DriftSection source={source} />
       </Guarded>
       <Guarded name="Channels over time">
         <ChannelSection source={source} />

@@ -1,5 +1,6 @@
 import { ask } from "../api/client";
 import type { Outcome } from "../api/types";
+import type { ForecastList } from "./drift/types";
 import type { FullAssessment, Profile, SourceDetail } from "./types";
 
 const path = (id: string): string => encodeURIComponent(id);
@@ -7,6 +8,10 @@ const path = (id: string): string => encodeURIComponent(id);
 export const readDetail = (source: string, signal: AbortSignal): Promise<SourceDetail> => ask(`sources/${path(source)}`, { signal });
 
 export const readProfile = (source: string, signal: AbortSignal): Promise<Profile> => ask(`sources/${path(source)}/profile`, { signal });
+
+export const readForecasts = (source: string, signal: AbortSignal): Promise<ForecastList> => ask(`sources/${path(source)}/forecasts`, { signal });
+
+export const readForecastsOf = (assessment: string, signal: AbortSignal): Promise<ForecastList> => ask(`assessments/${path(assessment)}/forecasts`, { signal });
 
 export const readRevisions = (assessment: string, signal: AbortSignal): Promise<FullAssessment[]> => ask(`assessments/${path(assessment)}/revisions`, { signal });
 

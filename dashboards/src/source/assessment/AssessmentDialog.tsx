@@ -9,7 +9,8 @@ import { Decision } from "../Decision";
 import { Failed } from "../Failed";
 import { usePolled } from "../polled";
 import { assessedUncertainty, assessedValue, limitText } from "../quantity";
-import { readRevisions } from "../requests";
+import { seriesName } from "../drift/series";
+import { readForecastsOf, readRevisions } from "../requests";
 import type { FullAssessment } from "../types";
 import { Figures } from "./Figures";
 import { ProvenanceList } from "./ProvenanceList";
@@ -75,6 +76,7 @@ function Told({ source, assessment, revisions, onOpen }: ToldProps) {
         <Row term="Revision" value={`${assessment.revision}${assessment.supersedeReason === null ? "" : `: ${assessment.supersedeReason}`}`} />
       </dl>
       <Figures figures={assessment.figures} />
+      <Drift source={source} assessment={assessment} />
       <h3>What it was made from</h3>
       <ProvenanceList assessment={assessment} />
       {revisions.length > 1 && (
@@ -98,6 +100,22 @@ function Told({ source, assessment, revisions, onOpen }: ToldProps) {
         </>
       )}
     </div>
+  );
+}
+
+/** How the value had drifted up to this window. */
+function Drift({ source, assessment }: { source: Source; assessment: FullAssessment }) {
+  const polled = usePolled(assessment.id, (signal) => readForecastsOf(assessment.id, signal), 0);
+  const items = polled.value?.items ?? [];
+  return items.length === 0 ? null : (
+    <>
+      <h3>Drift up to this window</h3>
+      {items.map((item) => (
+        <p key={item.quantity}>
+          {seriesName(item, source)}: {typeset(item.explanation)}
+        </p>
+      ))}
+    </>
   );
 }
 
