@@ -38,6 +38,8 @@ public static class AlertsRegistration
         AddNotifiers(services);
         services.TryAddSingleton<AssessmentFollower>();
         services.TryAddSingleton<IAlertBoard, AlertBoard>();
+        services.TryAddSingleton<IServiceAlerts>(provider => new ServiceAlerts(
+            provider.GetRequiredService<DeskQueue>(), provider.GetRequiredService<ILabSnapshotSource>(), provider.GetRequiredService<TimeProvider>()));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, AlertsService>());
         return services;
     }

@@ -41,6 +41,9 @@ public sealed class SqliteReadingStore : IReadingStore, IReadingSealer, IReading
     public IReadOnlyList<Finding> Findings => _engine.Findings;
 
     /// <inheritdoc/>
+    public string? Trouble => _engine.Trouble;
+
+    /// <inheritdoc/>
     public bool NeedsSealing => _engine.NeedsSealing;
 
     /// <inheritdoc/>

@@ -121,7 +121,7 @@ internal sealed class AssessmentFollower(
         Instant now = Instant.Now(clock);
         LabSnapshot snapshot = lab.Current;
         ToleranceTexts texts = new(new SiteTime(snapshot.Site));
-        foreach (Alert alert in alerts.View.Open.Where(alert => !alert.IsHazard && alert.ReturnedAt is null))
+        foreach (Alert alert in alerts.View.Open.Where(alert => !alert.IsHazard && !ServiceAlertCode.IsService(alert.Code) && alert.ReturnedAt is null))
         {
             if (Judged.WhyNot(snapshot, AlertKey.Of(alert), now) is { } why)
             {

@@ -18,6 +18,10 @@ internal static class AlertTexts
 
     public static string WhereSource => Text();
 
+    public static string WhereService => Text();
+
+    public static string ServiceReturnedDo => Text();
+
     public static string HotSurfaceHeadline => Text();
 
     public static string HotSurfaceWhat => Text();

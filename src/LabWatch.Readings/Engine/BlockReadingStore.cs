@@ -46,6 +46,9 @@ internal sealed class BlockReadingStore : IAsyncDisposable
     /// <summary>What was found damaged or missing.</summary>
     public IReadOnlyList<Finding> Findings => _incidents.Findings;
 
+    /// <summary>Why the last attempt to write failed; null where it worked.</summary>
+    public string? Trouble => _session.Trouble;
+
     /// <summary>Whether so much is unsealed that sealing should not wait for its next turn.</summary>
     public bool NeedsSealing => _head.Unsealed > _options.UnsealedReadingsLimit || _session.JournalBytes > _options.JournalBytesLimit;
 

@@ -91,6 +91,7 @@ internal sealed class Sealer(
 
     private IReadOnlyList<SealCandidate> Freeze(StoreWriter writer, bool everything)
     {
+        session.Probe(writer);
         incidents.Persist(writer.Connection);
         List<SealCandidate> candidates = Candidates();
         long floor = writer.Connection.Number(null, StoreDialect.Floor);

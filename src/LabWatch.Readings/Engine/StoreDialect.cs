@@ -83,6 +83,9 @@ internal abstract class StoreDialect
 
     public const string SetState = "UPDATE state SET value = @value WHERE name = @name";
 
+    /// <summary>Writes and changes nothing.</summary>
+    public const string Touch = "UPDATE state SET value = value WHERE name = 'hourly_through'";
+
     public const string BlocksAfter = "SELECT id, source_id, hour, part FROM block WHERE id > @id ORDER BY id LIMIT @count";
 
     public const string Summary = "SELECT data FROM summary WHERE block_id = @id";

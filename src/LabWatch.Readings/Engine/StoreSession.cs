@@ -16,12 +16,16 @@ internal sealed class StoreSession(
     private CommitMark? _mark;
     private StoreWriter? _writer;
     private bool _disposed;
+    private volatile string? _trouble;
 
     /// <summary>Bytes of journal rows, as far as known.</summary>
     public long JournalBytes { get; private set; }
 
     /// <summary>Whether the head has been built once: reads can be answered even while writing fails.</summary>
     public bool IsReady { get; private set; }
+
+    /// <summary>Why the last attempt to write failed; null where it worked.</summary>
+    public string? Trouble => _trouble;
 
     /// <summary>Runs something on the writer. Throws <see cref="StoreUnavailableException"/> where the database or a file fails.</summary>
     public T Use<T>(Func<StoreWriter, T> action)
@@ -34,6 +38,7 @@ internal sealed class StoreSession(
         catch (Exception error) when (error is DbException or IOException or UnauthorizedAccessException or DamagedDataException)
         {
             Close();
+            _trouble = error.Message;
             if (error is StoreUnavailableException)
             {
                 throw;
@@ -48,6 +53,7 @@ internal sealed class StoreSession(
     public void OnCommitted(long change, int bytes)
     {
         SetJournalBytes(JournalBytes + bytes);
+        _trouble = null;
         try
         {
             _mark?.Write(change);
@@ -56,6 +62,16 @@ internal sealed class StoreSession(
         {
             // The commit itself is durable; an old mark only notices less.
             ReadingsLog.MarkFailed(log, error);
+        }
+    }
+
+    /// <summary>After a failure: writes what changes nothing, to learn whether writing works again although no reading comes.</summary>
+    public void Probe(StoreWriter writer)
+    {
+        if (_trouble is not null)
+        {
+            writer.Connection.Execute(null, StoreDialect.Touch);
+            _trouble = null;
         }
     }
 

@@ -17,4 +17,7 @@ internal static partial class HostLog
 
     [LoggerMessage(7010, LogLevel.Warning, "The start is not in the audit trail yet; trying again: {Reason}")]
     public static partial void StartNotRecorded(ILogger logger, string reason);
+
+    [LoggerMessage(7020, LogLevel.Error, "The watch over the storage failed once and goes on.")]
+    public static partial void StorageWatchFailed(ILogger logger, Exception exception);
 }

@@ -66,6 +66,7 @@ internal static class LabWatchHost
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, LabCheck>());
         services.AddLabWatchApi();
         services.AddLabWatchIntake(start.Settings.Intake);
+        services.AddHostedService<StorageWatch>();
         services.AddLabWatchAssessments(start.Settings.Assessments);
     }
 

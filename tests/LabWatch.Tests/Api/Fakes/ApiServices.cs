@@ -48,6 +48,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton(clock);
         services.TryAddSingleton<ILabSnapshotSource>(Lab);
         services.AddSingleton<IReadingStore>(Store);
+        services.AddSingleton<IReadingStoreHealth>(Store);
         services.AddSingleton<IAlertBoard>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
         services.AddSingleton<IAssessmentLedger>(Assessments);

@@ -7,10 +7,16 @@ using LabWatch.Readings;
 namespace LabWatch.Tests.Api.Fakes;
 
 /// <summary>A reading store in memory.</summary>
-internal sealed class FakeReadingStore : IReadingStore
+internal sealed class FakeReadingStore : IReadingStore, IReadingStoreHealth
 {
     private readonly Lock _gate = new();
     private readonly Dictionary<ChannelKey, SortedList<long, Reading>> _channels = [];
+
+    /// <inheritdoc/>
+    public IReadOnlyList<LabWatch.Lab.Findings.Finding> Findings => [];
+
+    /// <inheritdoc/>
+    public string? Trouble { get; set; }
 
     /// <summary>Whether every call throws, as a store does that cannot answer.</summary>
     public bool IsDown { get; set; }
@@ -103,4 +109,7 @@ internal sealed class FakeReadingStore : IReadingStore
             throw new StoreUnavailableException("The disk with the secret path is full.");
         }
     }
+
+    /// <inheritdoc/>
+    public ValueTask OpenAsync(CancellationToken cancellationToken) => ValueTask.CompletedTask;
 }
