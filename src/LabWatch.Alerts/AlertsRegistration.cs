@@ -1,4 +1,5 @@
 using LabWatch.Alerts.Assessments;
+using LabWatch.Alerts.Attention;
 using LabWatch.Alerts.Desk;
 using LabWatch.Alerts.Hazards;
 using LabWatch.Alerts.Hosting;
@@ -58,6 +59,7 @@ public static class AlertsRegistration
         });
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IReadingTap, HazardWatch>(provider => provider.GetRequiredService<HazardWatch>()));
         services.TryAddSingleton<HazardTicker>();
+        services.TryAddSingleton<RunAttention>();
     }
 
     private static void AddDesk(IServiceCollection services)
@@ -76,6 +78,7 @@ public static class AlertsRegistration
                 provider.GetRequiredService<MessageDispatcher>(),
                 provider.GetRequiredService<LedgerRecorder>(),
                 new HazardRestorer(provider.GetRequiredService<HazardWatch>()),
+                new AttentionListener(provider.GetRequiredService<HazardWatch>()),
             ],
             provider.GetRequiredService<TimeProvider>(),
             provider.GetRequiredService<ILogger<AlertDesk>>()));

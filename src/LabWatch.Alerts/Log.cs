@@ -18,6 +18,9 @@ internal static partial class Log
     [LoggerMessage(4003, LogLevel.Warning, "The times at which hazard channels were last heard could not be stored; after a restart their silence is counted from the start.")]
     public static partial void HeardNotStored(ILogger logger, Exception exception);
 
+    [LoggerMessage(4004, LogLevel.Warning, "Which runs are open could not be asked; a hot source counts as unattended when its time is over.")]
+    public static partial void RunsUnknown(ILogger logger, Exception exception);
+
     [LoggerMessage(4010, LogLevel.Error, "The alert journal could not be written; steps are kept in memory and tried again with the next one. Check the disk.")]
     public static partial void JournalFailed(ILogger logger, Exception exception);
 

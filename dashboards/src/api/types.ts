@@ -51,6 +51,7 @@ export interface Alert {
   value: number | null;
   limit: number | null;
   unit: string;
+  outlook?: string | null;
 }
 
 export interface SourceStatus {

@@ -73,6 +73,7 @@ export function HazardItem({ alert, isFirst, onAcknowledge }: { alert: Alert; is
             </>
           )}
         </p>
+        {alert.outlook && <p class="outlook">{typeset(alert.outlook)}</p>}
         {alert.acknowledgedAt === null && <Acknowledge class="act" alert={alert} onAcknowledge={onAcknowledge} />}
       </div>
       <Fold

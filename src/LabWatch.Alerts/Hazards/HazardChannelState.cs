@@ -20,6 +20,12 @@ internal sealed class HazardChannelState(long silentSince, Instant? lastHeard, R
     /// <summary>Last valid temperature, degree Celsius; NaN where none is known.</summary>
     public double LastCelsius { get; set; } = double.NaN;
 
+    /// <summary>Last valid value in the unit that the checks use; NaN where none is known.</summary>
+    public double LastValue { get; set; } = double.NaN;
+
+    /// <summary>The last minutes of a thermometer; null for what is none.</summary>
+    public SensorHistory? History { get; init; }
+
     /// <summary>Newest device time seen, never later than its arrival.</summary>
     public Instant Newest { get; set; } = Instant.MinValue;
 

@@ -23,28 +23,28 @@ internal sealed class HazardJudge(HazardRules rules, TimeProvider clock, ICondit
     /// <summary>Readings that had no valid value.</summary>
     public long InvalidReadings => Interlocked.Read(ref _invalid);
 
-    /// <summary>Judges one reading.</summary>
-    public void Watch(HazardChannel channel, in Reading reading, Instant arrival, long now)
+    /// <summary>Judges one reading. Whether it is the newest valid one of its channel.</summary>
+    public bool Watch(HazardChannel channel, in Reading reading, Instant arrival, long now)
     {
         double celsius = channel.Thermometer.Celsius(reading.Value);
         bool meansNothing = channel.Limit is not null && channel.Thermometer.Usable && double.IsNaN(celsius);
         if ((reading.Quality & Invalid) != 0 || !channel.IsPossible(reading.Value) || meansNothing)
         {
             Interlocked.Increment(ref _invalid);
-            return;
+            return false;
         }
 
         HazardChannelState state = channel.State;
         if (rules.IsOld(reading.Time, arrival))
         {
             HearOld(channel, arrival, now);
-            return;
+            return false;
         }
 
         bool inOrder = reading.Time > state.Newest && reading.Time <= arrival;
         if (!inOrder && state.Recent.Contains(reading.Time, reading.Value))
         {
-            return;
+            return false;
         }
 
         state.Recent.Add(reading.Time, reading.Value);
@@ -56,11 +56,65 @@ internal sealed class HazardJudge(HazardRules rules, TimeProvider clock, ICondit
             // A device clock that runs ahead must not hide what comes after it is put right.
             state.Newest = reading.Time < arrival ? reading.Time : arrival;
             state.LastCelsius = celsius;
+            state.LastValue = channel.ToNatural(reading.Value);
+            state.History?.Add(Seconds(now), state.LastValue);
         }
 
         if (channel.Limit is { } limit && !double.IsNaN(celsius))
         {
             WatchSurface(channel, limit, celsius, reading.Value, newest, arrival, now);
+        }
+
+        foreach (HazardCheck check in channel.OwnChecks)
+        {
+            HazardVerdict verdict = newest ? check.Judge(now) : check.JudgeLate(channel.ToNatural(reading.Value));
+            Conclude(check, verdict, newest, arrival, now);
+        }
+
+        return newest;
+    }
+
+    /// <summary>A monotonic time stamp in seconds.</summary>
+    public double Seconds(long timestamp) => (double)timestamp / clock.TimestampFrequency;
+
+    /// <summary>Judges a check by the latest readings of all its channels.</summary>
+    public void Judge(HazardCheck check, Instant at, long now) => Conclude(check, check.Judge(now), newest: true, at, now);
+
+    private void Conclude(HazardCheck check, HazardVerdict verdict, bool newest, Instant at, long now)
+    {
+        CheckState state = check.State;
+        if (newest || verdict.Present)
+        {
+            state.Last = verdict;
+        }
+
+        switch (state.Filter.Observe(verdict.Present, verdict.Absent, newest, now, check.Delays))
+        {
+            case ConditionEdge.Raised:
+                sink.Post(Texts.Found(check, verdict, at));
+                break;
+            case ConditionEdge.Returned:
+                sink.Post(Texts.Gone(check, verdict, at));
+                break;
+            default:
+                break;
+        }
+    }
+
+    /// <summary>Judges what time alone brings to a check: an on-delay that has passed, or a source that nobody looks after.</summary>
+    public void Tick(HazardSource source, long now, Instant at)
+    {
+        foreach (HazardCheck check in source.TickChecks)
+        {
+            Judge(check, at, now);
+        }
+
+        foreach (HazardCheck check in source.Checks)
+        {
+            if (check.State.Filter.Tick(now, check.Delays) == ConditionEdge.Raised)
+            {
+                sink.Post(Texts.Found(check, check.State.Last, at));
+            }
         }
     }
 
@@ -110,7 +164,7 @@ internal sealed class HazardJudge(HazardRules rules, TimeProvider clock, ICondit
             sink.Post(Texts.HotSurface(channel, limit, state.LastCelsius, double.NaN, at));
         }
 
-        if (state.Silent || now - _started < rules.StartGrace)
+        if (!channel.IsSilenceWatched || state.Silent || now - _started < rules.StartGrace)
         {
             return;
         }

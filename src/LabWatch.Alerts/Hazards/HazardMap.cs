@@ -1,4 +1,5 @@
 using System.Collections.Frozen;
+using LabWatch.Alerts.LifeCycle;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Identity;
@@ -30,28 +31,40 @@ internal sealed class HazardMap
     /// <param name="before">The map before.</param>
     /// <param name="silence">Length of a channel's silence in monotonic ticks.</param>
     /// <param name="newState">Makes the state of a channel that was not watched before.</param>
-    /// <param name="clock">Clock by which a reading of reference junctions is fresh.</param>
+    /// <param name="clock">The clock of all delays.</param>
+    /// <param name="offDelay">How long the absence of a condition must be seen before it returns.</param>
     public static HazardMap Build(
-        LabSnapshot snapshot, HazardMap before, Func<Channel, long> silence, Func<Channel, HazardChannelState> newState, TimeProvider clock) => new(
-        snapshot,
-        snapshot.Sources.ToFrozenDictionary(
-            source => source.Key,
-            source => new HazardSource(
-                before.Sources.GetValueOrDefault(source.Key)?.Gate ?? new Lock(),
-                [
-                    .. source.Channels.Where(HazardChannel.IsWatched).Select(channel => new HazardChannel(
-                        source,
-                        channel,
-                        channel.IsTouchable ? SurfaceLimit.For(channel.Contact) : null,
-                        silence(channel),
-                        before.Find(channel.Key)?.State ?? newState(channel),
-                        channel.ReferenceJunction is { } junction
-                            ? new HazardJunction(junction, junction.Channel is { } id ? source.FindChannel(id) : null, clock)
-                            : null)),
-                ])));
+        LabSnapshot snapshot, HazardMap before, Func<Channel, long> silence, Func<Channel, HazardChannelState> newState, TimeProvider clock, TimeSpan offDelay) => new(
+        snapshot, snapshot.Sources.ToFrozenDictionary(source => source.Key, source => Build(source, before, silence, newState, clock, offDelay)));
+
+    private static HazardSource Build(
+        ReferenceSource source, HazardMap map, Func<Channel, long> silence, Func<Channel, HazardChannelState> newState, TimeProvider clock, TimeSpan offDelay)
+    {
+        HazardSource? before = map.Sources.GetValueOrDefault(source.Key);
+        HazardSource built = new(
+            before?.Gate ?? new Lock(),
+            [
+                .. source.Channels.Where(HazardChannel.IsJudged).Select(channel => new HazardChannel(
+                    source,
+                    channel,
+                    channel.IsTouchable ? SurfaceLimit.For(channel.Contact) : null,
+                    silence(channel),
+                    map.Find(channel.Key)?.State ?? newState(channel),
+                    HazardChannel.IsWatched(channel),
+                    channel.ReferenceJunction is { } junction
+                        ? new HazardJunction(junction, junction.Channel is { } id ? source.FindChannel(id) : null, clock)
+                        : null)),
+            ],
+            before?.Attention ?? new HazardAttention());
+        HazardChecks.Put(source, built, before, clock, offDelay);
+        return built;
+    }
 
     /// <summary>The watched channel of a key; null where it is not watched.</summary>
     public HazardChannel? Find(ChannelKey key) => Sources.GetValueOrDefault(key.Source)?.ById.GetValueOrDefault(key.Channel);
+
+    /// <summary>The check of a key; null where there is none.</summary>
+    public HazardCheck? Find(AlertKey key) => Sources.GetValueOrDefault(key.Source)?.Checks.FirstOrDefault(check => check.Key == key);
 
     /// <summary>Looks up the certificates in force at an instant.</summary>
     public void RefreshThermometers(Instant at)

@@ -4,7 +4,7 @@ namespace LabWatch.Alerts.Hazards;
 
 /// <summary>The options of the hazard watch in the units of its hot path.</summary>
 internal readonly record struct HazardRules(
-    double DeadBandKelvin, ConditionDelays HotDelays, double SilenceIntervals, TimeSpan SilenceMinimum, long StartGrace, TimeSpan OldestReading, long OldTicks)
+    double DeadBandKelvin, ConditionDelays HotDelays, double SilenceIntervals, TimeSpan SilenceMinimum, long StartGrace, TimeSpan OldestReading, long OldTicks, TimeSpan OffDelay)
 {
     /// <summary>The rules of options on a clock.</summary>
     public static HazardRules From(AlertsOptions options, TimeProvider clock) => new(
@@ -14,7 +14,8 @@ internal readonly record struct HazardRules(
         options.SilenceMinimum,
         ConditionDelays.Ticks(options.StartGrace, clock),
         options.OldestReading,
-        ConditionDelays.Ticks(options.OldestReading, clock));
+        ConditionDelays.Ticks(options.OldestReading, clock),
+        options.HotSurfaceOffDelay);
 
     /// <summary>The length of a silence that is called one.</summary>
     public TimeSpan SilenceOf(TimeSpan interval) => TimeSpan.FromTicks(Math.Max((long)(interval.Ticks * SilenceIntervals), SilenceMinimum.Ticks));

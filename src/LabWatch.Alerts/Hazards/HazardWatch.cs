@@ -7,6 +7,8 @@ using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Metrology.Hazards;
+using LabWatch.Metrology.Uncertainty;
 using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Alerts.Hazards;
@@ -17,6 +19,7 @@ namespace LabWatch.Alerts.Hazards;
 /// </summary>
 internal sealed class HazardWatch : IReadingTap
 {
+    private static readonly Estimate UnknownRoom = new(23, 4);
     private readonly TimeProvider _clock;
     private readonly HazardRules _rules;
     private readonly HazardJudge _judge;
@@ -54,13 +57,18 @@ internal sealed class HazardWatch : IReadingTap
         {
             HazardMap before = _map;
             HazardMap map = HazardMap.Build(
-                snapshot, before, channel => ConditionDelays.Ticks(_rules.SilenceOf(channel.Interval), _clock), NewState, _clock);
+                snapshot, before, channel => ConditionDelays.Ticks(_rules.SilenceOf(channel.Interval), _clock), NewState, _clock, _rules.OffDelay);
             map.RefreshThermometers(Instant.Now(_clock));
             _judge.Texts = new HazardTexts(new SiteTime(snapshot.Site));
             _map = map;
             foreach (HazardChannel gone in before.Sources.Values.SelectMany(source => source.Channels).Where(channel => map.Find(channel.Key) is null))
             {
                 Abandon(gone);
+            }
+
+            foreach (HazardCheck gone in before.Sources.Values.SelectMany(source => source.Checks).Where(check => check.State.Filter.Active && map.Find(check.Key) is null))
+            {
+                _sink.Post(_judge.Texts.NotWatched(gone.Key, gone.Subject.Source.Name, gone.Subject.Channel.Name, Instant.Now(_clock)));
             }
         }
     }
@@ -76,6 +84,10 @@ internal sealed class HazardWatch : IReadingTap
             if (alert.Code is HazardCode.HotSurface or HazardCode.HazardSilent)
             {
                 Restore(alert);
+            }
+            else if (alert.IsHazard)
+            {
+                RestoreCheck(alert);
             }
         }
     }
@@ -100,6 +112,19 @@ internal sealed class HazardWatch : IReadingTap
         }
     }
 
+    /// <summary>Notes that somebody looks after a source, up to a moment: now, or the end of a planned soak.</summary>
+    public void Attend(SourceKey source, Instant until)
+    {
+        if (_map.Sources.TryGetValue(source, out HazardSource? attended))
+        {
+            TimeSpan ahead = until - Instant.Now(_clock);
+            lock (attended.Gate)
+            {
+                attended.Attention.Note(_clock.GetTimestamp() + ConditionDelays.Ticks(ahead > TimeSpan.Zero ? ahead : TimeSpan.Zero, _clock));
+            }
+        }
+    }
+
     /// <summary>Lets time pass: judges silence and on-delays. Called about once a second.</summary>
     public void Tick()
     {
@@ -113,6 +138,8 @@ internal sealed class HazardWatch : IReadingTap
                 {
                     _judge.Tick(channel, now, at);
                 }
+
+                _judge.Tick(source, now, at);
             }
         }
     }
@@ -129,7 +156,26 @@ internal sealed class HazardWatch : IReadingTap
         }
 
         double celsius = channel.State.LastCelsius;
-        return alert with { Value = celsius, Limit = limit.Celsius, Headline = HazardTexts.HotSurfaceHeadline(channel, limit, celsius) };
+        return alert with
+        {
+            Value = celsius,
+            Limit = limit.Celsius,
+            Headline = HazardTexts.HotSurfaceHeadline(channel, limit, celsius),
+            Outlook = HazardTexts.Outlook(Forecast(channel, limit), limit.Celsius),
+        };
+    }
+
+    // A sensor that is not heard cannot be foretold. The air of the room is known to a kelvin (common practice, no source), or hardly at all.
+    private CoolingForecast? Forecast(HazardChannel channel, SurfaceLimit limit)
+    {
+        HazardSource source = _map.Sources[channel.Source.Key];
+        lock (source.Gate)
+        {
+            double ambient = source.Channels.FirstOrDefault(one => one.Channel.Quantity == ChannelQuantity.AmbientTemperature)?.State.LastValue ?? double.NaN;
+            return channel.IsHeardBy(_clock.GetTimestamp())
+                ? channel.State.History?.Forecast(double.IsNaN(ambient) ? UnknownRoom : new Estimate(ambient, 1), limit.Celsius)
+                : null;
+        }
     }
 
     /// <summary>When each hazard channel was last heard.</summary>
@@ -138,7 +184,7 @@ internal sealed class HazardWatch : IReadingTap
         Dictionary<ChannelKey, Instant> heard = [];
         foreach (HazardChannel channel in _map.Sources.Values.SelectMany(source => source.Channels))
         {
-            if (channel.State.LastHeard is { } at)
+            if (channel.IsSilenceWatched && channel.State.LastHeard is { } at)
             {
                 heard[channel.Key] = at;
             }
@@ -170,9 +216,30 @@ internal sealed class HazardWatch : IReadingTap
                 Reading reading = readings[i];
                 if (source.ById.TryGetValue(reading.Channel, out HazardChannel? channel))
                 {
-                    _judge.Watch(channel, reading, pack.Arrival, now);
+                    if (_judge.Watch(channel, reading, pack.Arrival, now))
+                    {
+                        Touch(channel.JointChecks);
+                    }
                 }
             }
+
+            // What several channels tell together is judged once a pack, when all of them are up to date.
+            foreach (HazardCheck check in source.Checks)
+            {
+                if (check.Touched)
+                {
+                    check.Touched = false;
+                    _judge.Judge(check, pack.Arrival, now);
+                }
+            }
+        }
+    }
+
+    private static void Touch(HazardCheck[] checks)
+    {
+        foreach (HazardCheck check in checks)
+        {
+            check.Touched = true;
         }
     }
 
@@ -182,7 +249,10 @@ internal sealed class HazardWatch : IReadingTap
         bool known = _heardBefore.TryGetValue(channel.Key, out Instant heard);
         TimeSpan before = known ? Instant.Now(_clock) - heard : TimeSpan.Zero;
         long silentSince = _clock.GetTimestamp() - ConditionDelays.Ticks(before > TimeSpan.Zero ? before : TimeSpan.Zero, _clock);
-        return new HazardChannelState(silentSince, known ? heard : null, new RecentReadings(_rules.OldestReading, channel.Interval));
+        return new HazardChannelState(silentSince, known ? heard : null, new RecentReadings(_rules.OldestReading, channel.Interval))
+        {
+            History = channel.Unit is "Cel" or "Ohm" or "mV" ? new SensorHistory() : null,
+        };
     }
 
     private void Restore(Alert alert)
@@ -205,6 +275,23 @@ internal sealed class HazardWatch : IReadingTap
             {
                 channel.State.Silent = true;
             }
+        }
+    }
+
+    private void RestoreCheck(Alert alert)
+    {
+        HazardMap map = _map;
+        if (map.Find(AlertKey.Of(alert)) is not { } check)
+        {
+            ReferenceSource? source = map.Snapshot.FindSource(alert.Source);
+            string channel = source?.FindChannel(alert.Subject)?.Name ?? alert.Subject;
+            _sink.Post(_judge.Texts.NotWatched(AlertKey.Of(alert), source?.Name ?? alert.Source.Source, channel, Instant.Now(_clock)));
+            return;
+        }
+
+        lock (map.Sources[alert.Source].Gate)
+        {
+            check.State.Filter.Restore(active: true);
         }
     }
 

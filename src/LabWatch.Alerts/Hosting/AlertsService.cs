@@ -1,4 +1,5 @@
 using LabWatch.Alerts.Assessments;
+using LabWatch.Alerts.Attention;
 using LabWatch.Alerts.Desk;
 using LabWatch.Alerts.Hazards;
 using LabWatch.Alerts.Journal;
@@ -21,6 +22,7 @@ internal sealed class AlertsService(
     LedgerRecorder recorder,
     AssessmentFollower follower,
     HazardTicker ticker,
+    RunAttention attention,
     LastHeardFile heard,
     AlertsMetrics metrics,
     ILabSnapshotSource lab,
@@ -49,7 +51,7 @@ internal sealed class AlertsService(
 
         Measure();
         _thread = new DeskThread(queue, desk, loggers.CreateLogger<DeskThread>());
-        _running = Task.WhenAll(Loop(ticker.RunAsync), Loop(recorder.RunAsync), Loop(follower.RunAsync));
+        _running = Task.WhenAll(Loop(ticker.RunAsync), Loop(recorder.RunAsync), Loop(follower.RunAsync), Loop(attention.RunAsync));
         return Task.CompletedTask;
     }
 

@@ -142,6 +142,19 @@ internal static class AlertTexts
 
     public static string AcknowledgedHeadline => Text();
 
+    public static string HazardReturnedDo => Text();
+
+    public static string TrendRising => Text();
+
+    public static string TrendFalling => Text();
+
+    public static string Outlook => Text();
+
+    public static string NotKnown => Text();
+
+    /// <summary>A text about a hazard of a source.</summary>
+    public static string Of(Hazards.HazardCause cause, string part) => Text(cause.ToString() + part);
+
     private static string Text([CallerMemberName] string name = "") =>
         Resources.GetString(name, System.Globalization.CultureInfo.InvariantCulture) ?? throw new MissingManifestResourceException(name);
 }

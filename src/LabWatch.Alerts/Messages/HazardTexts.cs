@@ -11,12 +11,13 @@ internal sealed class HazardTexts(SiteTime time)
 {
     private const int NameLength = 40;
     private const int ShortNameLength = 24;
+    private const double LongestOutlook = 30 * 86_400d;
 
     /// <summary>A surface at or above its limit.</summary>
     public AlertCondition HotSurface(HazardChannel channel, SurfaceLimit limit, double celsius, double raw, Instant at) => new(
         Key(channel, HazardCode.HotSurface), true, at, AlertPriority.High, HotSurfaceHeadline(channel, limit, celsius),
         Detail(
-            channel, Phrase.Fill(AlertTexts.HotSurfaceWhat, Phrase.Celsius(celsius), How(channel, raw), Phrase.Celsius(limit.Celsius), From(limit)),
+            channel, Phrase.Fill(AlertTexts.HotSurfaceWhat, Phrase.Celsius(celsius), How(channel, raw), Phrase.Celsius(limit.Celsius), From(limit)) + Trend(channel),
             at, AlertTexts.HotSurfaceDo, AlertTexts.HotSurfaceDoNot),
         celsius, limit.Celsius, "Cel");
 
@@ -55,6 +56,56 @@ internal sealed class HazardTexts(SiteTime time)
         Headline(channel, AlertTexts.SilentReturnedHeadline, NameLength),
         Detail(channel, AlertTexts.SilentReturnedWhat, at, AlertTexts.SilentReturnedDo, AlertTexts.SilentDoNot),
         null, null, string.Empty);
+
+    /// <summary>A hazard that a check has found.</summary>
+    public AlertCondition Found(HazardCheck check, in HazardVerdict verdict, Instant at) => About(
+        check, verdict, present: true, at, "Headline", "Do", null);
+
+    /// <summary>A hazard that a check finds no more.</summary>
+    public AlertCondition Gone(HazardCheck check, in HazardVerdict verdict, Instant at) => About(
+        check, verdict, present: false, at, "Returned", string.Empty, AlertTexts.HazardReturnedDo);
+
+    private AlertCondition About(HazardCheck check, in HazardVerdict verdict, bool present, Instant at, string headline, string part, string? @do)
+    {
+        HazardChannel subject = check.Subject;
+        object[] values =
+        [
+            Phrase.Cut(subject.Source.Name, ShortNameLength), Phrase.Cut(subject.Channel.Name, ShortNameLength),
+            Number(verdict.Value, verdict.Unit), Number(verdict.Limit, verdict.Unit), Number(verdict.Besides, string.Empty),
+        ];
+        string what = present
+            ? Phrase.Fill(AlertTexts.Of(verdict.Cause, "What"), values) + Trend(subject)
+            : Phrase.Fill(AlertTexts.Of(verdict.Cause, headline), values);
+        return new AlertCondition(
+            check.Key, present, at, AlertPriority.High, Phrase.Headline(AlertTexts.Of(verdict.Cause, headline), values),
+            Detail(subject, what, at, @do ?? AlertTexts.Of(verdict.Cause, part), AlertTexts.Of(verdict.Cause, "DoNot")),
+            NoNaN(verdict.Value), NoNaN(verdict.Limit), verdict.Unit);
+    }
+
+    /// <summary>When a sensor is expected to fall below its limit, in words; null where that cannot be told.</summary>
+    public static string? Outlook(CoolingForecast? forecast, double limit) => forecast is null
+        ? null
+        : Phrase.Fill(
+            AlertTexts.Outlook, Phrase.Celsius(limit), Phrase.Duration(TimeSpan.FromSeconds(Math.Min(forecast.SecondsToThreshold.Value, LongestOutlook))),
+            Phrase.Duration(TimeSpan.FromSeconds(Math.Min(forecast.EarliestSeconds, LongestOutlook))),
+            Phrase.Duration(TimeSpan.FromSeconds(Math.Min(forecast.LatestSeconds, LongestOutlook))));
+
+    private static string Trend(HazardChannel channel)
+    {
+        if (!channel.IsThermometer || channel.State.History?.Trend() is not { } trend)
+        {
+            return string.Empty;
+        }
+
+        string text = trend.Kelvin >= 0 ? AlertTexts.TrendRising : AlertTexts.TrendFalling;
+        return " " + Phrase.Fill(text, Phrase.Celsius(Math.Abs(trend.Kelvin)), Phrase.Duration(TimeSpan.FromSeconds(trend.Seconds)));
+    }
+
+    private static string Number(double value, string unit) => double.IsNaN(value)
+        ? AlertTexts.NotKnown
+        : unit is "Cel" or "K" ? Phrase.Celsius(value) : Phrase.Number(value);
+
+    private static double? NoNaN(double value) => double.IsFinite(value) ? value : null;
 
     /// <summary>A channel with a standing hazard that the lab file does not name as a hazard channel any more.</summary>
     public AlertCondition NotWatched(AlertKey key, string sourceName, string channelName, Instant at) => new(

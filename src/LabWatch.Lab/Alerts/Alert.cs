@@ -1,3 +1,4 @@
+using System.Text.Json.Serialization;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Time;
 
@@ -44,6 +45,13 @@ public sealed record Alert(
 
     /// <summary>What the acknowledging person wrote; null where nothing.</summary>
     public string? AcknowledgeNote { get; init; }
+
+    /// <summary>
+    /// When the sensor of a standing alert is expected to fall below its limit, in words; null where that cannot be told. Never stored:
+    /// it belongs to the moment it was asked for.
+    /// </summary>
+    [JsonIgnore]
+    public string? Outlook { get; init; }
 
     /// <summary>Whether it is a hazard.</summary>
     public bool IsHazard => HazardCode.IsHazard(Code);

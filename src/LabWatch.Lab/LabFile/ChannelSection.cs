@@ -75,11 +75,14 @@ internal static class ChannelSection
             return null;
         }
 
-        contact.OnlyMembers("material", "contactSeconds", "limitCelsius");
+        contact.OnlyMembers("material", "contactSeconds", "limitCelsius", "coldLimitCelsius");
         double? seconds = contact.OptionalNumber("contactSeconds", 0.5, 86_400);
         return new SurfaceContact(
             contact.Choice<SurfaceMaterial>("material"),
             seconds is { } known && double.IsFinite(known) ? TimeSpan.FromSeconds(Math.Clamp(known, 0.5, 86_400)) : null,
-            contact.OptionalNumber("limitCelsius", 20, 200));
+            contact.OptionalNumber("limitCelsius", 20, 200))
+        {
+            ColdLimitCelsius = contact.OptionalNumber("coldLimitCelsius", -100, 20),
+        };
     }
 }

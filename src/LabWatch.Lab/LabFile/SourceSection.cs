@@ -16,7 +16,7 @@ internal static class SourceSection
     public static ReferenceSource Read(JsonCursor item, string site)
     {
         item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
-            "view", "baselines", "surroundings", "wellToWallDrop", "effectiveFrom");
+            "view", "baselines", "surroundings", "wellToWallDrop", "effectiveFrom", "hazards");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(
@@ -35,6 +35,7 @@ internal static class SourceSection
             Baselines = [.. item.Items("baselines", required: false).Select(RadianceSection.Baseline)],
             SurroundingsOffsetKelvin = RadianceSection.Surroundings(item),
             WellToWallDrop = RadianceSection.Drop(item),
+            Hazards = HazardSection.Read(item),
             EffectiveFrom = item.OptionalTime("effectiveFrom") ?? Instant.MinValue,
         };
     }

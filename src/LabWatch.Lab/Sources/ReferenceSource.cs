@@ -49,6 +49,9 @@ public sealed record ReferenceSource(
     /// <summary>Temperature of a well minus that of the wall beside it, as a part of the difference between well and room.</summary>
     public Estimate WellToWallDrop { get; init; } = UsualWellToWallDrop;
 
+    /// <summary>What the laboratory has laid down for the hazard watch.</summary>
+    public HazardLimits Hazards { get; init; } = HazardLimits.None;
+
     /// <summary>Taken where nothing is stated about the surroundings (common practice, no source).</summary>
     public static Estimate UsualSurroundingsOffsetKelvin { get; } = new(0, 1.5);
 

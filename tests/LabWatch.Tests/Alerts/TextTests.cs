@@ -58,6 +58,23 @@ public sealed partial class TextTests
         }
     }
 
+    public static TheoryData<string> Causes => [.. Enum.GetNames<HazardCause>()];
+
+    [Theory]
+    [MemberData(nameof(Causes))]
+    public void Every_hazard_has_all_its_texts_whole_within_160_characters(string name)
+    {
+        HazardCause cause = Enum.Parse<HazardCause>(name);
+        foreach (string part in (string[])["Headline", "What", "Do", "DoNot", "Returned"])
+        {
+            string text = AlertTexts.Of(cause, part);
+            Assert.DoesNotMatch(Promise(), text);
+            Assert.All(text, letter => Assert.True(char.IsAscii(letter)));
+            Assert.EndsWith(part == "Headline" && text[^1] == '?' ? "?" : ".", text, StringComparison.Ordinal);
+            Assert.InRange(Phrase.Fill(text, new string('S', 24), new string('C', 24), "1234.5", "1234.5", "1234.5").Length, 1, part is "Headline" or "Returned" ? 160 : 1000);
+        }
+    }
+
     [Theory]
     [InlineData(0.4, "400 ms")]
     [InlineData(119, "119 s")]

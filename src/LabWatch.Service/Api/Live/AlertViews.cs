@@ -29,7 +29,8 @@ internal static class AlertViews
         alert.Detail,
         alert.Value is { } value ? Numbers.OrNull(value) : null,
         alert.Limit is { } limit ? Numbers.OrNull(limit) : null,
-        alert.Unit);
+        alert.Unit,
+        alert.Outlook);
 
     /// <summary>One step in an alert's life.</summary>
     public static AlertTransitionView Of(AlertTransition step) =>

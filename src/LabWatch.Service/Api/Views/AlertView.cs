@@ -23,4 +23,5 @@ internal sealed record AlertView(
     [property: Description("The same at length: since when, what to do, what not to do, cautions.")] string Detail,
     [property: Description("The value that raised it, latest while it stands, in unit.")] double? Value,
     [property: Description("The limit that was crossed, in unit.")] double? Limit,
-    [property: Description("Unit of value and limit.")] string Unit);
+    [property: Description("Unit of value and limit.")] string Unit,
+    [property: Description("When the sensor of a hot surface is expected to fall below its limit, with an interval, in words; null where that cannot be told. An estimate about one sensor: treat as hot until measured.")] string? Outlook);
