@@ -1,8 +1,8 @@
 using System.Globalization;
 using System.Net;
-using LabWatch.Alerts.Secrets;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
+using LabWatch.Lab.Secrets;
 using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
 

@@ -19,6 +19,7 @@ internal sealed class IntakeCounters : IDisposable
     private readonly CountedTotal _conflicts;
     private readonly CountedTotal _refused;
     private readonly CountedTotal _connections;
+    private readonly CountedTotal _turnedAway;
 
     public IntakeCounters()
     {
@@ -31,6 +32,7 @@ internal sealed class IntakeCounters : IDisposable
         _duplicates = new(_meter, "labwatch.intake.duplicates", "{reading}", "Readings delivered again with the same value.");
         _conflicts = new(_meter, "labwatch.intake.conflicts", "{reading}", "Readings refused because another value stands.");
         _refused = new(_meter, "labwatch.intake.refused", "{message}", "Messages refused for the sender to send again.");
+        _turnedAway = new(_meter, "labwatch.intake.turned-away", "{connection}", "Connections of devices that the embedded broker refused.");
         _connections = new(_meter, "labwatch.intake.connections", "{connection}", "Connections made to the external broker.");
     }
 
@@ -52,6 +54,8 @@ internal sealed class IntakeCounters : IDisposable
     public void Spooled(int messages) => _spooled.Add(messages);
 
     public void Refused() => _refused.Add(1);
+
+    public void TurnedAway() => _turnedAway.Add(1);
 
     public void Connected() => _connections.Add(1);
 

@@ -71,11 +71,29 @@ internal static partial class IntakeLog
     [LoggerMessage(1030, LogLevel.Information, "The embedded broker listens on {Address}:{Port}.")]
     public static partial void EmbeddedStarted(ILogger logger, string address, int port);
 
-    [LoggerMessage(1031, LogLevel.Warning, "The embedded broker refused a message of client {Client}: {Reason}")]
-    public static partial void EmbeddedRefused(ILogger logger, string client, string reason);
+    [LoggerMessage(1033, LogLevel.Warning, "The embedded broker refused a message of client {Client}: {Reason} Refused since the last line: {More} more.")]
+    public static partial void EmbeddedRefused(ILogger logger, string client, string reason, int more);
 
-    [LoggerMessage(1032, LogLevel.Error, "The embedded broker could not process a message of client {Client}")]
-    public static partial void EmbeddedFailed(ILogger logger, Exception exception, string client);
+    [LoggerMessage(1034, LogLevel.Debug, "An answer to a device could not be sent: {Reason}")]
+    public static partial void DeviceGone(ILogger logger, string reason);
+
+    [LoggerMessage(1035, LogLevel.Warning, "The embedded broker turned client {Client} at {Address} away: {Reason}")]
+    public static partial void DeviceTurnedAway(ILogger logger, string client, string address, string reason);
+
+    [LoggerMessage(1039, LogLevel.Warning, "The state of service or source could not be published at {Topic}: {Reason}")]
+    public static partial void StateNotPublished(ILogger logger, string topic, string reason);
+
+    [LoggerMessage(1036, LogLevel.Warning, "A message that a device wants retained is not kept: the limit of {Messages} messages or {Bytes} bytes is reached.")]
+    public static partial void NotRetained(ILogger logger, int messages, long bytes);
+
+    [LoggerMessage(1037, LogLevel.Error, "Retained messages could not be read or written: {Reason}")]
+    public static partial void RetainedFailed(ILogger logger, string reason);
+
+    [LoggerMessage(1038, LogLevel.Warning, "The embedded broker has as many connections as permitted ({Connections}); a further one is closed.")]
+    public static partial void TooManyConnections(ILogger logger, int connections);
+
+    [LoggerMessage(1042, LogLevel.Warning, "A connection from {Address} did not come to TLS: {Reason}")]
+    public static partial void HandshakeFailed(ILogger logger, string address, string reason);
 
     [LoggerMessage(1040, LogLevel.Information, "The intake stops: {Queued} messages in the queue, {Spooled} in the spool.")]
     public static partial void Stopping(ILogger logger, int queued, long spooled);

@@ -5,11 +5,40 @@ namespace LabWatch.Intake.Options;
 /// <summary>A broker outside this process.</summary>
 public sealed record ExternalBrokerOptions
 {
+    private readonly int? _port;
+
     /// <summary>Name or address of the broker.</summary>
     public required string Host { get; init; }
 
-    /// <summary>Its port, 1 to 65535. Default 1883.</summary>
-    public int Port { get; init; } = 1883;
+    /// <summary>Its port, 1 to 65535. Default 8883 with <see cref="Tls"/>, else 1883.</summary>
+    public int Port { get => _port ?? (Tls ? 8_883 : 1_883); init => _port = value; }
+
+    /// <summary>
+    /// Whether to speak TLS (1.2 or 1.3). The broker's certificate must then lead to an authority that is trusted and bear the broker's name;
+    /// this check cannot be switched off. Default false.
+    /// </summary>
+    public bool Tls { get; init; }
+
+    /// <summary>File (PEM) of the authorities that are trusted for the broker, instead of those of the system; null for those of the system.</summary>
+    public string? Authorities { get; init; }
+
+    /// <summary>Name that the broker's certificate must bear; null for <see cref="Host"/>.</summary>
+    public string? ServerName { get; init; }
+
+    /// <summary>File (PFX, or PEM) of the certificate by which the broker knows this service; null for none. Read at each connection.</summary>
+    public string? ClientCertificate { get; init; }
+
+    /// <summary>File (PEM) of its key; null where it is in the same file.</summary>
+    public string? ClientCertificateKey { get; init; }
+
+    /// <summary>Name of the secret that opens the key; null for none.</summary>
+    public string? ClientCertificatePasswordSecret { get; init; }
+
+    /// <summary>Whether a password may be sent without TLS to another machine. Default false.</summary>
+    public bool AllowPlainPassword { get; init; }
+
+    /// <summary>Whether to publish the state of service and sources. Default true; the broker must then permit <c>lab-out/#</c>.</summary>
+    public bool PublishState { get; init; } = true;
 
     /// <summary>Whether to speak MQTT 3.1.1 instead of 5. Default false.</summary>
     public bool UseMqtt311 { get; init; }
@@ -59,7 +88,23 @@ public sealed record ExternalBrokerOptions
         .. OptionCheck.Range($"{where}.{nameof(LongestRetry)}", LongestRetry, TimeSpan.FromSeconds(1), TimeSpan.FromMinutes(10)),
         .. OptionCheck.Range($"{where}.{nameof(TakenOverPause)}", TakenOverPause, TimeSpan.FromSeconds(1), TimeSpan.FromDays(1)),
         .. OptionCheck.Must(PasswordSecret is null || UserSecret is not null, $"{where}.{nameof(PasswordSecret)}", "A password needs a user.", PasswordSecret, $"Set {nameof(UserSecret)} too."),
-        .. Secrets.SecretName.Validate($"{where}.{nameof(UserSecret)}", UserSecret),
-        .. Secrets.SecretName.Validate($"{where}.{nameof(PasswordSecret)}", PasswordSecret),
+        .. ValidateTls(where),
+        .. SecretName.Validate($"{where}.{nameof(UserSecret)}", UserSecret),
+        .. SecretName.Validate($"{where}.{nameof(PasswordSecret)}", PasswordSecret),
     ];
+    private IEnumerable<Finding> ValidateTls(string where) =>
+    [
+        .. OptionCheck.Must(Tls || (Authorities ?? ServerName ?? ClientCertificate) is null, $"{where}.{nameof(Tls)}", "Certificates and the server's name need TLS.", null, $"Set {nameof(Tls)}."),
+        .. OptionCheck.Must(
+            Tls || AllowPlainPassword || PasswordSecret is null || IsThisMachine(Host), $"{where}.{nameof(Tls)}", "The password would go over the network in the open.", null, $"Set {nameof(Tls)}, or {nameof(AllowPlainPassword)} on a network of its own."),
+        .. OptionCheck.Must(ServerName is null || Uri.CheckHostName(ServerName) != UriHostNameType.Unknown, $"{where}.{nameof(ServerName)}", "This is neither a host name nor an address.", ServerName, "Set the name in the broker's certificate."),
+        .. OptionCheck.Must(ClientCertificate is not null || (ClientCertificateKey ?? ClientCertificatePasswordSecret) is null, $"{where}.{nameof(ClientCertificate)}", "A key needs its certificate.", null, "Set the certificate."),
+        .. Authorities is { } authorities ? PemFile.Check($"{where}.{nameof(Authorities)}", authorities) : [],
+        .. ClientCertificate is { } certificate ? PemFile.CheckThere($"{where}.{nameof(ClientCertificate)}", certificate) : [],
+        .. ClientCertificateKey is { } key ? PemFile.CheckThere($"{where}.{nameof(ClientCertificateKey)}", key) : [],
+        .. SecretName.Validate($"{where}.{nameof(ClientCertificatePasswordSecret)}", ClientCertificatePasswordSecret),
+    ];
+
+    private static bool IsThisMachine(string host) =>
+        host == "localhost" || (System.Net.IPAddress.TryParse(host, out System.Net.IPAddress? address) && System.Net.IPAddress.IsLoopback(address));
 }

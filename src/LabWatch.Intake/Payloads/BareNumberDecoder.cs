@@ -17,9 +17,8 @@ internal static class BareNumberDecoder
         ChannelEntry channel = context.Route.Channel!;
         double value = double.NaN;
         string? refusal = context.Retained ? IntakeCode.RetainedWithoutTime
-            : IsNoValue(text) ? null
-            : !IsNumber(text) || !double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out value) ? IntakeCode.ValueNotNumber
-            : !double.IsFinite(value) ? IntakeCode.ValueOutOfRange
+            : !TryParse(text, out value) ? IntakeCode.ValueNotNumber
+            : double.IsInfinity(value) ? IntakeCode.ValueOutOfRange
             : null;
         if (refusal is not null)
         {
@@ -29,6 +28,13 @@ internal static class BareNumberDecoder
 
         ReadingQuality quality = double.IsNaN(value) ? ReadingQuality.NoValue : channel.JudgeRange(value);
         readings.Add(new Reading(channel.Id, context.Arrival, value, quality | ReadingQuality.StampedOnArrival));
+    }
+
+    /// <summary>Reads a number in decimal text, or the words for no value (NaN then); false where it is neither.</summary>
+    public static bool TryParse(ReadOnlySpan<byte> text, out double value)
+    {
+        value = double.NaN;
+        return IsNoValue(text) || (IsNumber(text) && double.TryParse(text, NumberStyles.Float, CultureInfo.InvariantCulture, out value));
     }
 
     private static bool IsNoValue(ReadOnlySpan<byte> text) =>

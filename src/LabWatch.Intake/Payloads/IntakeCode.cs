@@ -57,6 +57,9 @@ public static class IntakeCode
     /// <summary>The resolved name is longer than any channel id.</summary>
     public const string NameTooLong = "name-too-long";
 
+    /// <summary>A mapped message has nothing where the mapping points to.</summary>
+    public const string MappedMissing = "mapped-missing";
+
     /// <summary>The record has no value.</summary>
     public const string MissingValue = "missing-value";
 
@@ -72,7 +75,10 @@ public static class IntakeCode
     /// <summary>The record has a sum and no value; sums are not stored.</summary>
     public const string SumWithoutValue = "sum-without-value";
 
-    /// <summary>The unit is not the channel's unit.</summary>
+    /// <summary>The unit is none that is known.</summary>
+    public const string UnknownUnit = "unknown-unit";
+
+    /// <summary>A value in this unit cannot become one in the channel's: they measure different things.</summary>
     public const string UnitMismatch = "unit-mismatch";
 
     /// <summary>The time cannot be represented.</summary>

@@ -1,6 +1,7 @@
 using System.Buffers;
 using System.Globalization;
 using System.Text.Unicode;
+using LabWatch.Intake.Payloads.Mapped;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Readings;
@@ -12,22 +13,38 @@ namespace LabWatch.Intake.Payloads;
 /// Turns a message into readings and findings. It is a function of the message and of the snapshot in force; it never throws on any
 /// bytes, and may be called from several threads.
 /// </summary>
-internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, PayloadLimits limits, ReadingTimeRule times)
+internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, PayloadLimits limits, ReadingTimeRule times, MappingTable mappings)
 {
     private volatile TopicMap _map = new(snapshots.Current, root);
 
     public DecodedMessage Decode(string topic, in ReadOnlySequence<byte> payload, bool retained, Instant arrival)
     {
         TopicMap map = CurrentMap();
+        PayloadMapping? mapping = null;
         if (map.Find(topic) is not { } route)
         {
-            return new DecodedMessage(null, [map.Explain(topic)]);
+            if (mappings.Find(topic, map.Snapshot.Site.Id) is not { } mapped)
+            {
+                return new DecodedMessage(null, [map.Explain(topic)]);
+            }
+
+            if (map.Find($"{root}/{mapped.Source.Site}/{mapped.Source.Source}") is not { } source)
+            {
+                return new DecodedMessage(null, [new Finding(IntakeCode.UnknownSource, "topic", "The lab file has no source of this name.", Finding.Quote(topic), "Mend the topic or the mapping, or add the source to the lab file.")]);
+            }
+
+            (route, mapping) = (source, mapped.Mapping);
         }
 
         var context = new DecodeContext(route, arrival, retained, limits, times);
         if (payload.Length > limits.MaximumBytes)
         {
             return Refuse(IntakeCode.PayloadTooLarge, "The payload is longer than the limit.", "Send smaller packs or raise the limit.");
+        }
+
+        if (mapping is not null)
+        {
+            return DecodeMapped(payload.ToArray(), mapping, context);
         }
 
         if (payload.IsSingleSegment)
@@ -65,6 +82,23 @@ internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, 
         return json || context.Route.Channel is not null
             ? Decode(utf8, json, context)
             : Refuse(IntakeCode.NotSenml, "The payload is no SenML pack; bare numbers go to a channel's topic.", "Send a JSON array of SenML records.");
+    }
+
+    private static DecodedMessage DecodeMapped(ReadOnlyMemory<byte> utf8, PayloadMapping mapping, in DecodeContext context)
+    {
+        FindingList? findings = null;
+        var readings = default(ReadingBuffer);
+        try
+        {
+            MappedJsonDecoder.Decode(utf8, mapping, context, ref readings, ref findings);
+            return new DecodedMessage(
+                readings.Count == 0 ? null : new ReadingPack(context.Route.Source.Key, context.Arrival, readings.ToArray()),
+                findings?.ToList() ?? []);
+        }
+        finally
+        {
+            readings.Dispose();
+        }
     }
 
     private static DecodedMessage DecodeCbor(ReadOnlySpan<byte> bytes, in DecodeContext context)

@@ -1,6 +1,7 @@
 using System.Globalization;
 using System.Text;
 using System.Text.Json;
+using LabWatch.Intake.Units;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
 
@@ -143,17 +144,21 @@ internal static class SenmlJsonDecoder
     {
         ReadOnlySpan<byte> unit = record.Unit.IsEmpty ? record.BaseUnit : record.Unit;
         double value = double.IsNaN(record.Value) || (record.Fields & SenmlFields.Value) == 0 ? record.Value : record.BaseValue + record.Value;
-        if (!unit.IsEmpty && !unit.SequenceEqual(channel.UnitUtf8))
+        if (!channel.TryFindConversion(unit, out UnitConversion? conversion, out string? refusal))
         {
-            (findings ??= new()).Add(IntakeCode.UnitMismatch, Pointer(index, "u"u8), $"The channel {channel.Id} is in {channel.Unit}.", unit, "Send the channel's unit, or mend the unit in the lab file.");
+            (findings ??= new()).Add(refusal!, Pointer(index, "u"u8), SenmlRefusal.Unit(refusal!, channel), unit, "Send the channel's unit, or one that can become it, or mend the unit in the lab file.");
+            return;
         }
-        else if (double.IsInfinity(value))
+
+        value = conversion?.Convert(value) ?? value;
+        if (double.IsInfinity(value))
         {
             SenmlRefusal.Report(IntakeCode.ValueOutOfRange, Pointer(index, "v"u8), record.ValueText, findings ??= new());
         }
         else if (TryResolveTime(record.BaseTime + record.Time, index, context, out Instant time, out ReadingQuality quality, ref findings))
         {
             quality |= double.IsNaN(value) ? ReadingQuality.NoValue : channel.JudgeRange(value);
+            quality |= conversion is null ? ReadingQuality.None : ReadingQuality.Converted;
             readings.Add(new Reading(channel.Id, time, value, quality));
         }
     }

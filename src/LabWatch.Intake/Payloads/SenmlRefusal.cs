@@ -17,6 +17,10 @@ internal static class SenmlRefusal
             ? time.ToString()
             : string.Create(System.Globalization.CultureInfo.InvariantCulture, $"{time.Microseconds} us");
 
+    /// <summary>Why a unit was refused.</summary>
+    public static string Unit(string code, ChannelEntry channel) =>
+        code == IntakeCode.UnknownUnit ? $"The unit is not known; the channel {channel.Id} is in {channel.Unit}." : $"The channel {channel.Id} is in {channel.Unit}, which this unit cannot become.";
+
     private static (string Message, string Cure) Wording(string code) => code switch
     {
         IntakeCode.DuplicateLabel => ("A label stands twice in one record.", "Send each label once."),

@@ -26,4 +26,7 @@ public enum ReadingQuality : byte
 
     /// <summary>The reading arrived long after its device time (delivered late or back-filled).</summary>
     Late = 32,
+
+    /// <summary>The device sent another unit; the value was converted to the channel's.</summary>
+    Converted = 64,
 }

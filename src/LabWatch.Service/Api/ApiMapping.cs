@@ -5,6 +5,7 @@ using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Audit;
 using LabWatch.Service.Api.Configured;
 using LabWatch.Service.Api.Demo;
+using LabWatch.Service.Api.Devices;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
 using LabWatch.Service.Api.Insight;
@@ -38,6 +39,7 @@ internal static class ApiMapping
         MeEndpoints.Map(api);
         AccountEndpoints.Map(api);
         TokenEndpoints.Map(api);
+        DeviceEndpoints.Map(api);
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
         ForecastEndpoints.Map(api);

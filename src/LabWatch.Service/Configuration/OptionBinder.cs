@@ -37,6 +37,12 @@ internal static class OptionBinder
     private static void Set(IConfigurationSection child, PropertyInfo property, object options, List<Finding> findings)
     {
         Type type = Nullable.GetUnderlyingType(property.PropertyType) ?? property.PropertyType;
+        if (type.IsGenericType && type.GetGenericTypeDefinition() == typeof(IReadOnlyList<>))
+        {
+            property.SetValue(options, BindList(child, type.GetGenericArguments()[0], findings));
+            return;
+        }
+
         if (type != typeof(string) && type.IsClass)
         {
             object nested = property.GetValue(options) ?? Activator.CreateInstance(type)!;
@@ -52,6 +58,19 @@ internal static class OptionBinder
         }
 
         findings.Add(new Finding("bad-option", child.Path, $"The value is not {Describe(type)}.", Finding.Quote(child.Value), "Correct the value; the pages in docs/reference list the options of each section."));
+    }
+
+    private static System.Collections.IList BindList(IConfigurationSection section, Type itemType, List<Finding> findings)
+    {
+        var items = (System.Collections.IList)Activator.CreateInstance(typeof(List<>).MakeGenericType(itemType))!;
+        foreach (IConfigurationSection child in section.GetChildren().OrderBy(child => int.TryParse(child.Key, System.Globalization.CultureInfo.InvariantCulture, out int index) ? index : int.MaxValue))
+        {
+            object item = Activator.CreateInstance(itemType)!;
+            Bind(child, item, findings);
+            items.Add(item);
+        }
+
+        return items;
     }
 
     private static bool TryConvert(string? text, Type type, out object? value)

@@ -52,7 +52,7 @@ internal static class SettingsReader
         }
 
         string secrets = Path.Combine(dataDirectory, "secrets");
-        IntakeOptions intake = Bound(configuration, "Intake", new IntakeOptions { InstallationId = installationId, SpoolDirectory = Path.Combine(dataDirectory, "spool"), SecretsDirectory = secrets }, findings);
+        IntakeOptions intake = Bound(configuration, "Intake", new IntakeOptions { InstallationId = installationId, SpoolDirectory = Path.Combine(dataDirectory, "spool"), SecretsDirectory = secrets, DeviceAccountsFile = Path.Combine(dataDirectory, "keys", "devices.json") }, findings);
         if (intake.ExternalBroker is null && intake.EmbeddedBroker is null)
         {
             intake = intake with { EmbeddedBroker = new EmbeddedBrokerOptions() };

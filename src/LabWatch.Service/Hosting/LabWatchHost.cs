@@ -2,12 +2,14 @@ using LabWatch.Alerts;
 using LabWatch.Assessments;
 using LabWatch.Evidence;
 using LabWatch.Intake;
+using LabWatch.Intake.Brokers.Embedded;
 using LabWatch.Lab;
 using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Service.Api;
 using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Api.Health;
+using LabWatch.Service.Api.Streaming;
 using LabWatch.Service.Web;
 using Microsoft.Extensions.DependencyInjection.Extensions;
 
@@ -65,8 +67,14 @@ internal static class LabWatchHost
         services.AddLabWatchEvidence();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IDependencyCheck, LabCheck>());
         services.AddLabWatchApi();
+        if (start.Certificate is { } certificate)
+        {
+            services.AddSingleton<IBrokerCertificate>(new BrokerCertificate(certificate));
+        }
+
         services.AddLabWatchIntake(start.Settings.Intake);
         services.AddHostedService<StorageWatch>();
+        services.AddHostedService<StateTeller>();
         services.AddLabWatchAssessments(start.Settings.Assessments);
     }
 

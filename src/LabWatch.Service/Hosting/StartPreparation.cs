@@ -1,5 +1,6 @@
-using LabWatch.Intake.Secrets;
+using LabWatch.Intake.Options;
 using LabWatch.Lab.Findings;
+using LabWatch.Lab.Secrets;
 using LabWatch.Service.Configuration;
 using LabWatch.Service.Web;
 
@@ -43,6 +44,7 @@ internal static class StartPreparation
             ? (null, [])
             : await new LabStart(data.Path, settings.Records, clock).LoadAsync(order, lookOnly: findings.Count > 0, cancellationToken);
         findings.AddRange(labFindings);
+        findings.AddRange(lab is null ? [] : settings.Intake.CheckAgainst(lab.Current));
         if (findings.Count > 0 || lab is null)
         {
             data.Dispose();
@@ -57,13 +59,19 @@ internal static class StartPreparation
     {
         IReadOnlyList<Uri> addresses = WebAddresses.Parse(urls);
         Finding[] findings = [.. WebAddresses.Check(addresses, settings.Web)];
-        if (findings.Length > 0 || settings.Web.Certificate is null || !addresses.Any(address => address.Scheme == Uri.UriSchemeHttps))
+        EmbeddedBrokerOptions? secureBroker = settings.Intake.EmbeddedBroker is { Tls: true } broker ? broker : null;
+        if (secureBroker is not null && settings.Web.Certificate is null)
+        {
+            findings = [.. findings, new Finding("certificate-missing", "Intake:EmbeddedBroker:Tls", "The embedded broker is to speak TLS and has no certificate.", null, "Set Web:Certificate to the word own, or to a file; pages and broker share it.")];
+        }
+
+        if (findings.Length > 0 || settings.Web.Certificate is null || (secureBroker is null && !addresses.Any(address => address.Scheme == Uri.UriSchemeHttps)))
         {
             return (null, findings);
         }
 
-        SecretReader secrets = new(settings.Intake.SecretsDirectory, Environment.GetEnvironmentVariable);
-        CertificateKeeper certificate = new(settings.Web, data.Keys, [.. addresses.Select(address => address.Host), .. settings.Web.HostNames], secrets, TimeProvider.System);
+        NamedSecrets secrets = new(settings.Intake.SecretsDirectory, Environment.GetEnvironmentVariable);
+        CertificateKeeper certificate = new(settings.Web, data.Keys, [.. addresses.Select(address => address.Host), .. settings.Web.HostNames, .. secureBroker is null ? [] : new[] { secureBroker.Address }], secrets, TimeProvider.System);
         return (certificate, certificate.Open());
     }
 

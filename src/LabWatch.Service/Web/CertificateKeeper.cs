@@ -1,11 +1,11 @@
 using System.Security.Cryptography;
-using LabWatch.Intake.Secrets;
 using LabWatch.Lab.Findings;
+using LabWatch.Lab.Secrets;
 
 namespace LabWatch.Service.Web;
 
 /// <summary>The certificate in force: read again when its file changes, the own one renewed before it ends. What cannot be read leaves the one in force.</summary>
-internal sealed class CertificateKeeper(WebOptions options, string keysDirectory, IReadOnlyList<string> hosts, ISecretReader secrets, TimeProvider clock)
+internal sealed class CertificateKeeper(WebOptions options, string keysDirectory, IReadOnlyList<string> hosts, NamedSecrets secrets, TimeProvider clock)
 {
     private ServerCertificate? _current;
 

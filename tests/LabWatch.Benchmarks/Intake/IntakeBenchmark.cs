@@ -15,17 +15,26 @@ internal static class IntakeBenchmark
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(2);
     private static readonly TimeSpan Patience = TimeSpan.FromMinutes(1);
 
-    /// <summary>Arguments: messages of packs of 12 (others in proportion; default 20000), directory for the data (default: temporary).</summary>
+    /// <summary>
+    /// Arguments: messages of packs of 12 (others in proportion; default 20000), directory for the data (default: temporary), which brokers
+    /// (<c>embedded</c>, <c>external</c>; default: both).
+    /// </summary>
     public static int Run(string[] args)
     {
         int messages = args.Length > 0 ? int.Parse(args[0], CultureInfo.InvariantCulture) : 20_000;
         string directory = args.Length > 1 ? args[1] : Path.GetTempPath();
-        RunAsync(messages, directory).GetAwaiter().GetResult();
+        RunAsync(messages, directory, args.Length > 2 ? args[2] : "both").GetAwaiter().GetResult();
         return 0;
     }
 
-    private static async Task RunAsync(int messages, string directory)
+    private static async Task RunAsync(int messages, string directory, string which)
     {
+        if (which == "embedded")
+        {
+            await MeasureEmbeddedAsync(messages, directory);
+            return;
+        }
+
         if (BenchBroker.IsInstalled)
         {
             Console.WriteLine($"mosquitto: {BenchBroker.Settings}; {Publishers} publishers in a process of their own, 25 under way each");
@@ -41,9 +50,17 @@ internal static class IntakeBenchmark
             Console.WriteLine("mosquitto is not installed: no comparison.");
         }
 
-        foreach (int window in new[] { 1, 20 })
+        if (which != "external")
         {
-            await MeasureEmbeddedAsync(messages * 2, window, directory);
+            await MeasureEmbeddedAsync(messages, directory);
+        }
+    }
+
+    private static async Task MeasureEmbeddedAsync(int messages, string directory)
+    {
+        foreach ((int devices, int window) in new[] { (50, 1), (50, 20), (8, 100), (1, 100) })
+        {
+            await MeasureEmbeddedAsync(messages * 2, devices, window, directory);
         }
     }
 
@@ -103,17 +120,16 @@ internal static class IntakeBenchmark
         return (messages - before) / seconds;
     }
 
-    private static async Task MeasureEmbeddedAsync(int messages, int window, string directory)
+    private static async Task MeasureEmbeddedAsync(int messages, int devices, int window, string directory)
     {
-        const int Devices = 50;
-        await using var intake = new IntakeSubscriber(directory, Devices, null, new EmbeddedBrokerOptions { Port = 0 });
+        await using var intake = new IntakeSubscriber(directory, devices, null, new EmbeddedBrokerOptions { Port = 0, MaximumMessagesPerSecond = 1_000_000 });
         await intake.StartAsync();
-        int each = messages / Devices;
-        PublisherReport report = await PublisherProcess.RunAsync(intake.Port, Devices, each, 12, window);
-        double rate = each * Devices / report.Seconds;
+        int each = messages / devices;
+        PublisherReport report = await PublisherProcess.RunAsync(intake.Port, devices, each, 12, window);
+        double rate = each * devices / report.Seconds;
         Console.WriteLine(string.Create(
             CultureInfo.InvariantCulture,
-            $"embedded, {Devices} devices, packs of 12, {window} under way each: {rate,9:N0} msg/s = {rate * 12,10:N0} readings/s durable; acknowledged after {report.MedianMilliseconds:F1} ms (median), {report.P99Milliseconds:F1} ms (p99); refused {intake.Totals.Refused}"));
+            $"embedded, {devices} devices, packs of 12, {window} under way each: {rate,9:N0} msg/s = {rate * 12,10:N0} readings/s durable; acknowledged after {report.MedianMilliseconds:F1} ms (median), {report.P99Milliseconds:F1} ms (p99); refused {intake.Totals.Refused}"));
     }
 
     private static async Task UntilAsync(Func<bool> condition, ISubscriber subscriber)

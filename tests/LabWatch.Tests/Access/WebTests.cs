@@ -1,6 +1,6 @@
 using System.Security.Cryptography;
 using System.Security.Cryptography.X509Certificates;
-using LabWatch.Intake.Secrets;
+using LabWatch.Lab.Secrets;
 using LabWatch.Service.Web;
 using Microsoft.Extensions.Time.Testing;
 
@@ -103,7 +103,7 @@ public sealed class WebTests : IDisposable
         Assert.Equal("certificate-ended", Assert.Single(Keeper(new WebOptions { Certificate = path }).Open()).Code);
     }
 
-    private CertificateKeeper Keeper(WebOptions options) => new(options, _folder, ["bench.example", "0.0.0.0"], new SecretReader(null, _ => null), _clock);
+    private CertificateKeeper Keeper(WebOptions options) => new(options, _folder, ["bench.example", "0.0.0.0"], new NamedSecrets(null, _ => null), _clock);
 
     private void Write(string path, string? keyPath, string name)
     {

@@ -4,8 +4,8 @@ using System.Security.Cryptography;
 using System.Text;
 using System.Text.Json;
 using LabWatch.Alerts.Outbox;
-using LabWatch.Alerts.Secrets;
 using LabWatch.Lab.Alerts;
+using LabWatch.Lab.Secrets;
 using LabWatch.Records.Alerts;
 
 namespace LabWatch.Tests.Alerts;

@@ -1,6 +1,8 @@
 using System.Buffers;
 using System.Text;
+using LabWatch.Intake.Options;
 using LabWatch.Intake.Payloads;
+using LabWatch.Intake.Payloads.Mapped;
 using LabWatch.Lab;
 using LabWatch.Lab.Time;
 
@@ -12,8 +14,8 @@ internal static class DecodingBench
     /// <summary>2026-12-01T08:15:30Z.</summary>
     public static Instant Arrival { get; } = Instant.FromUnixSeconds(1_796_112_930);
 
-    public static PayloadDecoder Decoder(ILabSnapshotSource? lab = null, PayloadLimits? limits = null) =>
-        new(lab ?? new IntakeLab(), "lab", limits ?? new PayloadLimits(), new ReadingTimeRule());
+    public static PayloadDecoder Decoder(ILabSnapshotSource? lab = null, PayloadLimits? limits = null, params MappingOptions[] mappings) =>
+        new(lab ?? new IntakeLab(), "lab", limits ?? new PayloadLimits(), new ReadingTimeRule(), new MappingTable(mappings));
 
     public static DecodedMessage Decode(string payload, string topic = IntakeLab.Topic, bool retained = false, ILabSnapshotSource? lab = null) =>
         Decode(Encoding.UTF8.GetBytes(payload), topic, retained, Decoder(lab));

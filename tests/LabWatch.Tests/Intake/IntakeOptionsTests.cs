@@ -1,7 +1,7 @@
 using LabWatch.Intake;
 using LabWatch.Intake.Options;
 using LabWatch.Intake.Payloads;
-using LabWatch.Intake.Secrets;
+using LabWatch.Lab.Secrets;
 using Microsoft.Extensions.DependencyInjection;
 
 namespace LabWatch.Tests.Intake;
@@ -41,7 +41,7 @@ public class IntakeOptionsTests
         Assert.Equal(
             [
                 "EmbeddedBroker.Address", "EmbeddedBroker.Port", "ExternalBroker.Host", "ExternalBroker.KeepAlive", "ExternalBroker.PasswordSecret",
-                "ExternalBroker.PasswordSecret", "ExternalBroker.Port", "InstallationId", "Payload.MaximumDepth", "QueueLimit", "Root", "SecretsDirectory",
+                "ExternalBroker.PasswordSecret", "ExternalBroker.Port", "ExternalBroker.Tls", "InstallationId", "Payload.MaximumDepth", "QueueLimit", "Root", "SecretsDirectory",
                 "SpoolDirectory", "SpoolLimitBytes", "Times.FutureLimit",
             ],
             bad.Validate().Select(finding => finding.Where).Order(StringComparer.Ordinal));
@@ -68,7 +68,7 @@ public class IntakeOptionsTests
         using var folder = new TemporaryDirectory();
         using var credentials = new TemporaryDirectory();
         var variables = new Dictionary<string, string> { ["CREDENTIALS_DIRECTORY"] = credentials.Path, ["LABWATCH_SECRET_BROKER_PASSWORD"] = "three" };
-        var reader = new SecretReader(folder.Path, variables.GetValueOrDefault);
+        var reader = new NamedSecrets(folder.Path, variables.GetValueOrDefault);
         Assert.Equal("three", reader.Read("broker-password"));
         File.WriteAllText(Path.Combine(credentials.Path, "broker-password"), "two\r\n");
         Assert.Equal("two", reader.Read("broker-password"));

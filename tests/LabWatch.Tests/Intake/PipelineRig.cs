@@ -4,6 +4,7 @@ using System.Globalization;
 using System.Text;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Intake.Payloads;
+using LabWatch.Intake.Payloads.Mapped;
 using LabWatch.Intake.Pipeline;
 using LabWatch.Intake.Spool;
 using LabWatch.Lab.Readings;
@@ -29,13 +30,14 @@ internal sealed class PipelineRig : IAsyncDisposable
         _ownDirectory = spoolDirectory is null ? new TemporaryDirectory() : null;
         Store = store ?? new FakeStore();
         Queue = new IntakeQueue(10_000, 10 << 20);
-        Spool = new IntakeSpool(spoolDirectory ?? _ownDirectory!.Path, spoolLimit, 2_000);
+        Directory = spoolDirectory ?? _ownDirectory!.Path;
+        Spool = new IntakeSpool(Directory, spoolLimit, 2_000);
         _lane = new StoreLane(Store, Quarantine, "lab", Counters);
         var options = new CommitterOptions();
         _drain = new SpoolDrain(Spool, _lane, options, Clock, NullLogger<SpoolDrain>.Instance);
         var committer = new Committer(Queue, _lane, Spool, _drain, Signal, Counters, options, Clock, NullLogger<Committer>.Instance);
         Intake = new MessageIntake(
-            new PayloadDecoder(new IntakeLab(), "lab", new PayloadLimits(), new ReadingTimeRule()),
+            new PayloadDecoder(new IntakeLab(), "lab", new PayloadLimits(), new ReadingTimeRule(), new MappingTable([])),
             [.. moreTaps, Tap],
             Queue,
             Counters,
@@ -54,6 +56,9 @@ internal sealed class PipelineRig : IAsyncDisposable
     public RecordingTap Tap { get; } = new();
 
     public IntakeQueue Queue { get; }
+
+    /// <summary>Where the spool lies.</summary>
+    public string Directory { get; }
 
     public IntakeSpool Spool { get; }
 

@@ -236,7 +236,7 @@ public class PipelineTests
         using var counters = new IntakeCounters();
         var queue = new IntakeQueue(100, 10_000);
         var intake = new MessageIntake(
-            new PayloadDecoder(new IntakeLab { Current = IntakeLab.Snapshot(keys) }, "lab", new PayloadLimits(), new ReadingTimeRule()),
+            new PayloadDecoder(new IntakeLab { Current = IntakeLab.Snapshot(keys) }, "lab", new PayloadLimits(), new ReadingTimeRule(), new LabWatch.Intake.Payloads.Mapped.MappingTable([])),
             [],
             queue,
             counters,
@@ -244,7 +244,7 @@ public class PipelineTests
             NullLogger<MessageIntake>.Instance);
         foreach (SourceKey key in keys)
         {
-            Assert.True(intake.TryAccept($"lab/{key.Site}/{key.Source}/power", new ReadOnlySequence<byte>("1"u8.ToArray()), false, LabWatch.Intake.Brokers.External.NoDelivery.Instance));
+            Assert.True(intake.TryAccept($"lab/{key.Site}/{key.Source}/power", new ReadOnlySequence<byte>("1"u8.ToArray()), false, NoDelivery.Instance));
         }
 
         Assert.Equal(64, queue.Count);
@@ -264,7 +264,7 @@ public class PipelineTests
         Assert.True(queue.TryAdd(Item(80)));
     }
 
-    private static IntakeItem Item(long bytes) => new(default, LabWatch.Intake.Brokers.External.NoDelivery.Instance, bytes);
+    private static IntakeItem Item(long bytes) => new(default, NoDelivery.Instance, bytes);
 
     private static void Send(PipelineRig rig, int from, int to)
     {

@@ -1,6 +1,9 @@
 using System.Collections.Concurrent;
 using System.Net;
 using System.Net.Sockets;
+using System.Security.Authentication;
+using System.Security.Cryptography.X509Certificates;
+using LabWatch.Intake.Diagnostics;
 using LabWatch.Intake.Options;
 using MQTTnet.Adapter;
 using MQTTnet.Diagnostics.Logger;
@@ -14,11 +17,11 @@ namespace LabWatch.Intake.Brokers.Embedded;
 /// Listens for devices and hands each connection to the broker, with a bound on connections and on the size of packets, which the
 /// broker's own listener does not have.
 /// </summary>
-internal sealed class ListenerAdapter(EmbeddedBrokerOptions options) : IMqttServerAdapter
+internal sealed class ListenerAdapter(EmbeddedBrokerOptions options, IBrokerCertificate? certificate, DeviceDesk desk) : IMqttServerAdapter
 {
     private const int WriteBufferBytes = 4 << 10;
     private const int LargestWriteBufferBytes = 64 << 10;
-    private readonly ConcurrentDictionary<Socket, bool> _open = new();
+    private readonly ConcurrentDictionary<Socket, DeviceLink?> _open = new();
     private Socket? _listener;
     private CancellationTokenSource? _stop;
     private Task _accepting = Task.CompletedTask;
@@ -26,12 +29,20 @@ internal sealed class ListenerAdapter(EmbeddedBrokerOptions options) : IMqttServ
     /// <inheritdoc/>
     public Func<IMqttChannelAdapter, Task>? ClientHandler { get; set; }
 
+    /// <summary>The links to devices that are open now.</summary>
+    public IEnumerable<DeviceLink> Links => _open.Values.OfType<DeviceLink>();
+
     /// <summary>The address and port that it listens on; null while it does not.</summary>
     public IPEndPoint? EndPoint { get; private set; }
 
     /// <inheritdoc/>
     public Task StartAsync(MqttServerOptions serverOptions, IMqttNetLogger logger)
     {
+        if (options.Tls && certificate is null)
+        {
+            throw new InvalidOperationException("The embedded broker is to speak TLS and has no certificate.");
+        }
+
         var address = IPAddress.Parse(options.Address);
         var listener = new Socket(address.AddressFamily, SocketType.Stream, ProtocolType.Tcp);
         try
@@ -93,11 +104,12 @@ internal sealed class ListenerAdapter(EmbeddedBrokerOptions options) : IMqttServ
                 Socket socket = await listener.AcceptAsync(stop);
                 if (_open.Count >= options.MaximumConnections)
                 {
+                    IntakeLog.TooManyConnections(desk.Logger, options.MaximumConnections);
                     socket.Dispose();
                     continue;
                 }
 
-                _open[socket] = true;
+                _open[socket] = null;
                 _ = Task.Run(() => ServeAsync(socket, logger), CancellationToken.None);
             }
             catch (Exception exception) when (exception is OperationCanceledException or ObjectDisposedException)
@@ -116,14 +128,22 @@ internal sealed class ListenerAdapter(EmbeddedBrokerOptions options) : IMqttServ
         try
         {
             socket.NoDelay = true;
-            await using var stream = new NetworkStream(socket, ownsSocket: true);
-            using var channel = new PacketSizeGuard(new MqttTcpChannel(stream, socket.LocalEndPoint, socket.RemoteEndPoint, null), options.MaximumPacketBytes);
+            await using var plain = new NetworkStream(socket, ownsSocket: true);
+            (Stream stream, X509Certificate2? peer) = options.Tls ? await BrokerTls.AcceptAsync(plain, certificate!, options.ClientAuthorities, desk.Clock) : (plain, null);
+            await using Stream owned = stream;
+            using var channel = new PacketSizeGuard(
+                new BatchedChannel(new MqttTcpChannel(stream, socket.LocalEndPoint, socket.RemoteEndPoint, peer)), options.MaximumPacketBytes);
             var formatter = new MqttPacketFormatterAdapter(new MqttBufferWriter(WriteBufferBytes, LargestWriteBufferBytes));
-            using var adapter = new MqttChannelAdapter(channel, formatter, logger);
+            using var link = new DeviceLink(new MqttChannelAdapter(channel, formatter, logger), desk);
+            _open[socket] = link;
             if (ClientHandler is { } handler)
             {
-                await handler(adapter);
+                await handler(link);
             }
+        }
+        catch (Exception exception) when (exception is AuthenticationException or OperationCanceledException)
+        {
+            IntakeLog.HandshakeFailed(desk.Logger, socket.Connected ? socket.RemoteEndPoint?.ToString() ?? string.Empty : string.Empty, exception.Message);
         }
         catch (Exception exception) when (exception is IOException or SocketException or ObjectDisposedException)
         {

@@ -1,11 +1,12 @@
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Intake.Options;
+using LabWatch.Intake.Outgoing;
 using LabWatch.Intake.Pipeline;
-using LabWatch.Intake.Secrets;
-using Microsoft.Extensions.Logging;
+using LabWatch.Lab.Secrets;
 using MQTTnet;
 using MQTTnet.Diagnostics.Logger;
 using MQTTnet.Protocol;
+using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Intake.Brokers.External;
 
@@ -18,7 +19,9 @@ internal sealed class BrokerConnection : IAsyncDisposable
     private const int BacklogLimit = 2_000;
     private readonly ExternalBrokerOptions _options;
     private readonly BrokerIdentity _identity;
-    private readonly ISecretReader _secrets;
+    private readonly NamedSecrets _secrets;
+    private readonly ServiceState _state;
+    private readonly StatePublisher _publisher;
     private readonly MessageIntake _intake;
     private readonly TimeProvider _clock;
     private readonly bool _durable;
@@ -27,6 +30,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
     private readonly AcknowledgementLane _acknowledgements;
     private readonly IMqttClient _client;
     private Task _acknowledging = Task.CompletedTask;
+    private Task _publishing = Task.CompletedTask;
     private long _lastMessage;
     private int _disposed;
     private volatile bool _taking;
@@ -35,7 +39,9 @@ internal sealed class BrokerConnection : IAsyncDisposable
     public BrokerConnection(
         ExternalBrokerOptions options,
         BrokerIdentity identity,
-        ISecretReader secrets,
+        NamedSecrets secrets,
+        StateBoard board,
+        ServiceState state,
         MessageIntake intake,
         IntakeCounters counters,
         TimeProvider clock,
@@ -45,6 +51,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
         _options = options;
         _identity = identity;
         _secrets = secrets;
+        _state = state;
         _intake = intake;
         _clock = clock;
         _durable = _taking = durable;
@@ -53,6 +60,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
         _client.ApplicationMessageReceivedAsync += OnMessage;
         _client.DisconnectedAsync += OnDisconnected;
         _lastMessage = clock.GetTimestamp();
+        _publisher = new StatePublisher(_client, board, options.AnswerWithin, clock, logger);
     }
 
     /// <summary>Ends with the reason when the connection is no longer of use.</summary>
@@ -70,20 +78,35 @@ internal sealed class BrokerConnection : IAsyncDisposable
         using var deadline = new CancellationTokenSource(_options.AnswerWithin * 2, _clock);
         using var either = CancellationTokenSource.CreateLinkedTokenSource(stop, deadline.Token);
         _acknowledging = AcknowledgeAsync();
-        MqttClientConnectResult result = await _client.ConnectAsync(LinkOptions.Connect(_options, _identity, _secrets, _durable), either.Token);
+        MqttClientConnectResult result = await _client.ConnectAsync(LinkOptions.Connect(_options, _identity, _secrets, _state, _durable), either.Token);
         if (result.ResultCode != MqttClientConnectResultCode.Success)
         {
             throw new LinkFailedException($"The broker refused the connection: {result.ResultCode} {result.ReasonString}".TrimEnd());
         }
 
         MqttClientSubscribeResult subscribed = await _client.SubscribeAsync(LinkOptions.Subscribe(_options, _identity, _durable), either.Token);
-        MqttClientSubscribeResultCode granted = subscribed.Items.First().ResultCode;
-        if (granted > MqttClientSubscribeResultCode.GrantedQoS2 || (_durable && granted == MqttClientSubscribeResultCode.GrantedQoS0))
+        MqttClientSubscribeResultItem? refused = subscribed.Items.FirstOrDefault(item =>
+            item.ResultCode > MqttClientSubscribeResultCode.GrantedQoS2 || (_durable && item.ResultCode == MqttClientSubscribeResultCode.GrantedQoS0));
+        if (refused is not null)
         {
-            throw new LinkFailedException($"The broker refused the subscription to {_identity.TopicFilter}: {granted}.");
+            throw new LinkFailedException($"The broker refused the subscription to {refused.TopicFilter.Topic}: {refused.ResultCode}.");
+        }
+
+        if (_options.PublishState)
+        {
+            _publishing = _publisher.RunAsync(_state.Topic, _state.Message(_durable ? ServiceState.Online : ServiceState.WatchingOnly), Ended);
         }
 
         return result;
+    }
+
+    /// <summary>Says at the broker that the service leaves on purpose.</summary>
+    public async Task SayStoppedAsync()
+    {
+        if (_options.PublishState)
+        {
+            await _publisher.PublishAsync(_state.Topic, _state.Message(ServiceState.Stopped));
+        }
     }
 
     /// <summary>Whether the broker answers a ping in time. The client's own view of the link is not trusted.</summary>
@@ -123,6 +146,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
         _ended.TrySetResult(LinkEnd.Stopped);
         _acknowledgements.Close();
         await _acknowledging;
+        await _publishing;
         using var deadline = new CancellationTokenSource(_options.AnswerWithin, _clock);
         try
         {

@@ -1,9 +1,10 @@
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Intake.Options;
+using LabWatch.Intake.Outgoing;
 using LabWatch.Intake.Pipeline;
-using LabWatch.Intake.Secrets;
-using Microsoft.Extensions.Logging;
+using LabWatch.Lab.Secrets;
 using MQTTnet;
+using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Intake.Brokers.External;
 
@@ -13,7 +14,9 @@ namespace LabWatch.Intake.Brokers.External;
 internal sealed class BrokerSupervisor(
     ExternalBrokerOptions options,
     BrokerIdentity identity,
-    ISecretReader secrets,
+    NamedSecrets secrets,
+    StateBoard board,
+    ServiceState state,
     MessageIntake intake,
     IntakeQueue queue,
     CommitSignal signal,
@@ -65,7 +68,7 @@ internal sealed class BrokerSupervisor(
         Task changed = signal.Changed;
         bool durable = !signal.Stopped && !_takeovers.Pausing;
         status.Set(_takeovers.Pausing ? BrokerLinkState.TakenOver : BrokerLinkState.Connecting, false, status.Note);
-        await using var connection = new BrokerConnection(options, identity, secrets, intake, counters, clock, logger, durable);
+        await using var connection = new BrokerConnection(options, identity, secrets, board, state, intake, counters, clock, logger, durable);
         MqttClientConnectResult result = await connection.OpenAsync(stop);
         Announce(connection, result, durable);
         long opened = clock.GetTimestamp();
@@ -73,6 +76,7 @@ internal sealed class BrokerSupervisor(
         if (end == LinkEnd.Stopped)
         {
             await connection.FlushAsync();
+            await connection.SayStoppedAsync();
         }
 
         _connection = null;

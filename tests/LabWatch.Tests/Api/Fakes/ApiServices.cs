@@ -4,6 +4,7 @@ using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Assessments.Forecasts;
 using LabWatch.Assessments.Planning;
+using LabWatch.Intake.Accounts;
 using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab;
 using LabWatch.Readings;
@@ -58,6 +59,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<ICavityModels>(DemoRun.Models);
         services.AddSingleton<AssessmentHistory>();
         services.AddSingleton<IIntakeState>(Intake);
+        services.AddSingleton<IDeviceAccounts>(new DeviceAccountFile(Path.Combine(Path.GetTempPath(), $"labwatch-devices-{Guid.NewGuid():N}.json")));
         services.TryAddSingleton<IRunLedger, NoRuns>();
         if (isDemo)
         {

@@ -1,7 +1,7 @@
 using LabWatch.Lab.Findings;
 using LabWatch.Lab.Identity;
 
-namespace LabWatch.Intake.Secrets;
+namespace LabWatch.Intake.Options;
 
 /// <summary>The form of a secret's name: an id, so that it can be a file name and part of a variable's name.</summary>
 internal static class SecretName

@@ -1,6 +1,5 @@
-using LabWatch.Intake.Pipeline;
 
-namespace LabWatch.Intake.Brokers.External;
+namespace LabWatch.Intake.Pipeline;
 
 /// <summary>For messages that are not acknowledged (QoS 0).</summary>
 internal sealed class NoDelivery : IDelivery
