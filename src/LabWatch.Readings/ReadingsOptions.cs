@@ -8,6 +8,18 @@ public sealed record ReadingsOptions
     /// <summary>Folder of the readings and the quarantine; made where it is missing. On a local disk: a network share cannot promise what a commit needs.</summary>
     public required string DataDirectory { get; init; }
 
+    /// <summary>Where readings lie; the data directory is needed with every engine. The file in the data directory unless stated.</summary>
+    public ReadingsEngine Engine { get; init; } = ReadingsEngine.Sqlite;
+
+    /// <summary>The PostgreSQL database; used where <see cref="Engine"/> says so.</summary>
+    public PostgreSqlReadingsOptions PostgreSql { get; init; } = new();
+
+    /// <summary>The InfluxDB database; used where <see cref="Engine"/> says so.</summary>
+    public InfluxDbReadingsOptions InfluxDb { get; init; } = new();
+
+    /// <summary>Folder that holds secrets, one file each; null for none.</summary>
+    public string? SecretsDirectory { get; init; }
+
     /// <summary>How long an hour that is over takes no reading before it is sealed. 1 s to 1 d; 2 min unless stated.</summary>
     public TimeSpan QuietPeriod { get; init; } = TimeSpan.FromMinutes(2);
 
@@ -40,6 +52,12 @@ public sealed record ReadingsOptions
         Check(findings, nameof(JournalBytesLimit), JournalBytesLimit, 1L << 20, 16L << 30, "bytes");
         Check(findings, nameof(QuarantineCountLimit), QuarantineCountLimit, 1, 1_000_000, "messages");
         Check(findings, nameof(QuarantineBytesLimit), QuarantineBytesLimit, 1L << 10, 1L << 30, "bytes");
+        findings.AddRange(Engine switch
+        {
+            ReadingsEngine.PostgreSql => PostgreSql.Validate(nameof(PostgreSql)),
+            ReadingsEngine.InfluxDb => InfluxDb.Validate(nameof(InfluxDb)),
+            _ => [],
+        });
         return findings;
     }
 

@@ -1,7 +1,9 @@
+using LabWatch.Readings.Engine;
 using LabWatch.Readings.Quarantine;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.DependencyInjection.Extensions;
 using Microsoft.Extensions.Hosting;
+using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Readings;
 
@@ -9,8 +11,8 @@ namespace LabWatch.Readings;
 public static class ReadingsServiceCollectionExtensions
 {
     /// <summary>
-    /// Adds <see cref="IReadingStore"/>, <see cref="IReadingStoreHealth"/>, <see cref="IReadingSealer"/> and <see cref="IQuarantine"/> in the
-    /// data directory of the options, and the background sealing. May be called again; the first registration stays.
+    /// Adds <see cref="IReadingStore"/>, <see cref="IReadingStoreHealth"/>, <see cref="IReadingSealer"/> and <see cref="IQuarantine"/> on the
+    /// engine of the options, and the background sealing. May be called again; the first registration stays.
     /// </summary>
     /// <param name="services">The services.</param>
     /// <param name="options">Where and how; validate them first.</param>
@@ -20,12 +22,32 @@ public static class ReadingsServiceCollectionExtensions
         ArgumentNullException.ThrowIfNull(options);
         services.TryAddSingleton(options);
         services.TryAddSingleton(TimeProvider.System);
-        services.TryAddSingleton<SqliteReadingStore>();
-        services.TryAddSingleton<IReadingStore>(provider => provider.GetRequiredService<SqliteReadingStore>());
-        services.TryAddSingleton<IReadingSealer>(provider => provider.GetRequiredService<SqliteReadingStore>());
-        services.TryAddSingleton<IReadingStoreHealth>(provider => provider.GetRequiredService<SqliteReadingStore>());
+        switch (options.Engine)
+        {
+            case ReadingsEngine.PostgreSql:
+                AddStore(services, provider => PostgreSqlReadingStore.Create(options, Clock(provider), Log<BlockReadingStore>(provider)));
+                services.TryAddSingleton<IQuarantine>(_ => PostgreSqlReadingStore.Quarantine(options));
+                break;
+            default:
+                AddStore(services, provider => new SqliteReadingStore(options, Clock(provider), Log<SqliteReadingStore>(provider)));
+                break;
+        }
+
         services.TryAddSingleton<IQuarantine, SqliteQuarantine>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, SealingService>());
         return services;
     }
+
+    private static void AddStore<TStore>(IServiceCollection services, Func<IServiceProvider, TStore> make)
+        where TStore : class, IReadingStore, IReadingSealer, IReadingStoreHealth
+    {
+        services.TryAddSingleton(make);
+        services.TryAddSingleton<IReadingStore>(provider => provider.GetRequiredService<TStore>());
+        services.TryAddSingleton<IReadingSealer>(provider => provider.GetRequiredService<TStore>());
+        services.TryAddSingleton<IReadingStoreHealth>(provider => provider.GetRequiredService<TStore>());
+    }
+
+    private static TimeProvider Clock(IServiceProvider provider) => provider.GetRequiredService<TimeProvider>();
+
+    private static ILogger<T> Log<T>(IServiceProvider provider) => provider.GetRequiredService<ILogger<T>>();
 }

@@ -13,9 +13,10 @@ namespace LabWatch.Readings.Engine;
 /// The engine of sealed source-hours over a database: commits go to a journal and to memory, hours that are over are sealed by
 /// <see cref="SealDueAsync"/> beside them, reads take both. Opens on first use.
 /// </summary>
-internal sealed class BlockReadingStore : IAsyncDisposable
+internal sealed class BlockReadingStore : IReadingStore, IReadingSealer, IReadingStoreHealth
 {
     private readonly ReadingsOptions _options;
+    private readonly StoreDialect _dialect;
     private readonly TimeProvider _clock;
     private readonly HeadState _head = new();
     private readonly SemaphoreSlim _writing = new(1, 1);
@@ -33,6 +34,7 @@ internal sealed class BlockReadingStore : IAsyncDisposable
     public BlockReadingStore(StoreDialect dialect, string markPath, ReadingsOptions options, TimeProvider clock, ILogger log)
     {
         _options = options;
+        _dialect = dialect;
         _clock = clock;
         _incidents = new StoreIncidents(dialect.Location, clock, log);
         _session = new StoreSession(dialect, markPath, _head, _incidents, clock, log);
@@ -124,6 +126,7 @@ internal sealed class BlockReadingStore : IAsyncDisposable
         await _writing.WaitAsync();
         _readers.Dispose();
         _session.Dispose();
+        _dialect.Close();
         _writing.Dispose();
     }
 
@@ -184,7 +187,7 @@ internal sealed class BlockReadingStore : IAsyncDisposable
         {
             return read();
         }
-        catch (DbException error)
+        catch (Exception error) when (error is DbException or TimeoutException)
         {
             throw new StoreUnavailableException($"The readings cannot be read: {error.Message}", error);
         }

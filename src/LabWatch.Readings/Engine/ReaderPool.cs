@@ -14,7 +14,7 @@ internal sealed class ReaderPool(StoreDialect dialect) : IDisposable
     public T Use<T>(Func<StoreConnection, T> read)
     {
         ObjectDisposedException.ThrowIf(_closed, this);
-        StoreConnection connection = _idle.TryTake(out StoreConnection? known) ? known : new StoreConnection(dialect.OpenReader());
+        StoreConnection connection = Idle() ?? new StoreConnection(dialect.OpenReader());
         try
         {
             T result = read(connection);
@@ -40,6 +40,21 @@ internal sealed class ReaderPool(StoreDialect dialect) : IDisposable
     {
         _closed = true;
         Clear();
+    }
+
+    private StoreConnection? Idle()
+    {
+        while (_idle.TryTake(out StoreConnection? known))
+        {
+            if (dialect.Answers(known))
+            {
+                return known;
+            }
+
+            known.Dispose();
+        }
+
+        return null;
     }
 
     private void Clear()

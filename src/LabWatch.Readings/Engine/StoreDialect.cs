@@ -125,4 +125,12 @@ internal abstract class StoreDialect
 
     /// <summary>Moves a database that cannot be opened at all out of the way, so that a new one can take readings; gives where it went.</summary>
     public abstract string SetWholeAside(string stamp);
+
+    /// <summary>Whether a connection that lay idle still works. A file does not go away.</summary>
+    public virtual bool Answers(StoreConnection connection) => true;
+
+    /// <summary>Ends what the dialect holds apart from its connections.</summary>
+    public virtual void Close()
+    {
+    }
 }

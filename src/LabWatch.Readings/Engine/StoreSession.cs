@@ -35,7 +35,7 @@ internal sealed class StoreSession(
         {
             return action(_writer ??= Open());
         }
-        catch (Exception error) when (error is DbException or IOException or UnauthorizedAccessException or DamagedDataException)
+        catch (Exception error) when (error is DbException or IOException or UnauthorizedAccessException or DamagedDataException or TimeoutException)
         {
             Close();
             _trouble = error.Message;

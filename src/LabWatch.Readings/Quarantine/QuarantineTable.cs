@@ -2,8 +2,8 @@ using Microsoft.Data.Sqlite;
 
 namespace LabWatch.Readings.Quarantine;
 
-/// <summary>The table of refused messages. Not thread-safe.</summary>
-internal sealed class QuarantineTable(string path, int countLimit, long bytesLimit) : IDisposable
+/// <summary>The table of refused messages in a SQLite file. Not thread-safe.</summary>
+internal sealed class QuarantineTable(string path, int countLimit, long bytesLimit) : IQuarantineTable
 {
     private const string Tables =
         """

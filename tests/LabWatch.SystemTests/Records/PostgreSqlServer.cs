@@ -31,7 +31,7 @@ public sealed class PostgreSqlServer : IAsyncLifetime
     {
         Assert.SkipWhen(WhyNot is not null, WhyNot ?? string.Empty);
         string name = $"records_{Interlocked.Increment(ref _databases)}";
-        await using NpgsqlConnection connection = new(ConnectionTo("postgres"));
+        await using NpgsqlConnection connection = new(ConnectionTo("postgres") + ";Pooling=false");
         await connection.OpenAsync(cancellationToken);
         await using NpgsqlCommand create = new($"CREATE DATABASE {name}", connection);
         await create.ExecuteNonQueryAsync(cancellationToken);
