@@ -17,7 +17,9 @@ internal static class PostgreSqlReadingStore
 
     public static PostgreSqlQuarantine Quarantine(ReadingsOptions options) => new(Target(options), options);
 
-    private static PostgreSqlTarget Target(ReadingsOptions options) => new(
-        options.PostgreSql,
-        new ReadingsSecrets(options.SecretsDirectory, Environment.GetEnvironmentVariable).Read(options.PostgreSql.PasswordSecret));
+    private static PostgreSqlTarget Target(ReadingsOptions options)
+    {
+        ReadingsSecrets secrets = new(options.SecretsDirectory, Environment.GetEnvironmentVariable);
+        return new PostgreSqlTarget(options.PostgreSql, () => secrets.Read(options.PostgreSql.PasswordSecret));
+    }
 }

@@ -27,4 +27,7 @@ internal static partial class ReadingsLog
 
     [LoggerMessage(2007, LogLevel.Critical, "The readings could not be opened and were moved to {Target}; a new store takes what comes now.")]
     public static partial void WholeSetAside(ILogger log, string target, Exception error);
+
+    [LoggerMessage(2020, LogLevel.Error, "The database refuses {Count} readings; they are in the quarantine. The first: {Reason}")]
+    public static partial void RefusedByDatabase(ILogger log, int count, string reason);
 }

@@ -1,4 +1,5 @@
 using LabWatch.Readings.Engine;
+using LabWatch.Readings.Influx;
 using LabWatch.Readings.Quarantine;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.DependencyInjection.Extensions;
@@ -27,6 +28,9 @@ public static class ReadingsServiceCollectionExtensions
             case ReadingsEngine.PostgreSql:
                 AddStore(services, provider => PostgreSqlReadingStore.Create(options, Clock(provider), Log<BlockReadingStore>(provider)));
                 services.TryAddSingleton<IQuarantine>(_ => PostgreSqlReadingStore.Quarantine(options));
+                break;
+            case ReadingsEngine.InfluxDb:
+                AddStore(services, provider => new InfluxReadingStore(options, provider.GetRequiredService<IQuarantine>(), Clock(provider), Log<InfluxReadingStore>(provider)));
                 break;
             default:
                 AddStore(services, provider => new SqliteReadingStore(options, Clock(provider), Log<SqliteReadingStore>(provider)));

@@ -14,12 +14,12 @@ internal sealed class PostgreSqlDialect : StoreDialect
 
     private readonly PostgreSqlTarget _target;
     private readonly string _name = "labwatch-readings-" + Guid.NewGuid().ToString("N");
-    private readonly NpgsqlDataSource _source;
+    private readonly Lazy<NpgsqlDataSource> _source;
 
     public PostgreSqlDialect(PostgreSqlTarget target)
     {
         _target = target;
-        _source = NpgsqlDataSource.Create(target.Builder(_name));
+        _source = new Lazy<NpgsqlDataSource>(() => NpgsqlDataSource.Create(target.Builder(_name)), LazyThreadSafetyMode.PublicationOnly);
     }
 
     public override string Location => _target.Location;
@@ -70,7 +70,13 @@ internal sealed class PostgreSqlDialect : StoreDialect
         return $"{Location}, schema {target}";
     }
 
-    public override void Close() => _source.Dispose();
+    public override void Close()
+    {
+        if (_source.IsValueCreated)
+        {
+            _source.Value.Dispose();
+        }
+    }
 
     /// <summary>
     /// After a loss of the link the server may still run the last commit of the former connection. It is ended, so that what it did is
@@ -87,7 +93,7 @@ internal sealed class PostgreSqlDialect : StoreDialect
         end.ExecuteNonQuery();
     }
 
-    private NpgsqlConnection Open() => _source.OpenConnection();
+    private NpgsqlConnection Open() => _source.Value.OpenConnection();
 
     private void Lock(NpgsqlConnection connection)
     {

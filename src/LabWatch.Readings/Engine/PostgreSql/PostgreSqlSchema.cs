@@ -6,9 +6,10 @@ namespace LabWatch.Readings.Engine.PostgreSql;
 /// <summary>The tables: the same as in the file, in types of PostgreSQL. Blobs are compressed already and are stored as they are.</summary>
 internal static class PostgreSqlSchema
 {
-    private const string Tables =
+    private const string VersionOne =
         """
         CREATE TABLE state(name text PRIMARY KEY, value bigint NOT NULL);
+        INSERT INTO state(name, value) VALUES ('journal_floor', 0), ('schema_version', 0);
         CREATE TABLE source(id bigint PRIMARY KEY, site text NOT NULL, source text NOT NULL, UNIQUE(site, source));
         CREATE TABLE channel(source_id bigint NOT NULL, number integer NOT NULL, channel text NOT NULL,
           newest_time bigint, newest_bits bigint, newest_quality integer,
@@ -26,6 +27,19 @@ internal static class PostgreSqlSchema
         ALTER TABLE summary ALTER COLUMN data SET STORAGE EXTERNAL;
         """;
 
+    /// <summary>Rows of whole hours for charts of years, and what retention removed from sealed parts.</summary>
+    private const string VersionTwo =
+        """
+        CREATE TABLE hourly(source_id bigint NOT NULL, channel integer NOT NULL, day bigint NOT NULL, data bytea NOT NULL,
+          PRIMARY KEY(source_id, channel, day));
+        CREATE TABLE thinned(block_id bigint PRIMARY KEY, removed_at bigint NOT NULL, digest bytea NOT NULL);
+        INSERT INTO state(name, value) VALUES ('hourly_through', 0);
+        ALTER TABLE hourly ALTER COLUMN data SET STORAGE EXTERNAL;
+        """;
+
+    /// <summary>What leads from each version to the next; older tables are brought up in one transaction.</summary>
+    private static readonly string[] Steps = [VersionOne, VersionTwo];
+
     /// <summary>Makes or checks the tables; call with the lock held.</summary>
     public static void Migrate(NpgsqlConnection connection, string schema)
     {
@@ -35,13 +49,16 @@ internal static class PostgreSqlSchema
             throw new StoreUnavailableException($"The readings are in version {found} of the format; this program knows {StoreDialect.SchemaVersion}. Run the newer program.");
         }
 
-        if (found == 0)
+        if (found < StoreDialect.SchemaVersion)
         {
             using NpgsqlTransaction transaction = connection.BeginTransaction();
             Execute(connection, $"CREATE SCHEMA IF NOT EXISTS {schema}");
-            Execute(connection, Tables);
-            Execute(connection, string.Create(
-                CultureInfo.InvariantCulture, $"INSERT INTO state(name, value) VALUES ('journal_floor', 0), ('schema_version', {StoreDialect.SchemaVersion})"));
+            foreach (string step in Steps.AsSpan((int)found))
+            {
+                Execute(connection, step);
+            }
+
+            Execute(connection, string.Create(CultureInfo.InvariantCulture, $"UPDATE state SET value = {StoreDialect.SchemaVersion} WHERE name = 'schema_version'"));
             transaction.Commit();
         }
     }

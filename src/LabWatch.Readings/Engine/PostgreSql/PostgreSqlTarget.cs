@@ -6,16 +6,17 @@ using Npgsql;
 namespace LabWatch.Readings.Engine.PostgreSql;
 
 /// <summary>Which schema of which database, and how it is reached.</summary>
-internal sealed record PostgreSqlTarget
+internal sealed class PostgreSqlTarget
 {
     private readonly string _connectionString;
+    private readonly Func<string?> _readPassword;
 
-    /// <summary>Takes over the options with the password that belongs to them.</summary>
-    public PostgreSqlTarget(PostgreSqlReadingsOptions options, string? password)
+    /// <summary>Takes over the options; the password is read when it is needed.</summary>
+    public PostgreSqlTarget(PostgreSqlReadingsOptions options, Func<string?> readPassword)
     {
         NpgsqlConnectionStringBuilder builder = new(options.ConnectionString);
-        builder.Password = password ?? builder.Password;
         _connectionString = builder.ConnectionString;
+        _readPassword = readPassword;
         Schema = options.Schema;
         Location = $"PostgreSQL {builder.Host}:{builder.Port}/{builder.Database}, schema {options.Schema}";
     }
@@ -34,7 +35,10 @@ internal sealed record PostgreSqlTarget
     /// <summary>Name of the commit mark in the data directory: another database has another mark.</summary>
     public string MarkName => $"readings-postgresql-{unchecked((ulong)Number(Location)):x16}.mark";
 
-    /// <summary>Connection string of one kind of connection: not pooled, because the lock lives as long as its connection.</summary>
+    /// <summary>
+    /// Connection string of one kind of connection: not pooled, because the lock lives as long as its connection. Throws
+    /// <see cref="StoreUnavailableException"/> where the password is not found.
+    /// </summary>
     public string Builder(string applicationName)
     {
         NpgsqlConnectionStringBuilder builder = new(_connectionString)
@@ -48,6 +52,7 @@ internal sealed record PostgreSqlTarget
             AutoPrepareMinUsages = 2,
             CancellationTimeout = 1000,
         };
+        builder.Password = _readPassword() ?? builder.Password;
         builder.Timeout = builder.ContainsKey("Timeout") ? builder.Timeout : 5;
         builder.CommandTimeout = builder.ContainsKey("Command Timeout") ? builder.CommandTimeout : 10;
         return builder.ConnectionString;
