@@ -13,6 +13,8 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     CheckConfigCommand.Create(),
     ImportCommand.Create(),
     VerifyCommand.Create(),
+    BackupCommand.Create(),
+    RestoreCommand.Create(),
     RecomputeCommand.Create(),
     AccountCommand.Create(),
     CalcCommand.Create(),

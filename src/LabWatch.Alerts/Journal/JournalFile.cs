@@ -33,7 +33,7 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
     {
         Directory.CreateDirectory(folder);
         string path = Path.Combine(folder, FileName);
-        FileStream stream = new(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None, bufferSize: 0);
+        FileStream stream = new(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.Read, bufferSize: 0);
         try
         {
             byte[] bytes = new byte[stream.Length];
@@ -95,7 +95,7 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
         }
         finally
         {
-            _stream = new FileStream(_path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None, bufferSize: 0);
+            _stream = new FileStream(_path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.Read, bufferSize: 0);
         }
     }
 

@@ -48,6 +48,11 @@ internal sealed class DataDirectory : IDisposable
         try
         {
             Directory.CreateDirectory(full);
+            if (File.Exists(System.IO.Path.Combine(full, Backup.DataFiles.RestoreMarker)))
+            {
+                return (null, new Finding("restore-incomplete", "--data", "A restore into this directory did not come to its end.", full, "Delete the directory and restore the backup again."));
+            }
+
             MakePrivate(System.IO.Path.Combine(full, "keys"));
             FileStream held = new(lockFile, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None);
             return (new DataDirectory(full, held), null);

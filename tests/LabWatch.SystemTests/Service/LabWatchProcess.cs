@@ -68,6 +68,9 @@ internal sealed class LabWatchProcess : IAsyncDisposable
         return service;
     }
 
+    /// <summary>Starts a command; the caller waits for it or kills it. Nobody reads what it writes, so it must not write much.</summary>
+    public static Process Begin(IEnumerable<string> arguments) => Launch(arguments, environment: null);
+
     /// <summary>Runs a command to its end: exit code and everything it wrote.</summary>
     public static async Task<(int ExitCode, string Output)> RunAsync(
         IEnumerable<string> arguments, CancellationToken cancellationToken, IReadOnlyDictionary<string, string>? environment = null)
