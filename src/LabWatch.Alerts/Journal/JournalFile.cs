@@ -11,12 +11,15 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
     /// <summary>Name of the file in the folder of the service's data.</summary>
     public const string FileName = "alerts.journal";
 
+    // The journal itself can be read by others, for a backup; this file keeps a second writer away.
+    private readonly FileStream _lock;
     private readonly string _path;
     private FileStream _stream;
     private long _sound;
 
-    private JournalFile(string path, FileStream stream, long sound)
+    private JournalFile(string path, FileStream held, FileStream stream, long sound)
     {
+        _lock = held;
         _path = path;
         _stream = stream;
         _sound = sound;
@@ -33,14 +36,16 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
     {
         Directory.CreateDirectory(folder);
         string path = Path.Combine(folder, FileName);
-        FileStream stream = new(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.Read, bufferSize: 0);
+        FileStream held = new(path + ".lock", FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.None);
+        FileStream? stream = null;
         try
         {
+            stream = new FileStream(path, FileMode.OpenOrCreate, FileAccess.ReadWrite, FileShare.Read, bufferSize: 0);
             byte[] bytes = new byte[stream.Length];
             stream.ReadExactly(bytes);
             JournalContent content = JournalContent.Parse(bytes);
             string? copy = content.DamagedLines > 0 ? KeepAside(path, bytes) : null;
-            JournalFile file = new(path, stream, content.SoundLength);
+            JournalFile file = new(path, held, stream, content.SoundLength);
             if (content.SoundLength == 0)
             {
                 file.Write(JournalLine.Header);
@@ -51,7 +56,8 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
         }
         catch
         {
-            stream.Dispose();
+            stream?.Dispose();
+            held.Dispose();
             throw;
         }
     }
@@ -100,7 +106,11 @@ internal sealed class JournalFile : IAlertJournal, IDisposable
     }
 
     /// <inheritdoc/>
-    public void Dispose() => _stream.Dispose();
+    public void Dispose()
+    {
+        _stream.Dispose();
+        _lock.Dispose();
+    }
 
     // A write that failed half-way must not leave half a line before the next one.
     private void Write(ReadOnlySpan<byte> bytes)
