@@ -31,5 +31,7 @@ internal sealed class IntakeState(
 
     public IReadOnlyDictionary<SourceKey, Instant> LastMessages => intake.LastMessages;
 
+    public IReadOnlyDictionary<SourceKey, DeviceClock> Clocks => intake.Clocks;
+
     public IntakeTotals Totals => counters.Totals();
 }

@@ -61,7 +61,7 @@ public static class ServiceCollectionExtensions
             provider.GetRequiredService<ILabSnapshotSource>(), options.Root, options.Payload, options.Times, provider.GetRequiredService<MappingTable>()));
         services.AddSingleton(provider => new StoreLane(
             provider.GetRequiredService<IReadingStore>(), provider.GetRequiredService<IQuarantine>(), options.Root, provider.GetRequiredService<IntakeCounters>()));
-        services.AddSingleton<MessageIntake>();
+        services.AddSingleton(provider => ActivatorUtilities.CreateInstance<MessageIntake>(provider, options.Times));
         services.AddSingleton<SpoolDrain>();
         services.AddSingleton<Committer>();
         AddBrokers(services, options);

@@ -33,6 +33,9 @@ public interface IIntakeState
     /// <summary>Arrival of the newest good message of each source that has sent one since the start.</summary>
     IReadOnlyDictionary<SourceKey, Instant> LastMessages { get; }
 
+    /// <summary>What is known about the clock of the device of each source that states times.</summary>
+    IReadOnlyDictionary<SourceKey, DeviceClock> Clocks { get; }
+
     /// <summary>Counts since the start.</summary>
     IntakeTotals Totals { get; }
 }

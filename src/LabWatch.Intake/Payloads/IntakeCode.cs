@@ -90,6 +90,12 @@ public static class IntakeCode
     /// <summary>The device time lies before the earliest time permitted: a clock that was never set.</summary>
     public const string TimeTooEarly = "time-too-early";
 
+    /// <summary>The device time lies longer ago than permitted: a clock that was set back.</summary>
+    public const string TimeTooOld = "time-too-old";
+
+    /// <summary>The device's clock has leapt against the clock here.</summary>
+    public const string ClockLeap = "clock-leap";
+
     /// <summary>A retained message without a device time: nobody knows when it was measured.</summary>
     public const string RetainedWithoutTime = "retained-without-time";
 

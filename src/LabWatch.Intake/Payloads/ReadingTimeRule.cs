@@ -20,6 +20,12 @@ public sealed record ReadingTimeRule
     /// <summary>How old a reading may be on arrival unremarked, 1 s to 1 day. Default 60 s.</summary>
     public TimeSpan LateAfter { get; init; } = TimeSpan.FromSeconds(60);
 
+    /// <summary>How old a reading may be on arrival at all, at least an hour; null for any age. Default 400 days.</summary>
+    public TimeSpan? LateLimit { get; init; } = TimeSpan.FromDays(400);
+
+    /// <summary>By how much a device's clock may leap against the clock here before its readings are refused, 10 s to 1 day; null for never. Default 60 s.</summary>
+    public TimeSpan? LeapLimit { get; init; } = TimeSpan.FromSeconds(60);
+
     /// <summary>Earliest device time that is believed. Default 2000-01-01T00:00:00Z.</summary>
     public Instant Earliest { get; init; } = Instant.FromUnixSeconds(946_684_800);
 
@@ -30,6 +36,8 @@ public sealed record ReadingTimeRule
         .. OptionCheck.Range($"{where}.{nameof(PermittedSkew)}", PermittedSkew, TimeSpan.Zero, TimeSpan.FromMinutes(10)),
         .. OptionCheck.Range($"{where}.{nameof(FutureLimit)}", FutureLimit, PermittedSkew, TimeSpan.FromDays(1)),
         .. OptionCheck.Range($"{where}.{nameof(LateAfter)}", LateAfter, TimeSpan.FromSeconds(1), TimeSpan.FromDays(1)),
+        .. LateLimit is { } oldest ? OptionCheck.Range($"{where}.{nameof(LateLimit)}", oldest, TimeSpan.FromHours(1), TimeSpan.FromDays(100_000)) : [],
+        .. LeapLimit is { } leap ? OptionCheck.Range($"{where}.{nameof(LeapLimit)}", leap, TimeSpan.FromSeconds(10), TimeSpan.FromDays(1)) : [],
     ];
 
     /// <summary>The flags of a device time; null with the code of the reason where it is refused.</summary>
@@ -38,6 +46,7 @@ public sealed record ReadingTimeRule
         long ahead = device.Microseconds - arrival.Microseconds;
         refusal = device < Earliest ? IntakeCode.TimeTooEarly
             : ahead > Microseconds(FutureLimit) ? IntakeCode.TimeInTheFuture
+            : LateLimit is { } oldest && -ahead > Microseconds(oldest) ? IntakeCode.TimeTooOld
             : null;
         return refusal is not null ? null
             : ahead > Microseconds(PermittedSkew) ? ReadingQuality.FromTheFuture

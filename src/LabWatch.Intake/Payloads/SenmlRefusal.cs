@@ -1,3 +1,4 @@
+using LabWatch.Lab.Findings;
 using LabWatch.Lab.Time;
 
 namespace LabWatch.Intake.Payloads;
@@ -17,6 +18,14 @@ internal static class SenmlRefusal
             ? time.ToString()
             : string.Create(System.Globalization.CultureInfo.InvariantCulture, $"{time.Microseconds} us");
 
+    /// <summary>A message whose device's clock has leapt.</summary>
+    public static Finding Leap(Instant device, Instant arrival) => new(
+        IntakeCode.ClockLeap,
+        "t",
+        string.Create(System.Globalization.CultureInfo.InvariantCulture, $"The device's clock has leapt: it now reads {(device - arrival).TotalSeconds:F1} s against the clock here."),
+        Show(device),
+        "Set the device's clock. What it sent is kept here and can be sent again with the right time.");
+
     /// <summary>Why a unit was refused.</summary>
     public static string Unit(string code, ChannelEntry channel) =>
         code == IntakeCode.UnknownUnit ? $"The unit is not known; the channel {channel.Id} is in {channel.Unit}." : $"The channel {channel.Id} is in {channel.Unit}, which this unit cannot become.";
@@ -33,6 +42,7 @@ internal static class SenmlRefusal
         IntakeCode.SumWithoutValue => ("The record has only a sum; sums are not stored.", "Send v."),
         IntakeCode.TimeOutOfRange => ("The time is too large to be one.", "Send seconds since 1970 UTC."),
         IntakeCode.TimeInTheFuture => ("The device time lies too far in the future.", "Set the device's clock."),
+        IntakeCode.TimeTooOld => ("The device time lies longer ago than is taken by MQTT.", "Set the device's clock; bring old readings in with labwatch import readings."),
         IntakeCode.TimeTooEarly => ("The device time lies before any believable one.", "Set the device's clock."),
         IntakeCode.RetainedWithoutTime => ("A retained message needs a device time: nobody knows when it was measured.", "Publish readings without the retain flag, or with a time."),
         _ => ("The field has a value of the wrong kind.", "See RFC 8428 table 1 for the kind of each field."),

@@ -20,6 +20,7 @@ internal sealed class MessageIntake(
     IEnumerable<IReadingTap> taps,
     IntakeQueue queue,
     IntakeCounters counters,
+    ReadingTimeRule times,
     TimeProvider clock,
     ILogger<MessageIntake> logger)
 {
@@ -30,8 +31,12 @@ internal sealed class MessageIntake(
     private readonly IReadingTap[] _taps = [.. taps];
     private readonly Lock[] _tapLocks = [.. Enumerable.Range(0, TapLocks).Select(_ => new Lock())];
     private readonly ConcurrentDictionary<SourceKey, Instant> _lastMessages = new();
+    private readonly ConcurrentDictionary<SourceKey, ClockWatch> _clocks = new();
 
     public IReadOnlyDictionary<SourceKey, Instant> LastMessages => _lastMessages;
+
+    /// <summary>What is known about the clocks of devices.</summary>
+    public IReadOnlyDictionary<SourceKey, DeviceClock> Clocks => _clocks.ToDictionary(clock => clock.Key, clock => clock.Value.Describe());
 
     /// <summary>Takes a message in; false where the queue is full or closed, after the taps have seen it.</summary>
     public bool TryAccept(string topic, in ReadOnlySequence<byte> payload, bool retained, IDelivery delivery)
@@ -51,6 +56,11 @@ internal sealed class MessageIntake(
     {
         counters.Received();
         DecodedMessage decoded = Decode(topic, payload, retained, arrival);
+        if (decoded.Pack is { } whole && !retained && NewestDeviceTime(whole) is { } newest && !_clocks.GetOrAdd(whole.Source, _ => new ClockWatch(times)).Admit(newest, arrival))
+        {
+            decoded = new DecodedMessage(null, [SenmlRefusal.Leap(newest, arrival), .. decoded.Findings]);
+        }
+
         if (decoded.Pack is { } pack)
         {
             counters.Decoded(pack.Readings.Count);
@@ -62,6 +72,22 @@ internal sealed class MessageIntake(
         }
 
         return decoded;
+    }
+
+    /// <summary>The newest time that the device itself stated; null where it stated none.</summary>
+    private static Instant? NewestDeviceTime(ReadingPack pack)
+    {
+        Instant? newest = null;
+        for (int i = 0; i < pack.Readings.Count; i++)
+        {
+            Reading reading = pack.Readings[i];
+            if ((reading.Quality & ReadingQuality.StampedOnArrival) == 0 && !(newest >= reading.Time))
+            {
+                newest = reading.Time;
+            }
+        }
+
+        return newest;
     }
 
     private DecodedMessage Decode(string topic, in ReadOnlySequence<byte> payload, bool retained, Instant arrival)

@@ -3,6 +3,7 @@ using LabWatch.Service.Api.Accounts;
 using LabWatch.Service.Api.Alerts;
 using LabWatch.Service.Api.Assessments;
 using LabWatch.Service.Api.Audit;
+using LabWatch.Service.Api.Clocks;
 using LabWatch.Service.Api.Configured;
 using LabWatch.Service.Api.Demo;
 using LabWatch.Service.Api.Devices;
@@ -40,6 +41,7 @@ internal static class ApiMapping
         AccountEndpoints.Map(api);
         TokenEndpoints.Map(api);
         DeviceEndpoints.Map(api);
+        ClockEndpoints.Map(api);
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
         ForecastEndpoints.Map(api);

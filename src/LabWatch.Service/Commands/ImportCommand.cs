@@ -21,7 +21,7 @@ internal static class ImportCommand
             File, CommonOptions.Data, CommonOptions.Config, LabFileOptions.Accept, LabFileOptions.Reason, DryRun,
         };
         lab.SetAction(RunAsync);
-        return new Command("import", "Bring something on record.") { lab };
+        return new Command("import", "Bring something on record.") { lab, ImportReadingsCommand.Create() };
     }
 
     private static async Task<int> RunAsync(ParseResult parsed, CancellationToken cancellationToken)

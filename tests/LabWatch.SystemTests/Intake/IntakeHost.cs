@@ -78,6 +78,14 @@ internal sealed class IntakeHost : IAsyncDisposable, ILabSnapshotSource, IReadin
         return window.Find("power")?.Values.ToArray() ?? [];
     }
 
+    /// <summary>Device times of all readings stored, microseconds.</summary>
+    public async Task<long[]> StoredTimesAsync(CancellationToken cancellationToken)
+    {
+        Instant now = Instant.Now(TimeProvider.System);
+        ReadingWindow window = await Store.ReadAsync(Fir, ["power"], new TimeWindow(now - TimeSpan.FromDays(1), now + TimeSpan.FromDays(1)), cancellationToken);
+        return window.Find("power")?.TimeMicroseconds.ToArray() ?? [];
+    }
+
     public Task UntilStoredAsync(int count, CancellationToken cancellationToken)
     {
         int seen = -1;

@@ -56,14 +56,16 @@ internal sealed class MosquittoBroker : IDisposable
     }
 
     /// <summary>Stops it as an administrator would: sessions and retained messages are saved.</summary>
-    public async Task StopAsync(CancellationToken cancellationToken)
-    {
-        using Process kill = Process.Start("kill", ["-TERM", _process!.Id.ToString(CultureInfo.InvariantCulture)]);
-        await kill.WaitForExitAsync(cancellationToken);
-        await _process.WaitForExitAsync(cancellationToken);
-        _process.Dispose();
-        _process = null;
-    }
+    public Task StopAsync(CancellationToken cancellationToken) => SignalAndWaitAsync("-TERM", cancellationToken);
+
+    /// <summary>Kills it: nothing is saved.</summary>
+    public Task KillAsync(CancellationToken cancellationToken) => SignalAndWaitAsync("-KILL", cancellationToken);
+
+    /// <summary>Stops its processor time, as a machine that hangs does.</summary>
+    public Task PauseAsync(CancellationToken cancellationToken) => SignalAsync("-STOP", cancellationToken);
+
+    /// <summary>Lets it go on.</summary>
+    public Task ResumeAsync(CancellationToken cancellationToken) => SignalAsync("-CONT", cancellationToken);
 
     public void Dispose()
     {
@@ -82,6 +84,20 @@ internal sealed class MosquittoBroker : IDisposable
         using var listener = new TcpListener(IPAddress.Loopback, 0);
         listener.Start();
         return ((IPEndPoint)listener.LocalEndpoint).Port;
+    }
+
+    private async Task SignalAsync(string signal, CancellationToken cancellationToken)
+    {
+        using Process kill = Process.Start("kill", [signal, _process!.Id.ToString(CultureInfo.InvariantCulture)]);
+        await kill.WaitForExitAsync(cancellationToken);
+    }
+
+    private async Task SignalAndWaitAsync(string signal, CancellationToken cancellationToken)
+    {
+        await SignalAsync(signal, cancellationToken);
+        await _process!.WaitForExitAsync(cancellationToken);
+        _process.Dispose();
+        _process = null;
     }
 
     private async Task<bool> ListensAsync()

@@ -13,6 +13,9 @@ internal sealed class SwitchableStore(IReadingStore inner) : IReadingStore
 
     public bool IsOff { get; set; }
 
+    /// <summary>How long each append takes longer.</summary>
+    public TimeSpan Delay { get; set; }
+
     /// <summary>Readings that came again with the same value.</summary>
     public int Duplicates => Volatile.Read(ref _duplicates);
 
@@ -21,6 +24,11 @@ internal sealed class SwitchableStore(IReadingStore inner) : IReadingStore
         if (IsOff)
         {
             throw new StoreUnavailableException("Switched off.");
+        }
+
+        if (Delay > TimeSpan.Zero)
+        {
+            await Task.Delay(Delay, TimeProvider.System, cancellationToken);
         }
 
         AppendResult result = await inner.AppendAsync(packs, cancellationToken);

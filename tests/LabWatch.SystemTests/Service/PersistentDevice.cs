@@ -10,13 +10,14 @@ namespace LabWatch.SystemTests.Service;
 /// A device that publishes one reading a message with QoS 1, several in flight, and sends a message again until it is acknowledged, as a
 /// good device does. It remembers what was acknowledged.
 /// </summary>
-internal sealed class PersistentDevice(int port, string topic, string channel, long firstMicroseconds) : IAsyncDisposable
+internal sealed class PersistentDevice(int port, string topic, string channel, long firstMicroseconds, string unit = "Ohm") : IAsyncDisposable
 {
     private const int InFlight = 16;
     private const long StepMicroseconds = 1_000;
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(50);
 
     private readonly ConcurrentDictionary<long, double> _acknowledged = new();
+    private readonly ConcurrentDictionary<long, long> _acknowledgedAt = new();
     private readonly CancellationTokenSource _stopping = new();
     private readonly SemaphoreSlim _link = new(1, 1);
     private readonly IMqttClient _client = new MqttClientFactory().CreateMqttClient();
@@ -25,6 +26,9 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
 
     /// <summary>Device time in microseconds and value of every reading that the broker acknowledged.</summary>
     public IReadOnlyDictionary<long, double> Acknowledged => _acknowledged;
+
+    /// <summary>Device time in microseconds, and monotonic time of the acknowledgement.</summary>
+    public IReadOnlyDictionary<long, long> AcknowledgedAt => _acknowledgedAt;
 
     /// <summary>Begins to publish.</summary>
     public void Start() => _running = Task.WhenAll(Enumerable.Range(0, InFlight).Select(_ => Task.Run(PublishAsync)));
@@ -58,6 +62,7 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
                 await Task.Delay(Pause, TimeProvider.System, CancellationToken.None);
             }
 
+            _acknowledgedAt[time] = TimeProvider.System.GetTimestamp();
             _acknowledged[time] = value;
         }
     }
@@ -67,7 +72,7 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
         try
         {
             await ConnectAsync();
-            string text = string.Create(CultureInfo.InvariantCulture, $"[{{\"n\":\"{channel}\",\"u\":\"Ohm\",\"t\":{time / 1_000_000}.{time % 1_000_000:D6},\"v\":{value:R}}}]");
+            string text = string.Create(CultureInfo.InvariantCulture, $"[{{\"n\":\"{channel}\",\"u\":\"{unit}\",\"t\":{time / 1_000_000}.{time % 1_000_000:D6},\"v\":{value:R}}}]");
             MqttApplicationMessage message = new MqttApplicationMessageBuilder()
                 .WithTopic(topic).WithPayload(Encoding.UTF8.GetBytes(text)).WithQualityOfServiceLevel(MqttQualityOfServiceLevel.AtLeastOnce).Build();
             MqttClientPublishResult result = await _client.PublishAsync(message);

@@ -45,6 +45,7 @@ public sealed class EndpointAccessTests
         ["get /api/v1/accounts"] = "manage-accounts",
         ["post /api/v1/accounts"] = "manage-accounts",
         ["post /api/v1/accounts/{name}"] = "manage-accounts",
+        ["get /api/v1/clocks"] = "read",
         ["get /api/v1/devices"] = "manage-accounts",
         ["post /api/v1/devices"] = "manage-accounts",
         ["delete /api/v1/devices/{name}"] = "manage-accounts",

@@ -15,7 +15,7 @@ internal static class DecodingBench
     public static Instant Arrival { get; } = Instant.FromUnixSeconds(1_796_112_930);
 
     public static PayloadDecoder Decoder(ILabSnapshotSource? lab = null, PayloadLimits? limits = null, params MappingOptions[] mappings) =>
-        new(lab ?? new IntakeLab(), "lab", limits ?? new PayloadLimits(), new ReadingTimeRule(), new MappingTable(mappings));
+        new(lab ?? new IntakeLab(), "lab", limits ?? new PayloadLimits(), new ReadingTimeRule { LateLimit = null }, new MappingTable(mappings));
 
     public static DecodedMessage Decode(string payload, string topic = IntakeLab.Topic, bool retained = false, ILabSnapshotSource? lab = null) =>
         Decode(Encoding.UTF8.GetBytes(payload), topic, retained, Decoder(lab));

@@ -41,6 +41,7 @@ internal sealed class PipelineRig : IAsyncDisposable
             [.. moreTaps, Tap],
             Queue,
             Counters,
+            new ReadingTimeRule(),
             Clock,
             NullLogger<MessageIntake>.Instance);
         _draining = Task.Run(() => _drain.RunAsync(_stopDrain.Token));

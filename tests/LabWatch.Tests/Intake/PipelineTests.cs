@@ -240,6 +240,7 @@ public class PipelineTests
             [],
             queue,
             counters,
+            new ReadingTimeRule(),
             TimeProvider.System,
             NullLogger<MessageIntake>.Instance);
         foreach (SourceKey key in keys)

@@ -77,7 +77,7 @@ internal static class LinkOptions
 
     // The library checks chain and name unless it is told not to; it is told nothing of the kind. Revocation is not asked for: authorities of
     // a laboratory rarely answer, and one that is silent would stop the intake.
-    private static void Secure(MqttClientTlsOptionsBuilder tls, ExternalBrokerOptions options, NamedSecrets secrets)
+    public static void Secure(MqttClientTlsOptionsBuilder tls, ExternalBrokerOptions options, NamedSecrets secrets)
     {
         tls.UseTls(true)
             .WithSslProtocols(SslProtocols.Tls12 | SslProtocols.Tls13)

@@ -18,6 +18,8 @@ internal sealed class BrokerCheck(IIntakeState intake) : IDependencyCheck
         string note = intake.LinkNote is { } said ? " (" + said + ")" : string.Empty;
         string commits = intake.CommitsStopped ? "; nothing can be made durable now" : string.Empty;
         string spool = string.Create(CultureInfo.InvariantCulture, $"; {intake.SpoolLength} messages in the spool.");
-        return new(new DependencyAnswer(isLinked && !intake.CommitsStopped, link + note + embedded + commits + spool));
+        string leaps = string.Concat(intake.Clocks.Where(clock => clock.Value.State is DeviceClockState.LeaptAhead or DeviceClockState.LeaptBack)
+            .Select(clock => string.Create(CultureInfo.InvariantCulture, $" The clock of the device of {clock.Key} has leapt by {clock.Value.LeapSeconds:F0} s: its readings go to quarantine.")));
+        return new(new DependencyAnswer(isLinked && !intake.CommitsStopped, link + note + embedded + commits + spool + leaps));
     }
 }

@@ -25,5 +25,9 @@ internal sealed class FakeIntake : IIntakeState
 
     public IReadOnlyDictionary<SourceKey, Instant> LastMessages { get; } = new Dictionary<SourceKey, Instant>();
 
+    public Dictionary<SourceKey, DeviceClock> DeviceClocks { get; } = [];
+
+    public IReadOnlyDictionary<SourceKey, DeviceClock> Clocks => DeviceClocks;
+
     public IntakeTotals Totals => throw new NotSupportedException();
 }
