@@ -9,6 +9,13 @@ namespace LabWatch.Intake.Units;
 /// </summary>
 internal static class UnitTable
 {
+    /// <summary>Units that are known, and measured by no channel. Above the table that is made of them.</summary>
+    private static readonly string[] Elsewhere =
+    [
+        "m", "kg", "g", "s", "mol", "cd", "rad", "sr", "N", "C", "F", "S", "Wb", "T", "H", "lm", "lx", "Bq", "Gy", "Sv", "kat", "J", "m2", "m3", "m/s", "m/s2", "W/m2", "cd/m2", "bit", "bit/s",
+        "lat", "lon", "pH", "dB", "dBW", "Bspl", "count", "%EL", "EL", "beat/min", "beats", "S/m", "B", "VA", "VAs", "var", "vars", "J/m", "kg/m3", "deg",
+    ];
+
     private static readonly FrozenDictionary<string, Unit> Units = All().ToFrozenDictionary(unit => unit.Name, StringComparer.Ordinal);
 
     /// <summary>Whether a name is known.</summary>
@@ -68,11 +75,7 @@ internal static class UnitTable
         new("Hz", "frequency", 60, 1, 0),
 
         // Known, and measured by no channel.
-        .. new[]
-        {
-            "m", "kg", "g", "s", "mol", "cd", "rad", "sr", "N", "C", "F", "S", "Wb", "T", "H", "lm", "lx", "Bq", "Gy", "Sv", "kat", "J", "m2", "m3", "m/s", "m/s2", "W/m2", "cd/m2", "bit", "bit/s",
-            "lat", "lon", "pH", "dB", "dBW", "Bspl", "count", "%EL", "EL", "beat/min", "beats", "S/m", "B", "VA", "VAs", "var", "vars", "J/m", "kg/m3", "deg",
-        }.Select(name => new Unit(name, name, 1, 1, 0)),
+        .. Elsewhere.Select(name => new Unit(name, name, 1, 1, 0)),
     ];
 
     private static IEnumerable<Unit> Scaled(string quantity, string name, params string[] prefixes) =>
