@@ -19,7 +19,7 @@ internal static class PostgreSqlReadingStore
 
     private static PostgreSqlTarget Target(ReadingsOptions options)
     {
-        ReadingsSecrets secrets = new(options.SecretsDirectory, Environment.GetEnvironmentVariable);
+        ReadingsSecrets secrets = new(options.SecretsDirectory);
         return new PostgreSqlTarget(options.PostgreSql, () => secrets.Read(options.PostgreSql.PasswordSecret));
     }
 }

@@ -12,6 +12,7 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     ServeCommand.Create(),
     CheckConfigCommand.Create(),
     ImportCommand.Create(),
+    TransferCommand.Create(),
     VerifyCommand.Create(),
     BackupCommand.Create(),
     RestoreCommand.Create(),

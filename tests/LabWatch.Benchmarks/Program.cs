@@ -13,6 +13,8 @@ switch (args.FirstOrDefault())
         return CavityBenchmark.Run(rest);
     case "criteria":
         return await CriteriaBenchmark.RunAsync(rest);
+    case "engine":
+        return await EngineBenchmark.RunAsync(rest);
     case "evaluation":
         return EvaluationBenchmark.Run(rest);
     case "hazard":
@@ -32,6 +34,6 @@ switch (args.FirstOrDefault())
     case "trail":
         return await TrailBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, evaluation, hazard, intake, profile, simulator, statistics, store, trail.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, engine, evaluation, hazard, intake, profile, simulator, statistics, store, trail.");
         return 1;
 }

@@ -37,7 +37,7 @@ internal sealed class InfluxReadingStore : IReadingStore, IReadingSealer, IReadi
         _options = options;
         _clock = clock;
         _log = log;
-        ReadingsSecrets secrets = new(options.SecretsDirectory, Environment.GetEnvironmentVariable);
+        ReadingsSecrets secrets = new(options.SecretsDirectory);
         _connection = new InfluxConnection(options.InfluxDb, () => secrets.Read(options.InfluxDb.TokenSecret));
         _queries = new InfluxQueries(_connection);
         _head = new InfluxHead(_queries, options.UnsealedReadingsLimit, clock);

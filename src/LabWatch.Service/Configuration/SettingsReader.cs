@@ -60,7 +60,7 @@ internal static class SettingsReader
 
         ServiceSettings settings = new(
             intake,
-            Bound(configuration, "Readings", new ReadingsOptions { DataDirectory = dataDirectory }, findings),
+            Bound(configuration, "Readings", new ReadingsOptions { DataDirectory = dataDirectory, SecretsDirectory = secrets }, findings),
             Bound(configuration, "Records", RecordsOptions.InDirectory(dataDirectory), findings),
             Bound(configuration, "Assessments", new AssessmentsOptions { TraceDirectory = Path.Combine(dataDirectory, "cavities") }, findings),
             Bound(configuration, "Alerts", new AlertsOptions { DataDirectory = dataDirectory, SecretsDirectory = secrets }, findings),
