@@ -31,6 +31,24 @@ public sealed record AssessmentsOptions
     /// <summary>Windows of the criterion <c>effective-emissivity</c>.</summary>
     public CriterionSchedule EffectiveEmissivity { get; init; } = EffectiveEmissivityCriterion.DefaultSchedule;
 
+    /// <summary>Windows of the criterion <c>settled</c>.</summary>
+    public CriterionSchedule Settled { get; init; } = SettledCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>purge</c>.</summary>
+    public CriterionSchedule Purge { get; init; } = PurgeCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>surroundings</c>.</summary>
+    public CriterionSchedule Surroundings { get; init; } = SurroundingsCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>traceability</c>.</summary>
+    public CriterionSchedule Traceability { get; init; } = TraceabilityCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>heater-balance</c>.</summary>
+    public CriterionSchedule HeaterBalance { get; init; } = HeaterBalanceCriterion.DefaultSchedule;
+
+    /// <summary>Windows of the criterion <c>reference-agreement</c>.</summary>
+    public CriterionSchedule ReferenceAgreement { get; init; } = ReferenceAgreementCriterion.DefaultSchedule;
+
     /// <summary>Folder in which traces of cavities are kept, so that a start need not trace again; null for memory alone. It can be deleted at any time.</summary>
     public string? TraceDirectory { get; init; }
 
@@ -48,6 +66,12 @@ public sealed record AssessmentsOptions
         Check(findings, nameof(DataHealth), DataHealth, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(AxialUniformity), AxialUniformity, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(EffectiveEmissivity), EffectiveEmissivity, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(Settled), Settled, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(Purge), Purge, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(Surroundings), Surroundings, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(Traceability), Traceability, leastLeadIn: TimeSpan.FromMinutes(1));
+        Check(findings, nameof(HeaterBalance), HeaterBalance, leastLeadIn: TimeSpan.FromHours(6));
+        Check(findings, nameof(ReferenceAgreement), ReferenceAgreement, leastLeadIn: TimeSpan.FromHours(6));
         if (Concurrency is < 1 or > 64)
         {
             findings.Add(new Finding(

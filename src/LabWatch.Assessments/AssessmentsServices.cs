@@ -41,6 +41,12 @@ public static class AssessmentsServices
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, EffectiveEmissivityCriterion>(
             provider => new EffectiveEmissivityCriterion(options.EffectiveEmissivity, provider.GetRequiredService<ICavityModels>())));
         services.TryAddSingleton<AssessmentHistory>();
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, SettledCriterion>(_ => new SettledCriterion(options.Settled)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, PurgeCriterion>(_ => new PurgeCriterion(options.Purge)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, SurroundingsCriterion>(_ => new SurroundingsCriterion(options.Surroundings)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, TraceabilityCriterion>(_ => new TraceabilityCriterion(options.Traceability)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, HeaterBalanceCriterion>(_ => new HeaterBalanceCriterion(options.HeaterBalance)));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, ReferenceAgreementCriterion>(_ => new ReferenceAgreementCriterion(options.ReferenceAgreement)));
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();

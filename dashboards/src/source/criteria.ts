@@ -33,6 +33,12 @@ const meanings: Record<string, string> = {
   stability: "Half of the range of 10 s means of the reference thermometer over 30 minutes.",
   "axial-uniformity": "Largest difference between the means of two calibrated wells over 30 minutes.",
   "effective-emissivity": "How far the effective emissivity is from its baseline, whichever way, by the model with the live profile or by a comparator.",
+  settled: "Slope of the minute means of the reference thermometer over 20 minutes.",
+  "reference-agreement": "How far the difference of a redundant thermometer from the reference has moved from its baseline.",
+  "heater-balance": "How far the heater power is from what its baseline predicts for this temperature, room and purge.",
+  purge: "Relative humidity of the gas at the aperture at the temperature of the coldest wall, by 5 min means.",
+  surroundings: "Largest distance of a condition of the room from the middle of its permitted range, in parts of half its width.",
+  traceability: "Age of the oldest calibration or check that results rest on, as a part of its interval.",
   "data-health": "Share of the promised readings that are missing or bad, of the worst channel, in an hour.",
 };
 

@@ -141,6 +141,37 @@ public sealed record TemperatureSeries(
         return this with { TimeMicroseconds = TimeMicroseconds.Slice(from, length), Celsius = Celsius.Slice(from, length) };
     }
 
+    /// <summary>Means over minutes since 1970, each at the mean of its times.</summary>
+    public TemperatureSeries MinuteMeans()
+    {
+        const long Minute = 60 * Instant.MicrosecondsPerSecond;
+        ReadOnlySpan<long> times = TimeMicroseconds.Span;
+        List<long> at = [];
+        List<double> means = [];
+        for (int i = 0, first = 0; i < times.Length; i++)
+        {
+            if (i + 1 < times.Length && times[i + 1] / Minute == times[i] / Minute)
+            {
+                continue;
+            }
+
+            double sum = 0;
+            long late = 0;
+            for (int j = first; j <= i; j++)
+            {
+                sum += Celsius.Span[j];
+                late += times[j] - times[first];
+            }
+
+            int count = i - first + 1;
+            at.Add(times[first] + (late / count));
+            means.Add(sum / count);
+            first = i + 1;
+        }
+
+        return this with { TimeMicroseconds = at.ToArray(), Celsius = means.ToArray() };
+    }
+
     private int FirstNotBefore(Instant instant)
     {
         int index = TimeMicroseconds.Span.BinarySearch(instant.Microseconds);

@@ -18,8 +18,11 @@ internal static class InstrumentSection
         List<TriplePointCheck> checks = [];
         foreach (JsonCursor item in top.Items("instruments", required: false))
         {
-            item.OnlyMembers("id", "serialNumber", "description", "installations", "certificates", "triplePointChecks");
-            Instrument instrument = new(item.Id("id"), item.Text("serialNumber"), item.Text("description"));
+            item.OnlyMembers("id", "serialNumber", "description", "installations", "certificates", "triplePointChecks", "triplePointIntervalDays");
+            Instrument instrument = new(item.Id("id"), item.Text("serialNumber"), item.Text("description"))
+            {
+                TriplePointInterval = item.OptionalNumber("triplePointIntervalDays", 1, 4000) is { } days && double.IsFinite(days) ? TimeSpan.FromDays(days) : null,
+            };
             instruments.Add(instrument);
             installations.AddRange(item.Items("installations", required: false).Select(stay => new Placed<Installation>(Stay(stay, instrument.Id, site), stay.Pointer)));
             certificates.AddRange(item.Items("certificates", required: false).Select(certificate => new Placed<Certificate>(Certificate(certificate, instrument.Id, site), certificate.Pointer)));

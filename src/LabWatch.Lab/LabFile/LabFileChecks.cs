@@ -62,6 +62,7 @@ internal static class LabFileChecks
         }
 
         CheckRadiance(findings, source, pointer, bands, bandCure);
+        CheckBalances(findings, source, pointer);
         int references = source.Channels.Count(channel => channel.IsReference);
         if (references > 1 || (references == 0 && source.Route == TraceabilityRoute.Contact))
         {
@@ -83,6 +84,20 @@ internal static class LabFileChecks
             findings.Add(new Finding(
                 "spot-too-wide", pointer + "/view/spotRadiusMillimetre", "The spot is wider than the aperture.", FormattableString.Invariant($"{view.SpotRadiusMillimetre}"),
                 "Give the radius of what the detector sees in the aperture plane, at most that of the aperture."));
+        }
+    }
+
+    private static void CheckBalances(List<Finding> findings, ReferenceSource source, string pointer)
+    {
+        Unique(findings, pointer + "/balances", source.Balances.Select(balance => balance.Channel));
+        for (int i = 0; i < source.Balances.Count; i++)
+        {
+            if (source.FindChannel(source.Balances[i].Channel) is not { IsReference: false, Quantity: ChannelQuantity.HeaterPower or ChannelQuantity.WellThermometer })
+            {
+                findings.Add(new Finding(
+                    "balance-channel", $"{pointer}/balances/{i}/channel", "A balance is of the heater power or of a well thermometer that is not the reference.", Finding.Quote(source.Balances[i].Channel),
+                    "Use the id of such a channel of this source."));
+            }
         }
     }
 

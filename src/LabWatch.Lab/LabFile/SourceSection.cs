@@ -16,7 +16,7 @@ internal static class SourceSection
     public static ReferenceSource Read(JsonCursor item, string site)
     {
         item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
-            "view", "baselines", "surroundings", "wellToWallDrop", "effectiveFrom", "hazards");
+            "view", "baselines", "surroundings", "wellToWallDrop", "conditions", "purge", "balances", "effectiveFrom", "hazards");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(
@@ -36,6 +36,9 @@ internal static class SourceSection
             SurroundingsOffsetKelvin = RadianceSection.Surroundings(item),
             WellToWallDrop = RadianceSection.Drop(item),
             Hazards = HazardSection.Read(item),
+            Conditions = WatchSection.Conditions(item),
+            Purge = WatchSection.Purge(item),
+            Balances = [.. item.Items("balances", required: false).Select(WatchSection.Balance)],
             EffectiveFrom = item.OptionalTime("effectiveFrom") ?? Instant.MinValue,
         };
     }

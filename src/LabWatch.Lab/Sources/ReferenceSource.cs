@@ -52,6 +52,15 @@ public sealed record ReferenceSource(
     /// <summary>What the laboratory has laid down for the hazard watch.</summary>
     public HazardLimits Hazards { get; init; } = HazardLimits.None;
 
+    /// <summary>Conditions of the room that its budget holds for; null where none are stated.</summary>
+    public PermittedConditions? Conditions { get; init; }
+
+    /// <summary>What its purge has to do; null where nothing is stated.</summary>
+    public PurgeRequirement? Purge { get; init; }
+
+    /// <summary>Balances learnt while it was in order, one a channel at most; empty where none is on record.</summary>
+    public IReadOnlyList<LearntBalance> Balances { get; init; } = [];
+
     /// <summary>Taken where nothing is stated about the surroundings (common practice, no source).</summary>
     public static Estimate UsualSurroundingsOffsetKelvin { get; } = new(0, 1.5);
 

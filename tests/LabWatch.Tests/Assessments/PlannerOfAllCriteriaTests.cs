@@ -30,6 +30,9 @@ public sealed class PlannerOfAllCriteriaTests
         new DataHealthCriterion(DataHealthCriterion.DefaultSchedule),
         new AxialUniformityCriterion(AxialUniformityCriterion.DefaultSchedule, DemoRun.Models),
         new EffectiveEmissivityCriterion(EffectiveEmissivityCriterion.DefaultSchedule, DemoRun.Models),
+        new SettledCriterion(SettledCriterion.DefaultSchedule),
+        new SurroundingsCriterion(SurroundingsCriterion.DefaultSchedule),
+        new TraceabilityCriterion(TraceabilityCriterion.DefaultSchedule),
     ];
 
     [Fact]
@@ -48,8 +51,8 @@ public sealed class PlannerOfAllCriteriaTests
     }
 
     [Theory]
-    [InlineData("prt-201", "axial-uniformity", "effective-emissivity", "stability")]
-    [InlineData("prt-203", "axial-uniformity", "effective-emissivity")]
+    [InlineData("prt-201", "axial-uniformity", "effective-emissivity", "settled", "stability", "traceability")]
+    [InlineData("prt-203", "axial-uniformity", "effective-emissivity", "traceability")]
     public async Task A_corrected_certificate_supersedes_every_criterion_that_rests_on_its_thermometer(string instrument, params string[] expected)
     {
         await using PlannerHarness lab = await AssessedAsync();

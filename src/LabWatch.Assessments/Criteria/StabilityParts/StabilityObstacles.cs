@@ -28,13 +28,40 @@ internal static class StabilityObstacles
     /// </summary>
     public static double AtTemperatureKelvin(double setPointCelsius) => Math.Max(2, 0.01 * Math.Abs(setPointCelsius - RoomCelsius));
 
-    private static IEnumerable<string> Data(StabilityEvidence evidence, StabilityValue value)
+    /// <summary>What is wrong with readings, certificates or the set point itself, whether it moved or not.</summary>
+    public static IEnumerable<string> Evidence(StabilityEvidence evidence)
+    {
+        double setPoint = evidence.SetPoint.Celsius;
+        double tolerance = AtTemperatureKelvin(setPoint);
+        if (!(evidence.SetPoint.LastReading >= evidence.Window.Start))
+        {
+            yield return "the set point is not known: it has no reading in the window";
+        }
+        else if (setPoint < evidence.Input.Source.MinimumCelsius - tolerance || setPoint > evidence.Input.Source.MaximumCelsius + tolerance)
+        {
+            yield return $"the set point of {Celsius(setPoint)} degC is none that the source is used at";
+        }
+
+        if (evidence.Before.Count == 0 || Coverage(evidence) < LeastLeadInCoverage)
+        {
+            yield return $"there are too few readings in the {Quantities.Duration(evidence.Schedule.LeadIn)} before the window";
+        }
+
+        foreach (string clause in Data(evidence, CoveredMeans(evidence.Within)).Concat(Traceability(evidence)))
+        {
+            yield return clause;
+        }
+    }
+
+    private static IEnumerable<string> Data(StabilityEvidence evidence, StabilityValue value) => Data(evidence, value.Statistics.MeanCount);
+
+    private static IEnumerable<string> Data(StabilityEvidence evidence, int means)
     {
         int expected = ExpectedMeans(evidence, evidence.Schedule.Window);
         int needed = (int)Math.Ceiling(expected * LeastCoverage);
-        if (value.Statistics.MeanCount < needed)
+        if (means < needed)
         {
-            yield return $"only {Quantities.Count(value.Statistics.MeanCount)} of {Quantities.Count(expected)} ten-second means have a reading of "
+            yield return $"only {Quantities.Count(means)} of {Quantities.Count(expected)} ten-second means have a reading of "
                 + $"{evidence.Reference.Id}, and {Quantities.Count(needed)} are needed";
         }
     }
@@ -125,18 +152,20 @@ internal static class StabilityObstacles
     private static double LimitKelvin(AcceptanceLimit? limit) =>
         limit is null ? double.PositiveInfinity : limit.Maximum / StabilityUnit.PerKelvin(limit.Unit);
 
-    private static double Coverage(StabilityEvidence evidence)
+    private static double Coverage(StabilityEvidence evidence) => CoveredMeans(evidence.Before) / (double)ExpectedMeans(evidence, evidence.Schedule.LeadIn);
+
+    private static int CoveredMeans(TemperatureSeries series)
     {
         int covered = 0;
         long last = long.MinValue;
-        foreach (long time in evidence.Before.TimeMicroseconds.Span)
+        foreach (long time in series.TimeMicroseconds.Span)
         {
             long bin = Metrology.Statistics.TimeBins.StartOf(time, Metrology.Statistics.Stability.TenSeconds);
             covered += bin == last ? 0 : 1;
             last = bin;
         }
 
-        return covered / (double)ExpectedMeans(evidence, evidence.Schedule.LeadIn);
+        return covered;
     }
 
     /// <summary>A thermometer that reports less often than every 10 s fills fewer bins.</summary>

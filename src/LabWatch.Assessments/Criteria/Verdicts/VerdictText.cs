@@ -22,7 +22,7 @@ internal static class VerdictText
     {
         double expanded = conformity.ExpandedUncertainty;
         string text = $"{subject} is {Quantities.Value(value, expanded)}{Of(unit)}"
-            + (expanded >= 0 ? $" (U = {Quantities.Significant(expanded)}{Of(unit)}, k = {Quantities.Fixed(conformity.CoverageFactor, 2)})" : string.Empty);
+            + (expanded > 0 ? $" (U = {Quantities.Significant(expanded)}{Of(unit)}, k = {Quantities.Fixed(conformity.CoverageFactor, 2)})" : string.Empty);
         return limit is not null && isDecided
             ? $"{text}; the limit is {Plain(limit.Maximum)}{Of(limit.Unit)}; {Outcome(limit, unit, conformity)}. "
                 + $"Probability of conformity {Quantities.Percent(conformity.Probability)}."
