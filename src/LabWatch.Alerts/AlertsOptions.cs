@@ -1,4 +1,5 @@
 using System.Globalization;
+using LabWatch.Alerts.Mail;
 using LabWatch.Lab.Findings;
 
 namespace LabWatch.Alerts;
@@ -63,6 +64,46 @@ public sealed record AlertsOptions
     /// <summary>Attempts under way at the same time to one notifier. Default 4, 1 to 64.</summary>
     public int ParallelAttempts { get; init; } = 4;
 
+    /// <summary>How long a receiver that failed five times in a row is left alone before one attempt tests whether it is back. Default 30 s.</summary>
+    public TimeSpan CircuitRest { get; init; } = TimeSpan.FromSeconds(30);
+
+    /// <summary>Address under which people reach the pages, https, for links in messages; null for messages without links.</summary>
+    public string? PublicAddress { get; init; }
+
+    /// <summary>How long a link in a message leads to its alert. Default 24 h.</summary>
+    public TimeSpan LinkLife { get; init; } = TimeSpan.FromHours(24);
+
+    /// <summary>Name of the mail server; null for none.</summary>
+    public string? MailHost { get; init; }
+
+    /// <summary>Port of the mail server. Default 587, submission (RFC 6409).</summary>
+    public int MailPort { get; init; } = 587;
+
+    /// <summary>How the connection to the mail server is made private. Default STARTTLS, demanded.</summary>
+    public MailSecurity MailSecurity { get; init; } = MailSecurity.StartTls;
+
+    /// <summary>Address that mails come from; also the user where no other is named.</summary>
+    public string? MailFrom { get; init; }
+
+    /// <summary>User at the mail server; null for the address that mails come from.</summary>
+    public string? MailUser { get; init; }
+
+    /// <summary>Name of the secret with the user's password; null to send without signing in.</summary>
+    public string? MailSecretName { get; init; }
+
+    /// <summary>Time allowed for one mail, connection included. Default 30 s.</summary>
+    public TimeSpan MailTimeout { get; init; } = TimeSpan.FromSeconds(30);
+
+    /// <summary>Whom a push service may ask about this installation: a mailto or https address; null for the sender of mails or the public address.</summary>
+    public string? PushContact { get; init; }
+
+    /// <summary>Whether push messages may go to a plain http address of this machine. Default false.</summary>
+    public bool PushToLoopback { get; init; }
+
+    /// <summary>The contact that push services are told.</summary>
+    internal string PushContactOrDefault =>
+        PushContact ?? (MailFrom is { } from ? "mailto:" + from : PublicAddress is { } address && address.StartsWith("https:", StringComparison.Ordinal) ? address : "mailto:labwatch@localhost");
+
     /// <summary>Everything wrong with these settings.</summary>
     public IReadOnlyList<Finding> Validate()
     {
@@ -85,9 +126,38 @@ public sealed record AlertsOptions
         Check(findings, nameof(WebhookTimeout), WebhookTimeout.TotalSeconds, 0.1, 120, "s");
         Check(findings, nameof(RetryFirst), RetryFirst.TotalSeconds, 0.01, 600, "s");
         Check(findings, nameof(RetryLongest), RetryLongest.TotalSeconds, RetryFirst.TotalSeconds, 3600, "s");
+        Check(findings, nameof(CircuitRest), CircuitRest.TotalSeconds, 1, 600, "s");
+        Check(findings, nameof(LinkLife), LinkLife.TotalSeconds, 60, 30 * 86_400d, "s");
+        Check(findings, nameof(MailPort), MailPort, 1, 65_535, "(a port)");
+        Check(findings, nameof(MailTimeout), MailTimeout.TotalSeconds, 1, 300, "s");
+        CheckAddresses(findings);
         Check(findings, nameof(GiveUpAfter), GiveUpAfter.TotalSeconds, 60, 30 * 86_400d, "s");
         Check(findings, nameof(ParallelAttempts), ParallelAttempts, 1, 64, "attempts");
         return findings;
+    }
+
+    private void CheckAddresses(List<Finding> findings)
+    {
+        bool isAddress = Uri.TryCreate(PublicAddress, UriKind.Absolute, out Uri? address) && (address.Scheme == Uri.UriSchemeHttps || address.Scheme == Uri.UriSchemeHttp);
+        if (PublicAddress is not null && !isAddress)
+        {
+            findings.Add(new Finding("bad-address", nameof(PublicAddress), "This is no address of a page.", Finding.Quote(PublicAddress), "Write it in full, for example https://labwatch.laboratory.example."));
+        }
+
+        if (MailHost is not null && (MailFrom is null || !MimeKit.MailboxAddress.TryParse(MailFrom, out _)))
+        {
+            findings.Add(new Finding("bad-address", nameof(MailFrom), "A mail server needs an address that mails come from.", Finding.Quote(MailFrom), "Write one mailbox, for example labwatch@laboratory.example."));
+        }
+
+        if (MailHost is not null && MailSecurity == MailSecurity.None && MailHost is not ("localhost" or "127.0.0.1" or "::1"))
+        {
+            findings.Add(new Finding("not-private", nameof(MailSecurity), "Mails to another machine would go in the clear.", MailHost, "Use StartTls or Tls."));
+        }
+
+        if (PushContact is not null && !PushContact.StartsWith("mailto:", StringComparison.Ordinal) && !PushContact.StartsWith("https:", StringComparison.Ordinal))
+        {
+            findings.Add(new Finding("bad-address", nameof(PushContact), "A push service is told a mailto or https address.", Finding.Quote(PushContact), "Write for example mailto:duty@laboratory.example."));
+        }
     }
 
     private static void Check(List<Finding> findings, string name, double value, double lowest, double highest, string unit)

@@ -3,7 +3,10 @@ using LabWatch.Alerts.Attention;
 using LabWatch.Alerts.Desk;
 using LabWatch.Alerts.Hazards;
 using LabWatch.Alerts.Hosting;
+using LabWatch.Alerts.Links;
+using LabWatch.Alerts.Mail;
 using LabWatch.Alerts.Outbox;
+using LabWatch.Alerts.Push;
 using LabWatch.Alerts.Recording;
 using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
@@ -69,7 +72,7 @@ public static class AlertsRegistration
         services.TryAddSingleton(provider => new SetAsideFile(provider.GetRequiredService<AlertsOptions>().DataDirectory));
         services.TryAddSingleton<LedgerRecorder>();
         services.TryAddSingleton(provider => new DeskReducer(
-            provider.GetRequiredService<AlertJournalHandle>().State, () => NotifiersOf(provider.GetRequiredService<ILabSnapshotSource>().Current)));
+            provider.GetRequiredService<AlertJournalHandle>().State, () => provider.GetRequiredService<NotifierBook>().Current));
         services.TryAddSingleton(provider => new AlertDesk(
             provider.GetRequiredService<DeskQueue>(),
             provider.GetRequiredService<DeskReducer>(),
@@ -91,6 +94,16 @@ public static class AlertsRegistration
             provider.GetRequiredService<AlertsOptions>().SecretsDirectory, Environment.GetEnvironmentVariable));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<INotifierChannel, LogChannel>());
         services.TryAddEnumerable(ServiceDescriptor.Singleton<INotifierChannel, WebhookChannel>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<INotifierChannel, MailChannel>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<INotifierChannel, PushChannel>());
+        services.TryAddSingleton(provider => PushKeys.Open(provider.GetRequiredService<AlertsOptions>().DataDirectory));
+        services.TryAddSingleton<PushDesk>();
+        services.TryAddSingleton<IPushDesk>(provider => provider.GetRequiredService<PushDesk>());
+        services.TryAddSingleton<AlertLinks>();
+        services.TryAddSingleton<IAlertLinks>(provider => provider.GetRequiredService<AlertLinks>());
+        services.TryAddSingleton<MailWriter>();
+        services.TryAddSingleton<NotifierBook>();
+        services.TryAddSingleton<ITestMessages, TestMessages>();
         services.TryAddSingleton<MessageSender>();
         services.TryAddSingleton<MessageDispatcher>();
 
@@ -106,7 +119,4 @@ public static class AlertsRegistration
             })
             .RemoveAllLoggers();
     }
-
-    private static IReadOnlyList<Notifier> NotifiersOf(LabSnapshot snapshot) =>
-        snapshot.Notifiers.Count == 0 ? [MessageSender.Fallback] : snapshot.Notifiers;
 }

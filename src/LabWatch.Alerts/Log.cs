@@ -57,6 +57,9 @@ internal static partial class Log
     [LoggerMessage(4042, LogLevel.Error, "Message {Message} to notifier {Notifier} was given up after {Attempts} attempts: {Error}. Nobody was told this way.")]
     public static partial void GivenUp(ILogger logger, string message, string notifier, int attempts, string error);
 
+    [LoggerMessage(4044, LogLevel.Error, "The subscriptions of devices in {File} could not be read: nobody gets push messages until people subscribe anew.")]
+    public static partial void SubscriptionsUnreadable(ILogger logger, string file, Exception exception);
+
     [LoggerMessage(4043, LogLevel.Error, "The worker of notifier {Notifier} failed: a defect. It goes on.")]
     public static partial void NotifierFailed(ILogger logger, string notifier, Exception exception);
 }

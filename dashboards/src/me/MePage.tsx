@@ -5,6 +5,7 @@ import type { Permission } from "../api/access";
 import { clockTime } from "../format/time";
 import { PageHead } from "../shell/PageHead";
 import { announcement, now, site } from "../state";
+import { Devices } from "./Devices";
 import { Sessions } from "./Sessions";
 import { Tokens } from "./Tokens";
 
@@ -50,6 +51,7 @@ export function MePage() {
           {announcement.value.startsWith("The password is changed") && announcement.value}
         </p>
       </section>
+      <Devices />
       <Sessions />
       <Tokens />
     </>

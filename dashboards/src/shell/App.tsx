@@ -18,6 +18,7 @@ import { SourcePage } from "../source/SourcePage";
 import { announcement, link, site } from "../state";
 import { TrailPage } from "../trail/TrailPage";
 import { useArrival, useWindowTitle } from "./arrival";
+import { useFollowedLink } from "./followed";
 import { Footer } from "./Footer";
 import { Header } from "./Header";
 import { go, place } from "./router";
@@ -30,6 +31,7 @@ export function App() {
   useEffect(() => listenToKeys({ "?": () => setHelping(true), o: () => go(patterns.glance), t: () => go(patterns.trail), m: () => go(patterns.me) }), []);
   useWindowTitle();
   useArrival();
+  useFollowedLink(setAcknowledging);
   return (
     <>
       <a class="skip" href="#page">

@@ -152,6 +152,20 @@ internal static class AlertTexts
 
     public static string NotKnown => Text();
 
+    public static string PushTitleHazard => Text();
+
+    public static string PushTitleAlert => Text();
+
+    public static string PushTitleTest => Text();
+
+    public static string TestHeadline => Text();
+
+    public static string TestDetail => Text();
+
+    public static string MailAcknowledge => Text();
+
+    public static string MailLook => Text();
+
     /// <summary>A text about a hazard of a source.</summary>
     public static string Of(Hazards.HazardCause cause, string part) => Text(cause.ToString() + part);
 

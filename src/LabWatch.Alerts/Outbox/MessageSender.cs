@@ -1,5 +1,5 @@
+using System.Collections.Concurrent;
 using LabWatch.Alerts.Desk;
-using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
@@ -10,17 +10,15 @@ namespace LabWatch.Alerts.Outbox;
 /// <summary>Tries to send one message until it is sent, refused, or too old, and reports every attempt.</summary>
 internal sealed class MessageSender(
     IEnumerable<INotifierChannel> channels,
-    ILabSnapshotSource lab,
+    NotifierBook notifiers,
     DeskQueue desk,
     AlertsOptions options,
     AlertsMetrics metrics,
     TimeProvider clock,
     ILogger<MessageSender> logger)
 {
-    /// <summary>The notifier that is there where the lab file names none, so that messages stand at least in the log.</summary>
-    public static Notifier Fallback { get; } = new("log", NotifierKind.Log, null, null);
-
     private readonly Dictionary<NotifierKind, INotifierChannel> _channels = channels.ToDictionary(channel => channel.Kind);
+    private readonly ConcurrentDictionary<string, CircuitBreaker> _breakers = new(StringComparer.Ordinal);
     private readonly RetrySchedule _schedule = new(options.RetryFirst, options.RetryLongest);
 
     /// <summary>Sends a message.</summary>
@@ -38,10 +36,17 @@ internal sealed class MessageSender(
                 await Task.Delay(wait < options.RetryLongest ? wait : options.RetryLongest, clock, stopping);
             }
 
+            CircuitBreaker breaker = _breakers.GetOrAdd(message.Notifier, _ => new CircuitBreaker(clock, options.CircuitRest));
+            while (breaker.Ask() is { Ticks: > 0 } rest)
+            {
+                await Task.Delay(rest, clock, stopping);
+            }
+
             await slots.WaitAsync(stopping);
             try
             {
-                message = await AttemptAsync(message);
+                (message, bool answered) = await AttemptAsync(message);
+                breaker.Note(answered);
             }
             finally
             {
@@ -52,9 +57,17 @@ internal sealed class MessageSender(
         }
     }
 
-    private async Task<OutboxMessage> AttemptAsync(OutboxMessage message)
+    /// <summary>Makes one attempt and keeps no record of it: for test messages.</summary>
+    public Task<SendOutcome> AttemptOnceAsync(OutboxMessage message, CancellationToken cancellationToken) => SendAsync(message, cancellationToken);
+
+    private async Task<(OutboxMessage Message, bool Answered)> AttemptAsync(OutboxMessage message)
     {
-        SendOutcome outcome = await SendAsync(message);
+        SendOutcome outcome = await SendAsync(message, CancellationToken.None);
+        return (Attempted(message, outcome), outcome.Result != SendResult.Retry);
+    }
+
+    private OutboxMessage Attempted(OutboxMessage message, SendOutcome outcome)
+    {
         Instant now = Instant.Now(clock);
         OutboxMessage attempted = message with { Attempts = message.Attempts + 1, LastError = outcome.Error };
         if (outcome.Result == SendResult.Sent)
@@ -76,15 +89,13 @@ internal sealed class MessageSender(
         return attempted with { DueAt = now + wait };
     }
 
-    private async Task<SendOutcome> SendAsync(OutboxMessage message)
+    private async Task<SendOutcome> SendAsync(OutboxMessage message, CancellationToken cancellationToken)
     {
-        IReadOnlyList<Notifier> notifiers = lab.Current.Notifiers;
-        Notifier? notifier = notifiers.FirstOrDefault(candidate => string.Equals(candidate.Id, message.Notifier, StringComparison.Ordinal))
-            ?? (string.Equals(message.Notifier, Fallback.Id, StringComparison.Ordinal) ? Fallback : null);
+        Notifier? notifier = notifiers.Find(message.Notifier);
         return notifier is null
-            ? new SendOutcome(SendResult.Refused, "The lab file has no notifier of this id any more.")
+            ? new SendOutcome(SendResult.Refused, "There is no notifier of this id any more.")
             : _channels.TryGetValue(notifier.Kind, out INotifierChannel? channel)
-                ? await channel.SendAsync(notifier, message, CancellationToken.None)
+                ? await channel.SendAsync(notifier, message, cancellationToken)
                 : new SendOutcome(SendResult.Refused, "No channel serves this kind of notifier.");
     }
 

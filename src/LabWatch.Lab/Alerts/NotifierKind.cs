@@ -8,4 +8,10 @@ public enum NotifierKind
 
     /// <summary>An HTTP POST to an address.</summary>
     Webhook,
+
+    /// <summary>An e-mail to an address.</summary>
+    Mail,
+
+    /// <summary>A push message to a browser or installed app that a person has subscribed; never in the lab file.</summary>
+    Push,
 }

@@ -10,6 +10,7 @@ using LabWatch.Service.Api.Devices;
 using LabWatch.Service.Api.Health;
 using LabWatch.Service.Api.Hosting;
 using LabWatch.Service.Api.Insight;
+using LabWatch.Service.Api.Notifying;
 using LabWatch.Service.Api.Requests;
 using LabWatch.Service.Api.Runs;
 using LabWatch.Service.Api.Sources;
@@ -46,6 +47,7 @@ internal static class ApiMapping
         AssessmentEndpoints.Map(api);
         ForecastEndpoints.Map(api);
         AlertEndpoints.Map(api);
+        NotifierEndpoints.Map(api);
         AuditEndpoints.Map(api);
         RunEndpoints.Map(api);
         ConfiguredEndpoints.Map(api);

@@ -1,6 +1,9 @@
 using LabWatch.Alerts;
+using LabWatch.Alerts.Links;
+using LabWatch.Alerts.Push;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
+using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
 using LabWatch.Service.Api.Access;
 using LabWatch.Service.Api.Live;
@@ -29,6 +32,16 @@ internal static class AlertEndpoints
             .Allow(Permission.Read)
             .WithName("GetAlert")
             .WithSummary("One alert with every step of its life")
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapGet("{id}/messages", MessagesAsync)
+            .Allow(Permission.Read)
+            .WithName("ListAlertMessages")
+            .WithSummary("Who was told about an alert, when, and whether it arrived")
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapGet("links/{token}", Follow)
+            .Allow(Permission.Read)
+            .WithName("FollowAlertLink")
+            .WithSummary("The alert that a link in a message leads to; refused once the link has ended")
             .ProducesProblem(StatusCodes.Status404NotFound);
         group.MapPost("{id}/acknowledge", AcknowledgeAsync)
             .Allow(Permission.Acknowledge)
@@ -75,6 +88,34 @@ internal static class AlertEndpoints
                 [.. (await ledger.TransitionsAsync(guid, cancellationToken)).Select(AlertViews.Of)],
                 SiteBoard.Caution));
     }
+
+    private static async Task<Results<Ok<AlertMessageListView>, ProblemHttpResult>> MessagesAsync(
+        string id, IAlertBoard board, IPushDesk push, IAlertLedger ledger, CancellationToken cancellationToken)
+    {
+        if (!Guid.TryParse(id, out Guid guid))
+        {
+            return Missing(id);
+        }
+
+        // What waits is known in memory before the records have it, and newer there.
+        Dictionary<string, OutboxMessage> messages = (await ledger.MessagesAsync(guid, cancellationToken)).ToDictionary(message => message.Id, StringComparer.Ordinal);
+        foreach (OutboxMessage waiting in board.PendingMessages().Where(message => message.AlertId == guid))
+        {
+            messages[waiting.Id] = waiting;
+        }
+
+        return TypedResults.Ok(new AlertMessageListView(
+        [
+            .. messages.Values.OrderBy(message => message.QueuedAt).ThenBy(message => message.Notifier, StringComparer.Ordinal).Select(message => new AlertMessageView(
+                message.Id, message.Notifier, push.AccountOf(message.Notifier), AlertViews.HeadlineOf(message), message.QueuedAt, message.SentAt, message.GivenUpAt,
+                message.Attempts, message.LastError)),
+        ]));
+    }
+
+    private static Results<Ok<AlertLinkView>, ProblemHttpResult> Follow(string token, IAlertLinks links, TimeProvider clock) =>
+        links.Read(token, Instant.Now(clock)) is { } alert
+            ? TypedResults.Ok(new AlertLinkView(alert))
+            : Refusals.NotFound("link", "it has ended, or was not made here", "Open the list of alerts: what stands is there.");
 
     private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> AcknowledgeAsync(
         string id, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)

@@ -1,3 +1,4 @@
+using System.Text.Json;
 using LabWatch.Lab;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Identity;
@@ -31,6 +32,13 @@ internal static class AlertViews
         alert.Limit is { } limit ? Numbers.OrNull(limit) : null,
         alert.Unit,
         alert.Outlook);
+
+    /// <summary>The headline of a message, from its JSON.</summary>
+    public static string HeadlineOf(OutboxMessage message)
+    {
+        using JsonDocument body = JsonDocument.Parse(message.Body);
+        return body.RootElement.TryGetProperty("headline", out JsonElement headline) ? headline.GetString() ?? string.Empty : string.Empty;
+    }
 
     /// <summary>One step in an alert's life.</summary>
     public static AlertTransitionView Of(AlertTransition step) =>

@@ -1,4 +1,6 @@
 using LabWatch.Alerts;
+using LabWatch.Alerts.Links;
+using LabWatch.Alerts.Push;
 using LabWatch.Assessments;
 using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
@@ -32,6 +34,8 @@ internal sealed class ApiServices(TimeProvider clock)
 
     public FakeAlerts Alerts { get; } = new(clock);
 
+    public FakeNotifying Notifying { get; } = new(clock);
+
     public FakeAssessments Assessments { get; } = new();
 
     public FakeTrail Trail { get; } = new();
@@ -52,6 +56,9 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<IReadingStoreHealth>(Store);
         services.AddSingleton<IAlertBoard>(Alerts);
         services.AddSingleton<IAlertLedger>(Alerts);
+        services.AddSingleton<ITestMessages>(Notifying);
+        services.AddSingleton<IPushDesk>(Notifying);
+        services.AddSingleton<IAlertLinks>(Notifying);
         services.AddSingleton<IAssessmentLedger>(Assessments);
         services.AddSingleton<IAuditLedger>(Trail);
         services.AddSingleton<IPlannerState>(Planner);
