@@ -45,6 +45,9 @@ public static class IntakeCode
     /// <summary>The pack states a version of SenML that is not understood.</summary>
     public const string UnknownVersion = "unknown-version";
 
+    /// <summary>Records of the pack state different versions.</summary>
+    public const string VersionDiffers = "version-differs";
+
     /// <summary>The pack has a field that must be understood (its label ends with an underscore) and is not.</summary>
     public const string MustUnderstand = "must-understand";
 

@@ -86,6 +86,11 @@ internal sealed class PayloadDecoder(ILabSnapshotSource snapshots, string root, 
 
     private static DecodedMessage DecodeMapped(ReadOnlyMemory<byte> utf8, PayloadMapping mapping, in DecodeContext context)
     {
+        if (!Utf8.IsValid(utf8.Span))
+        {
+            return Refuse(IntakeCode.NotUtf8, "The payload is not UTF-8.", "Send JSON in UTF-8.");
+        }
+
         FindingList? findings = null;
         var readings = default(ReadingBuffer);
         try

@@ -12,6 +12,9 @@ internal ref struct SenmlRecord
     public DecimalSeconds Time;
     public double BaseValue;
 
+    /// <summary>Version of the pack; 0 before the first record has been read.</summary>
+    public int Version;
+
     /// <summary>The value; NaN where the device sent null.</summary>
     public double Value;
 

@@ -34,6 +34,8 @@ internal static class SenmlRecordReader
             reader.Skip();
         }
 
+        // RFC 8428 section 4.4: all records of a pack have the same version, and it is 10 where none is stated.
+        record.Version = record.Version == 0 ? Version : record.Version;
         return null;
     }
 
@@ -157,7 +159,14 @@ internal static class SenmlRecordReader
             && reader.TryGetInt32(out int version)
             && (version is > 0 and <= Version || version == VersionWithSecondaryUnits))
         {
-            return null;
+            bool differs = record.Version != 0 && record.Version != version;
+            record.Version = version;
+            if (differs)
+            {
+                record.Refuse(IntakeCode.VersionDiffers, label, Shown(ref reader));
+            }
+
+            return differs ? IntakeCode.VersionDiffers : null;
         }
 
         record.Refuse(IntakeCode.UnknownVersion, label, Shown(ref reader));

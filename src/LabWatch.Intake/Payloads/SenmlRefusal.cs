@@ -34,6 +34,7 @@ internal static class SenmlRefusal
     {
         IntakeCode.DuplicateLabel => ("A label stands twice in one record.", "Send each label once."),
         IntakeCode.MustUnderstand => ("The field must be understood and is not known here.", "Leave the extension out."),
+        IntakeCode.VersionDiffers => ("All records of a pack must have the same version.", "State bver once, in the first record."),
         IntakeCode.UnknownVersion => ("The version of SenML is not known here.", "Send bver 10 or leave it out."),
         IntakeCode.MissingValue => ("The record has no value.", "Send v, or null for a reading without a value."),
         IntakeCode.SeveralValues => ("The record has more than one value.", "Send one of v and vb."),

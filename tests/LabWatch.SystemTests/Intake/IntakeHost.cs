@@ -5,9 +5,7 @@ using LabWatch.Intake.Options;
 using LabWatch.Lab;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
-using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
-using LabWatch.Metrology.Uncertainty;
 using LabWatch.Readings;
 using Microsoft.Extensions.DependencyInjection;
 using Microsoft.Extensions.Hosting;
@@ -52,7 +50,7 @@ internal sealed class IntakeHost : IAsyncDisposable, ILabSnapshotSource, IReadin
     /// <summary>How often the tap has seen each value.</summary>
     public IReadOnlyDictionary<double, int> Seen => _seen;
 
-    public LabSnapshot Current { get; } = Snapshot();
+    public LabSnapshot Current { get; } = FixedLab.Snapshot();
 
 #pragma warning disable CS0067 // The snapshot of these tests never changes.
     public event EventHandler? Changed;
@@ -106,24 +104,4 @@ internal sealed class IntakeHost : IAsyncDisposable, ILabSnapshotSource, IReadin
         await _host.StopAsync(CancellationToken.None);
         _host.Dispose();
     }
-
-    private static LabSnapshot Snapshot() => new(
-        new LabSite("hollin-vale", "Hollin Vale", "Europe/Dublin"),
-        [
-            new ReferenceSource(
-                Fir,
-                "Fir",
-                SourceKind.StirredBath,
-                TraceabilityRoute.Contact,
-                -20,
-                90,
-                new Cavity(CavityShape.Cylinder, 50, 300, null, 25, [new CoatingOptics("band", new Estimate(0.95, 0.01), new Estimate(0.9, 0.05))]),
-                [new WorkingBand("band", "Band", 8, 14)],
-                [new Channel(new ChannelKey(Fir, "power"), "Power", ChannelQuantity.HeaterPower, "W", TimeSpan.FromSeconds(1))]),
-        ],
-        [],
-        [],
-        [],
-        [],
-        []);
 }

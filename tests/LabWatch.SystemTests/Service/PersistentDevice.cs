@@ -14,6 +14,7 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
 {
     private const int InFlight = 16;
     private const long StepMicroseconds = 1_000;
+    private static readonly TimeSpan Patience = TimeSpan.FromSeconds(10);
     private static readonly TimeSpan Pause = TimeSpan.FromMilliseconds(50);
 
     private readonly ConcurrentDictionary<long, double> _acknowledged = new();
@@ -75,7 +76,9 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
             string text = string.Create(CultureInfo.InvariantCulture, $"[{{\"n\":\"{channel}\",\"u\":\"{unit}\",\"t\":{time / 1_000_000}.{time % 1_000_000:D6},\"v\":{value:R}}}]");
             MqttApplicationMessage message = new MqttApplicationMessageBuilder()
                 .WithTopic(topic).WithPayload(Encoding.UTF8.GetBytes(text)).WithQualityOfServiceLevel(MqttQualityOfServiceLevel.AtLeastOnce).Build();
-            MqttClientPublishResult result = await _client.PublishAsync(message);
+            // The client can wait for ever for an answer that went down with a former connection.
+            using CancellationTokenSource patience = new(Patience, TimeProvider.System);
+            MqttClientPublishResult result = await _client.PublishAsync(message, patience.Token);
             return result.IsSuccess;
         }
         catch (Exception exception) when (exception is MQTTnet.Exceptions.MqttCommunicationException or MQTTnet.Exceptions.MqttConfigurationException or InvalidOperationException or OperationCanceledException or IOException or TimeoutException)
@@ -97,7 +100,8 @@ internal sealed class PersistentDevice(int port, string topic, string channel, l
         {
             if (!_client.IsConnected)
             {
-                await _client.ConnectAsync(new MqttClientOptionsBuilder().WithTcpServer("127.0.0.1", port).WithClientId("device").WithTimeout(TimeSpan.FromSeconds(3)).Build());
+                using CancellationTokenSource patience = new(Patience, TimeProvider.System);
+                await _client.ConnectAsync(new MqttClientOptionsBuilder().WithTcpServer("127.0.0.1", port).WithClientId("device").WithTimeout(TimeSpan.FromSeconds(3)).Build(), patience.Token);
             }
         }
         finally

@@ -61,14 +61,27 @@ public class LinkPartsTests
     [Fact]
     public async Task Reading_from_the_link_pauses_at_the_limit_and_resumes_at_half()
     {
-        var backlog = new ReceiveBacklog(4);
-        Task[] added = [.. Enumerable.Range(0, 4).Select(_ => backlog.AddAsync(TestContext.Current.CancellationToken))];
+        var backlog = new ReceiveBacklog(4, 1_000);
+        Task[] added = [.. Enumerable.Range(0, 4).Select(_ => backlog.AddAsync(10, TestContext.Current.CancellationToken))];
         Assert.Equal([true, true, true, false], added.Select(task => task.IsCompleted));
-        backlog.Remove();
+        backlog.Remove(10);
         Assert.False(added[3].IsCompleted);
-        backlog.Remove();
+        backlog.Remove(10);
         await added[3];
         Assert.Equal(2, backlog.Count);
+    }
+
+    [Fact]
+    public async Task Reading_from_the_link_pauses_at_the_limit_of_bytes_too()
+    {
+        var backlog = new ReceiveBacklog(100, 1_000);
+        Assert.True(backlog.AddAsync(900, TestContext.Current.CancellationToken).IsCompleted);
+        Task second = backlog.AddAsync(900, TestContext.Current.CancellationToken);
+        Assert.False(second.IsCompleted);
+        backlog.Remove(900);
+        Assert.False(second.IsCompleted);
+        backlog.Remove(900);
+        await second;
     }
 
     [Fact]

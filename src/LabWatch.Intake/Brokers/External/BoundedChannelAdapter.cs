@@ -40,9 +40,9 @@ internal sealed class BoundedChannelAdapter(IMqttChannelAdapter inner, ReceiveBa
     public async Task<MqttPacket> ReceivePacketAsync(CancellationToken cancellationToken)
     {
         MqttPacket packet = await inner.ReceivePacketAsync(cancellationToken);
-        if (packet is MqttPublishPacket)
+        if (packet is MqttPublishPacket publish)
         {
-            await backlog.AddAsync(cancellationToken);
+            await backlog.AddAsync(publish.Payload.Length, cancellationToken);
         }
 
         return packet;

@@ -17,6 +17,7 @@ namespace LabWatch.Intake.Brokers.External;
 internal sealed class BrokerConnection : IAsyncDisposable
 {
     private const int BacklogLimit = 2_000;
+    private const long BacklogLimitBytes = 16L << 20;
     private readonly ExternalBrokerOptions _options;
     private readonly BrokerIdentity _identity;
     private readonly NamedSecrets _secrets;
@@ -25,7 +26,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
     private readonly MessageIntake _intake;
     private readonly TimeProvider _clock;
     private readonly bool _durable;
-    private readonly ReceiveBacklog _backlog = new(BacklogLimit);
+    private readonly ReceiveBacklog _backlog = new(BacklogLimit, BacklogLimitBytes);
     private readonly TaskCompletionSource<LinkEnd> _ended = new(TaskCreationOptions.RunContinuationsAsynchronously);
     private readonly AcknowledgementLane _acknowledgements;
     private readonly IMqttClient _client;
@@ -174,7 +175,7 @@ internal sealed class BrokerConnection : IAsyncDisposable
 
     private Task OnMessage(MqttApplicationMessageReceivedEventArgs e)
     {
-        _backlog.Remove();
+        _backlog.Remove(e.ApplicationMessage.Payload.Length);
         e.AutoAcknowledge = false;
         Volatile.Write(ref _lastMessage, _clock.GetTimestamp());
         MqttApplicationMessage message = e.ApplicationMessage;

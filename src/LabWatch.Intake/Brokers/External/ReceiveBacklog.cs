@@ -4,21 +4,23 @@ namespace LabWatch.Intake.Brokers.External;
 /// Messages that the client has read from the link and not yet handed to us. The client queues them without a bound, and a broker may
 /// send far more than Receive Maximum; so reading from the link pauses while the backlog is at its limit, and TCP holds the rest back.
 /// </summary>
-internal sealed class ReceiveBacklog(int limit)
+internal sealed class ReceiveBacklog(int limit, long limitBytes)
 {
     private readonly Lock _lock = new();
     private TaskCompletionSource? _room;
     private int _count;
+    private long _bytes;
 
     public int Count => Volatile.Read(ref _count);
 
     /// <summary>Counts one message that was read; the task ends when there is room for another.</summary>
-    public Task AddAsync(CancellationToken cancellationToken)
+    public Task AddAsync(long bytes, CancellationToken cancellationToken)
     {
         lock (_lock)
         {
             _count++;
-            if (_count < limit)
+            _bytes += bytes;
+            if (_count < limit && _bytes < limitBytes)
             {
                 return Task.CompletedTask;
             }
@@ -29,13 +31,14 @@ internal sealed class ReceiveBacklog(int limit)
     }
 
     /// <summary>Counts one message that was handed over.</summary>
-    public void Remove()
+    public void Remove(long bytes)
     {
         TaskCompletionSource? room = null;
         lock (_lock)
         {
             _count--;
-            if (_count <= limit / 2)
+            _bytes -= bytes;
+            if (_count <= limit / 2 && _bytes <= limitBytes / 2)
             {
                 room = _room;
                 _room = null;

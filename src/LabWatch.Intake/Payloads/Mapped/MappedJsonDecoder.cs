@@ -25,30 +25,44 @@ internal static class MappedJsonDecoder
 
         using (document)
         {
-            if (mapping.Items is null)
+            try
             {
-                DecodeItem(document.RootElement, string.Empty, mapping, context, ref readings, ref findings);
-                return;
+                DecodeDocument(document.RootElement, mapping, context, ref readings, ref findings);
             }
+            catch (InvalidOperationException)
+            {
+                // A text with half a surrogate pair: nothing of the message is believed.
+                readings.Clear();
+                (findings ??= new()).AddWithoutValue(IntakeCode.MalformedJson, "payload", "A text of the payload is no Unicode.", "Send whole characters.");
+            }
+        }
+    }
 
-            if (!mapping.Items.TryEvaluate(document.RootElement, out JsonElement items) || items.ValueKind != JsonValueKind.Array)
-            {
-                (findings ??= new()).AddWithoutValue(IntakeCode.MappedMissing, mapping.Items.Text, "There is no array here.", "Mend the mapping or the gateway.");
-                return;
-            }
+    private static void DecodeDocument(JsonElement root, PayloadMapping mapping, in DecodeContext context, ref ReadingBuffer readings, ref FindingList? findings)
+    {
+        if (mapping.Items is null)
+        {
+            DecodeItem(root, string.Empty, mapping, context, ref readings, ref findings);
+            return;
+        }
 
-            if (items.GetArrayLength() > context.Limits.MaximumRecords)
-            {
-                (findings ??= new()).AddWithoutValue(IntakeCode.TooManyRecords, mapping.Items.Text, "The message holds more items than the limit.", "Send smaller messages or raise the limit.");
-                return;
-            }
+        if (!mapping.Items.TryEvaluate(root, out JsonElement items) || items.ValueKind != JsonValueKind.Array)
+        {
+            (findings ??= new()).AddWithoutValue(IntakeCode.MappedMissing, mapping.Items.Text, "There is no array here.", "Mend the mapping or the gateway.");
+            return;
+        }
 
-            int index = 0;
-            foreach (JsonElement item in items.EnumerateArray())
-            {
-                DecodeItem(item, string.Create(CultureInfo.InvariantCulture, $"{mapping.Items.Text}/{index}"), mapping, context, ref readings, ref findings);
-                index++;
-            }
+        if ((long)items.GetArrayLength() * mapping.Values.Count > context.Limits.MaximumRecords)
+        {
+            (findings ??= new()).AddWithoutValue(IntakeCode.TooManyRecords, mapping.Items.Text, "The message holds more values than the limit of records.", "Send smaller messages or raise the limit.");
+            return;
+        }
+
+        int index = 0;
+        foreach (JsonElement item in items.EnumerateArray())
+        {
+            DecodeItem(item, string.Create(CultureInfo.InvariantCulture, $"{mapping.Items.Text}/{index}"), mapping, context, ref readings, ref findings);
+            index++;
         }
     }
 
