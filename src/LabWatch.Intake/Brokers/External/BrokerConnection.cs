@@ -3,10 +3,10 @@ using LabWatch.Intake.Options;
 using LabWatch.Intake.Outgoing;
 using LabWatch.Intake.Pipeline;
 using LabWatch.Lab.Secrets;
+using Microsoft.Extensions.Logging;
 using MQTTnet;
 using MQTTnet.Diagnostics.Logger;
 using MQTTnet.Protocol;
-using Microsoft.Extensions.Logging;
 
 namespace LabWatch.Intake.Brokers.External;
 

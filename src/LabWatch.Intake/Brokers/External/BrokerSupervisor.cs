@@ -3,8 +3,8 @@ using LabWatch.Intake.Options;
 using LabWatch.Intake.Outgoing;
 using LabWatch.Intake.Pipeline;
 using LabWatch.Lab.Secrets;
-using MQTTnet;
 using Microsoft.Extensions.Logging;
+using MQTTnet;
 
 namespace LabWatch.Intake.Brokers.External;
 
