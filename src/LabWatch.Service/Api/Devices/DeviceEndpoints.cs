@@ -21,16 +21,16 @@ internal static class DeviceEndpoints
     {
         RouteGroupBuilder group = api.MapGroup("devices").WithTags("Devices").Allow(Permission.ManageAccounts);
         group.MapGet(string.Empty, List)
-            .WithName("ListDevices")
+            .WithName("ListDeviceAccounts")
             .WithSummary("Accounts of devices at the embedded broker, by name");
         group.MapPost(string.Empty, AddAsync)
-            .WithName("AddDevice")
+            .WithName("AddDeviceAccount")
             .WithSummary("Make an account for a device; the answer has its password, shown once")
             .WithDescription("With it a device may publish for its one source, and subscribe to that source's topics and to what the service publishes.")
             .ProducesProblem(StatusCodes.Status400BadRequest)
             .ProducesProblem(StatusCodes.Status409Conflict);
         group.MapDelete("{name}", RevokeAsync)
-            .WithName("RevokeDevice")
+            .WithName("RevokeDeviceAccount")
             .WithSummary("Take the account of a device back; its connections end at once")
             .ProducesProblem(StatusCodes.Status404NotFound);
     }
