@@ -28,18 +28,18 @@ internal static class NotifierEndpoints
             .ProducesProblem(StatusCodes.Status404NotFound);
         RouteGroupBuilder devices = api.MapGroup("me/devices").WithTags("Notifiers").Allow(Permission.Read);
         devices.MapGet(string.Empty, Devices)
-            .WithName("ListDevices")
+            .WithName("ListOwnDevices")
             .WithSummary("The own devices that take push messages, and the key to subscribe with");
         devices.MapPost(string.Empty, AddDevice)
-            .WithName("AddDevice")
+            .WithName("AddOwnDevice")
             .WithSummary("Subscribe this device: what the browser's subscription says, and a name")
             .ProducesProblem(StatusCodes.Status400BadRequest);
         devices.MapDelete("{id}", RemoveDevice)
-            .WithName("RemoveDevice")
+            .WithName("RemoveOwnDevice")
             .WithSummary("Take a device away")
             .ProducesProblem(StatusCodes.Status404NotFound);
         devices.MapPost("{id}/test", TestDeviceAsync)
-            .WithName("TestDevice")
+            .WithName("TestOwnDevice")
             .WithSummary("Send a test message to an own device")
             .ProducesProblem(StatusCodes.Status404NotFound);
     }
