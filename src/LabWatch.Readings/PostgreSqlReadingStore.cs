@@ -15,6 +15,8 @@ internal static class PostgreSqlReadingStore
             new PostgreSqlDialect(target), Path.Combine(Path.GetFullPath(options.DataDirectory), target.MarkName), options, clock, log);
     }
 
+    public static PostgreSqlDialect Dialect(ReadingsOptions options) => new(Target(options));
+
     public static PostgreSqlQuarantine Quarantine(ReadingsOptions options) => new(Target(options), options);
 
     private static PostgreSqlTarget Target(ReadingsOptions options)

@@ -1,4 +1,5 @@
 using LabWatch.Readings.Engine;
+using LabWatch.Readings.Engine.Sqlite;
 using LabWatch.Readings.Influx;
 using LabWatch.Readings.Quarantine;
 using Microsoft.Extensions.Logging;
@@ -45,6 +46,14 @@ public sealed class ReadingEngine : IAsyncDisposable
             _ => Of(new SqliteReadingStore(options, clock, logs.CreateLogger<SqliteReadingStore>()), quarantine),
         };
     }
+
+    /// <summary>The database of an engine of sealed source-hours; null for another engine.</summary>
+    internal static StoreDialect? Dialect(ReadingsOptions options) => options.Engine switch
+    {
+        ReadingsEngine.Sqlite => new SqliteDialect(Path.Combine(Directory.CreateDirectory(options.DataDirectory).FullName, SqliteReadingStore.FileName)),
+        ReadingsEngine.PostgreSql => PostgreSqlReadingStore.Dialect(options),
+        _ => null,
+    };
 
     /// <inheritdoc/>
     public async ValueTask DisposeAsync()

@@ -9,13 +9,14 @@ namespace LabWatch.Evidence.Recording;
 /// Enters the digest of every sealed part in the trail, in the order of sealing. How far it has come moves in the transaction of the
 /// entries, so that a restart at any point neither leaves one out nor enters one twice. Not thread-safe.
 /// </summary>
-internal sealed class SealedHourRecorder(IReadingStore store, IAuditLedger trail, IPositionLedger positions, ILogger<SealedHourRecorder> logger)
+internal sealed class SealedHourRecorder(IReadingStore store, IAuditLedger trail, IPositionLedger positions, ILogger<SealedHourRecorder> logger, ReadingsOptions? readings = null)
 {
-    /// <summary>Name of the position.</summary>
+    /// <summary>Name of the position in the file of readings; with another engine its name follows, because its seals are counted apart.</summary>
     public const string Reader = "trail/sealed-hours";
 
     private const int Batch = 200;
 
+    private readonly string _reader = readings is null or { Engine: ReadingsEngine.Sqlite } ? Reader : $"{Reader}/{readings.Engine.ToString().ToLowerInvariant()}";
     private long? _position;
 
     /// <summary>Enters what was sealed since the last time; gives the number of entries.</summary>
@@ -29,7 +30,7 @@ internal sealed class SealedHourRecorder(IReadingStore store, IAuditLedger trail
 
             // Until the answer is there it is not known whether the entries were made: after a failure the stored position tells.
             _position = null;
-            await trail.AppendAsync([.. parts.Select(HourNote.Of)], (Reader, position), cancellationToken);
+            await trail.AppendAsync([.. parts.Select(HourNote.Of)], (_reader, position), cancellationToken);
             _position = position;
             entered += parts.Count;
         }
@@ -43,7 +44,13 @@ internal sealed class SealedHourRecorder(IReadingStore store, IAuditLedger trail
     /// </summary>
     private async Task<long> ResumeAsync(CancellationToken cancellationToken)
     {
-        long position = await positions.PositionAsync(Reader, cancellationToken);
+        long position = await positions.PositionAsync(_reader, cancellationToken);
+        if (position == 0 && !string.Equals(_reader, Reader, StringComparison.Ordinal))
+        {
+            // Sealed hours that were transferred as they are keep their numbers: what the file had entered need not be entered again.
+            position = await positions.PositionAsync(Reader, cancellationToken);
+        }
+
         if (position == 0)
         {
             return 0;

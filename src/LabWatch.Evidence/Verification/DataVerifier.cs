@@ -1,3 +1,4 @@
+using System.Data.Common;
 using LabWatch.Evidence.Recording;
 using LabWatch.Lab.Findings;
 using LabWatch.Readings;
@@ -123,7 +124,14 @@ public sealed class DataVerifier
     private void CheckHours(TrailVerifier verifier)
     {
         string path = Path.Combine(_request.DataDirectory, SqliteReadingStore.FileName);
-        if (!File.Exists(path) && _hours.Count == 0)
+        if (_request.Readings?.Engine is ReadingsEngine.InfluxDb)
+        {
+            PassOver(verifier);
+            return;
+        }
+
+        bool isFile = _request.Readings is not { Engine: ReadingsEngine.PostgreSql };
+        if (isFile && !File.Exists(path) && _hours.Count == 0)
         {
             _notes.Add("There are no readings in this directory.");
             return;
@@ -131,7 +139,7 @@ public sealed class DataVerifier
 
         try
         {
-            using SealedFile file = SealedFile.Open(path, _inUse);
+            using ISealedParts file = isFile ? SealedFile.Open(path, _inUse) : OpenSchema(_request.Readings!);
             HourCheck check = new(file, verifier.Facts, _hours, _findings);
             check.Run(count => _progress("block", count));
             _readings = check.Readings;
@@ -142,8 +150,31 @@ public sealed class DataVerifier
         }
         catch (UnreadableException exception)
         {
-            _findings.Add(Unreadable.Table(SqliteReadingStore.FileName, exception.Message));
+            _findings.Add(Unreadable.Table(isFile ? SqliteReadingStore.FileName : "readings in PostgreSQL", exception.Message));
         }
+    }
+
+    private static SealedSchema OpenSchema(ReadingsOptions options)
+    {
+        try
+        {
+            return new SealedSchema(PostgreSqlReadingStore.Dialect(options).OpenReader());
+        }
+        catch (Exception exception) when (exception is DbException or StoreUnavailableException or TimeoutException)
+        {
+            throw new UnreadableException(exception.Message);
+        }
+    }
+
+    /// <summary>Points of InfluxDB are not bytes that can be read beside the server; the entries about them are part of the chain that was checked.</summary>
+    private void PassOver(TrailVerifier verifier)
+    {
+        foreach (int place in _hours.Keys)
+        {
+            verifier.Facts.Entries[place].IsClaimed = true;
+        }
+
+        _notes.Add(FormattableString.Invariant($"The readings lie in InfluxDB: {_hours.Count} entries about sealed hours were not compared with it."));
     }
 
     private readonly record struct FileStates((bool IsAtRest, long Length, long Written) Records, (bool IsAtRest, long Length, long Written) Readings);

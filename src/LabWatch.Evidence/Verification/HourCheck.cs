@@ -11,7 +11,7 @@ using LabWatch.Records.Audit.Verification;
 namespace LabWatch.Evidence.Verification;
 
 /// <summary>Checks every sealed part of every source-hour: its bytes against the trail, its columns and its summary against its bytes.</summary>
-internal sealed class HourCheck(SealedFile file, TrailFacts facts, IReadOnlyDictionary<int, HourFacts> told, TrailFindings findings)
+internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDictionary<int, HourFacts> told, TrailFindings findings)
 {
     private const string Altered = "The sealed readings or what is kept about them were altered, by a person or by a fault of the disk; assessments made from this hour cannot be relied on.";
 

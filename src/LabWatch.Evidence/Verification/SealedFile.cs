@@ -7,7 +7,7 @@ using Microsoft.Data.Sqlite;
 namespace LabWatch.Evidence.Verification;
 
 /// <summary>The database of the readings, opened for reading alone, as the bytes that lie in it.</summary>
-internal sealed class SealedFile : IDisposable
+internal sealed class SealedFile : ISealedParts
 {
     private const string PartColumns = "id, source_id, hour, part, readings, last_change, sealed_at, digest";
 

@@ -299,7 +299,11 @@ internal sealed class InfluxReadingStore : IReadingStore, IReadingSealer, IReadi
         try
         {
             int added = await _sealer.SealAsync(source, hour, CancellationToken.None);
-            _session.Open.Remove((source, hour));
+            lock (_head.Sync)
+            {
+                _session.Open.Remove((source, hour));
+            }
+
             return added > 0 ? 1 : 0;
         }
         catch (StoreUnavailableException)

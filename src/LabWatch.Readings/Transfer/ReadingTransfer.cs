@@ -1,7 +1,9 @@
+using System.Data.Common;
 using System.Security.Cryptography;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
+using LabWatch.Readings.Engine;
 using LabWatch.Readings.Quarantine;
 
 namespace LabWatch.Readings.Transfer;
@@ -14,6 +16,35 @@ public static class ReadingTransfer
 {
     private const int ReadingsInCommit = 20_000;
     private const int ReadingsBeforeSealing = 1_000_000;
+
+    /// <summary>
+    /// Copies the sealed hours and the journal as they are, where both engines keep them so and the target is empty or has a beginning of
+    /// the same: the trail's digests then hold there too. Throws <see cref="StoreUnavailableException"/> where a side does not answer.
+    /// </summary>
+    /// <param name="from">Where readings come from; nobody else may use it.</param>
+    /// <param name="to">Where they go.</param>
+    /// <param name="progress">Told of sealed parts done and parts in all.</param>
+    /// <param name="cancellationToken">Ends the copy after the transaction that is running.</param>
+    /// <returns>Sealed parts copied; null where readings have to be copied hour by hour.</returns>
+    public static long? CopyBlocks(ReadingsOptions from, ReadingsOptions to, Action<long, long>? progress, CancellationToken cancellationToken)
+    {
+        ArgumentNullException.ThrowIfNull(from);
+        ArgumentNullException.ThrowIfNull(to);
+        (StoreDialect? source, StoreDialect? target) = (ReadingEngine.Dialect(from), ReadingEngine.Dialect(to));
+        try
+        {
+            return source is null || target is null ? null : new BlockCopy(source, target).Run(progress, cancellationToken);
+        }
+        catch (Exception error) when (error is DbException or TimeoutException)
+        {
+            throw new StoreUnavailableException($"The readings cannot be copied: {error.Message}", error);
+        }
+        finally
+        {
+            source?.Close();
+            target?.Close();
+        }
+    }
 
     /// <summary>Copies all hours. Throws <see cref="StoreUnavailableException"/> where a side does not answer: start it again then.</summary>
     /// <param name="from">Where readings come from.</param>

@@ -2,6 +2,7 @@ using System.CommandLine;
 using System.Globalization;
 using LabWatch.Evidence.Verification;
 using LabWatch.Lab.Findings;
+using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Service.Backup;
 using LabWatch.Service.Configuration;
@@ -42,11 +43,11 @@ internal static class RestoreCommand
 
         using (directory)
         {
-            return Restore(parsed, data, SettingsReader.Read(configuration, data, "restore").Settings.Records, cancellationToken);
+            return Restore(parsed, data, SettingsReader.Read(configuration, data, "restore").Settings, cancellationToken);
         }
     }
 
-    private static int Restore(ParseResult parsed, string data, RecordsOptions records, CancellationToken cancellationToken)
+    private static int Restore(ParseResult parsed, string data, ServiceSettings settings, CancellationToken cancellationToken)
     {
         TextWriter output = parsed.InvocationConfiguration.Output;
         TextWriter error = parsed.InvocationConfiguration.Error;
@@ -69,10 +70,10 @@ internal static class RestoreCommand
 
         File.Delete(marker);
         output.WriteLine(string.Create(CultureInfo.InvariantCulture, $"Restored {reader.Manifest!.Files.Count} files of the backup of {reader.Manifest.At} to {data}; each has the digest that its manifest says."));
-        return Verify(parsed, data, records);
+        return Verify(parsed, data, settings.Records, settings.Readings);
     }
 
-    private static int Verify(ParseResult parsed, string data, RecordsOptions records)
+    private static int Verify(ParseResult parsed, string data, RecordsOptions records, ReadingsOptions readings)
     {
         if (records.Provider is not RecordsProvider.Sqlite || !File.Exists(records.FilePath))
         {
@@ -80,7 +81,7 @@ internal static class RestoreCommand
             return ExitCode.Success;
         }
 
-        (VerifyReport? report, IReadOnlyList<Finding> unfit) = DataVerifier.Run(new VerifyRequest(data, records, []));
+        (VerifyReport? report, IReadOnlyList<Finding> unfit) = DataVerifier.Run(new VerifyRequest(data, records, []) { Readings = readings });
         if (report is null)
         {
             FindingPrinter.Write(parsed.InvocationConfiguration.Error, unfit);

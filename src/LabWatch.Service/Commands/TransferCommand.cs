@@ -83,10 +83,18 @@ internal static class TransferCommand
     {
         TextWriter output = parsed.InvocationConfiguration.Output;
         using ProgressLine progress = new(parsed.InvocationConfiguration.Error);
+        long? parts = ReadingTransfer.CopyBlocks(fromOptions, toOptions, (done, all) => progress.Report(FormattableString.Invariant($"copying, sealed parts of {all:N0}"), done), cancellationToken);
         await using ReadingEngine from = ReadingEngine.Create(fromOptions, TimeProvider.System, NullLoggerFactory.Instance);
         await using ReadingEngine to = ReadingEngine.Create(toOptions, TimeProvider.System, NullLoggerFactory.Instance);
-        TransferCopy copy = await ReadingTransfer.CopyAsync(from, to, (done, all) => progress.Report(FormattableString.Invariant($"copying, hours of {all:N0}"), done), cancellationToken);
         int messages = ReadingEngine.ShareQuarantine(fromOptions.Engine, toOptions.Engine) ? 0 : await ReadingTransfer.CopyQuarantineAsync(from.Quarantine, to.Quarantine, cancellationToken);
+        if (parts is { } copied)
+        {
+            progress.Dispose();
+            output.WriteLine(FormattableString.Invariant($"Copied {copied:N0} sealed parts as they are, with their digests, and the running hours; {messages:N0} messages of the quarantine."));
+            return true;
+        }
+
+        TransferCopy copy = await ReadingTransfer.CopyAsync(from, to, (done, all) => progress.Report(FormattableString.Invariant($"copying, hours of {all:N0}"), done), cancellationToken);
         progress.Dispose();
         output.WriteLine(FormattableString.Invariant(
             $"Copied {copy.Readings:N0} readings: {copy.Hours:N0} hours of sources, {copy.HoursThereAlready:N0} of them were there already; {messages:N0} messages of the quarantine."));

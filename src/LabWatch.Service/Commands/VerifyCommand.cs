@@ -2,6 +2,7 @@ using System.CommandLine;
 using System.Globalization;
 using LabWatch.Evidence.Verification;
 using LabWatch.Lab.Findings;
+using LabWatch.Readings;
 using LabWatch.Records;
 using LabWatch.Records.Audit;
 using LabWatch.Service.Configuration;
@@ -30,7 +31,7 @@ internal static class VerifyCommand
     private static int Run(ParseResult parsed)
     {
         string data = Path.GetFullPath(parsed.GetValue(CommonOptions.Data)?.FullName ?? DataDirectory.DefaultPath("labwatch"));
-        (RecordsOptions? options, IReadOnlyList<Finding> findings) = Options(parsed, data);
+        (RecordsOptions? options, ReadingsOptions? readings, IReadOnlyList<Finding> findings) = Options(parsed, data);
         if (options is null || findings.Count > 0)
         {
             FindingPrinter.Write(parsed.InvocationConfiguration.Error, findings);
@@ -38,7 +39,7 @@ internal static class VerifyCommand
         }
 
         using ProgressLine progress = new(parsed.InvocationConfiguration.Error);
-        (VerifyReport? report, IReadOnlyList<Finding> unfit) = DataVerifier.Run(new VerifyRequest(data, options, Noted(parsed)), progress.Report);
+        (VerifyReport? report, IReadOnlyList<Finding> unfit) = DataVerifier.Run(new VerifyRequest(data, options, Noted(parsed)) { Readings = readings }, progress.Report);
         progress.Dispose();
         if (report is null)
         {
@@ -56,19 +57,21 @@ internal static class VerifyCommand
         return report.IsClean ? ExitCode.Success : ExitCode.TamperingFound;
     }
 
-    private static (RecordsOptions? Options, IReadOnlyList<Finding> Findings) Options(ParseResult parsed, string data)
+    private static (RecordsOptions? Options, ReadingsOptions? Readings, IReadOnlyList<Finding> Findings) Options(ParseResult parsed, string data)
     {
         (Microsoft.Extensions.Configuration.IConfigurationRoot? configuration, IReadOnlyList<Finding> unreadable) = SettingsReader.Load(parsed.GetValue(CommonOptions.Config)?.FullName);
         if (configuration is null)
         {
-            return (null, unreadable);
+            return (null, null, unreadable);
         }
 
-        RecordsOptions options = SettingsReader.Read(configuration, data, "verify").Settings.Records;
-        return options.Validate() is { Count: > 0 } wrong ? (null, wrong)
-            : !Directory.Exists(data) ? (null, [Missing("The directory is not there.", data)])
-            : options.Provider is RecordsProvider.Sqlite && !File.Exists(options.FilePath) ? (null, [Missing($"There is no {RecordsOptions.FileName} in the directory.", data)])
-            : (options, []);
+        ServiceSettings settings = SettingsReader.Read(configuration, data, "verify").Settings;
+        RecordsOptions options = settings.Records;
+        return options.Validate() is { Count: > 0 } wrong ? (null, null, wrong)
+            : settings.Readings.Validate() is { Count: > 0 } wrongReadings ? (null, null, wrongReadings)
+            : !Directory.Exists(data) ? (null, null, [Missing("The directory is not there.", data)])
+            : options.Provider is RecordsProvider.Sqlite && !File.Exists(options.FilePath) ? (null, null, [Missing($"There is no {RecordsOptions.FileName} in the directory.", data)])
+            : (options, settings.Readings, []);
     }
 
     private static Finding Missing(string message, string data) =>

@@ -60,6 +60,37 @@ public sealed class TransferTests(PostgreSqlServer postgres, InfluxServer influx
         }
     }
 
+    [Theory]
+    [InlineData(ReadingsEngine.Sqlite, ReadingsEngine.PostgreSql)]
+    [InlineData(ReadingsEngine.PostgreSql, ReadingsEngine.Sqlite)]
+    public async Task Sealed_hours_keep_their_digests_between_a_file_and_PostgreSql_and_both_go_on(ReadingsEngine one, ReadingsEngine other)
+    {
+        ReadingsOptions options = await OptionsAsync();
+        (ReadingsOptions from, ReadingsOptions to) = (options with { Engine = one }, options with { Engine = other });
+        await FillAsync(from);
+        Assert.Equal(6, ReadingTransfer.CopyBlocks(from, to, null, Token));
+        Assert.Equal(0, ReadingTransfer.CopyBlocks(from, to, null, Token));
+        await using (ReadingEngine source = Open(from), target = Open(to))
+        {
+            Assert.Equal((6, 0, 0), await CheckAsync(source, target));
+            Assert.Equal(await SealsAsync(source), await SealsAsync(target));
+            Assert.Equal(await source.Store.NewestAsync(Fir, Token), await target.Store.NewestAsync(Fir, Token));
+            Assert.Equal((await source.Store.ChangesAsync(0, Token)).Change, (await target.Store.ChangesAsync(0, Token)).Change);
+            Reading late = new("late", Start + TimeSpan.FromSeconds(5), 5);
+            await source.Store.AppendAsync([new ReadingPack(Fir, Start, [late])], Token);
+            await source.Sealer.SealEverythingAsync(Token);
+        }
+
+        Assert.Equal(1, ReadingTransfer.CopyBlocks(from, to, null, Token));
+        await using (ReadingEngine source = Open(from), target = Open(to))
+        {
+            Assert.Equal((6, 0, 0), await CheckAsync(source, target));
+            await target.Store.AppendAsync([new ReadingPack(Yew, Start, [new Reading("own", Start, 1)])], Token);
+        }
+
+        Assert.Null(ReadingTransfer.CopyBlocks(from, to, null, Token));
+    }
+
     [Fact]
     public async Task Another_value_in_the_target_stays_and_is_reported()
     {
@@ -88,6 +119,15 @@ public sealed class TransferTests(PostgreSqlServer postgres, InfluxServer influx
             await Assert.ThrowsAsync<StoreUnavailableException>(async () => await ReadingTransfer.CopyAsync(source, target, null, Token));
         }
     }
+
+    private static async Task<(long Hours, int Different, long Others)> CheckAsync(ReadingEngine source, ReadingEngine target)
+    {
+        TransferCheck check = await ReadingTransfer.VerifyAsync(source.Store, target.Store, null, Token);
+        return (check.Hours, check.Different.Count, check.OthersHours);
+    }
+
+    private static async Task<IEnumerable<(long Seal, string Digest)>> SealsAsync(ReadingEngine engine) =>
+        (await engine.Store.SealedHoursAsync(0, 100, Token)).Select(one => (one.Seal, Convert.ToHexString(one.Digest.Span)));
 
     private static ReadingEngine Open(ReadingsOptions options) => ReadingEngine.Create(options, TimeProvider.System, NullLoggerFactory.Instance);
 

@@ -66,6 +66,7 @@ public sealed class DatabaseDownTests(PostgreSqlServer postgres, InfluxServer in
         fixture.Environment["LABWATCH__Readings__InfluxDb__WritePath"] = options.InfluxDb.WritePath;
         fixture.Environment["LABWATCH__Readings__InfluxDb__Database"] = options.InfluxDb.Database;
         fixture.Environment["LABWATCH__Readings__InfluxDb__RequestTimeout"] = "00:00:03";
+        fixture.Environment["LABWATCH__Readings__QuietPeriod"] = "00:00:01";
         await fixture.StartAsync(Token);
         await using PersistentDevice device = new(fixture.BrokerPort, "lab/sample/fir", "well-1", first);
         device.Start();
@@ -89,6 +90,7 @@ public sealed class DatabaseDownTests(PostgreSqlServer postgres, InfluxServer in
 
         await device.FinishAsync(Patience);
         await Poll.UntilAsync("the spool is empty", () => IsSpoolEmptyAsync(fixture), Patience, Token, () => fixture.Service.Output);
+        await Poll.UntilAsync("the trail has the sealed hour", () => IsSealedAsync(fixture), Patience, Token, () => fixture.Service.Output);
         await fixture.Service.StopAsync(Token);
         (int lost, int doubled) = await CountAsync(options with { DataDirectory = fixture.Data }, device, first);
         foreach ((string name, _, _) in faults)
@@ -99,6 +101,11 @@ public sealed class DatabaseDownTests(PostgreSqlServer postgres, InfluxServer in
         }
 
         Assert.Equal((0, 0), (lost, doubled));
+        await SucceedsAsync(fixture, "verify");
+        await SucceedsAsync(fixture, "transfer", "--from", options.Engine.ToString().ToLowerInvariant(), "--to", "sqlite");
+        fixture.Environment["LABWATCH__Readings__Engine"] = "sqlite";
+        (lost, doubled) = await CountAsync(options with { DataDirectory = fixture.Data, Engine = ReadingsEngine.Sqlite }, device, first);
+        Assert.Equal((0, 0), (lost, doubled));
 
         async Task MoreAsync(string when, int count)
         {
@@ -108,6 +115,18 @@ public sealed class DatabaseDownTests(PostgreSqlServer postgres, InfluxServer in
 
         async Task StoredAsync(long time) =>
             await Poll.UntilAsync("the readings are in the database", async () => await IsStoredAsync(fixture, time), Patience, Token, () => fixture.Service.Output);
+    }
+
+    private static async Task SucceedsAsync(ServiceFixture fixture, params string[] command)
+    {
+        (int code, string output) = await LabWatchProcess.RunAsync([.. command, "--data", fixture.Data], Token, fixture.Environment);
+        Assert.True(code == 0, output);
+    }
+
+    private static async Task<bool> IsSealedAsync(ServiceFixture fixture)
+    {
+        using HttpResponseMessage answer = await fixture.Service.Client.GetAsync(new Uri("api/v1/audit?action=hour-sealed&count=1", UriKind.Relative), Token);
+        return (await answer.Content.ReadAsStringAsync(Token)).Contains("hour/fir/", StringComparison.Ordinal);
     }
 
     private static async Task<bool> IsSpoolEmptyAsync(ServiceFixture fixture)

@@ -24,7 +24,8 @@ public abstract class ReadingStoreContract : IAsyncLifetime
 
     public virtual async ValueTask DisposeAsync()
     {
-        await Store.DisposeAsync();
+        // There is none where the test was skipped.
+        await ((IReadingStore?)Store is { } store ? store.DisposeAsync() : ValueTask.CompletedTask);
         GC.SuppressFinalize(this);
     }
 
