@@ -3,6 +3,7 @@ using LabWatch.Intake.Diagnostics;
 using LabWatch.Lab.Identity;
 using LabWatch.Records.Accounts;
 using LabWatch.Service.Api.Access;
+using LabWatch.Tests.Api.Fakes;
 using Microsoft.Extensions.DependencyInjection;
 
 namespace LabWatch.Tests.Api;

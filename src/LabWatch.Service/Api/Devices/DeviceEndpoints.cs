@@ -35,10 +35,10 @@ internal static class DeviceEndpoints
             .ProducesProblem(StatusCodes.Status404NotFound);
     }
 
-    private static Ok<DeviceListView> List(IDeviceAccounts accounts) => TypedResults.Ok(new DeviceListView([.. accounts.List().Select(DeviceView.Of)]));
+    private static Ok<DeviceAccountListView> List(IDeviceAccounts accounts) => TypedResults.Ok(new DeviceAccountListView([.. accounts.List().Select(DeviceAccountView.Of)]));
 
-    private static async Task<Results<Created<DeviceAnswer>, ProblemHttpResult>> AddAsync(
-        DeviceRequest request, HttpContext http, IDeviceAccounts accounts, IAuditLedger trail, ILabSnapshotSource lab, TimeProvider labClock, CancellationToken cancellationToken)
+    private static async Task<Results<Created<DeviceAccountAnswer>, ProblemHttpResult>> AddAsync(
+        DeviceAccountRequest request, HttpContext http, IDeviceAccounts accounts, IAuditLedger trail, ILabSnapshotSource lab, TimeProvider labClock, CancellationToken cancellationToken)
     {
         string name = (request.Name ?? string.Empty).Trim();
         List<Finding> findings = [];
@@ -69,7 +69,7 @@ internal static class DeviceEndpoints
         await trail.AppendAsync(
             new AuditNote(lab.Current.Site.Id, now, by, "device-account-created", "device/" + name, new JsonObject { ["source"] = source.ToString() }, null), cancellationToken);
         return accounts.Add(name, source, by, now) is { } password
-            ? TypedResults.Created($"/api/v1/devices/{name}", new DeviceAnswer(DeviceView.Of(new DeviceAccount(name, source.ToString(), now, by, null)), password))
+            ? TypedResults.Created($"/api/v1/devices/{name}", new DeviceAccountAnswer(DeviceAccountView.Of(new DeviceAccount(name, source.ToString(), now, by, null)), password))
             : Refusals.Conflict("name-taken", "This name was given before; the trail knows that device by it.", name, "Choose another name.");
     }
 

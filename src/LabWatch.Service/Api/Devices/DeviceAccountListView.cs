@@ -1,0 +1,4 @@
+namespace LabWatch.Service.Api.Devices;
+
+/// <summary>Accounts of devices.</summary>
+internal sealed record DeviceAccountListView(IReadOnlyList<DeviceAccountView> Items);

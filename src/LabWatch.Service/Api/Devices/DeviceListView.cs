@@ -1,4 +1,0 @@
-namespace LabWatch.Service.Api.Devices;
-
-/// <summary>Accounts of devices.</summary>
-internal sealed record DeviceListView(IReadOnlyList<DeviceView> Items);
