@@ -51,6 +51,7 @@ public sealed class EndpointAccessTests
         ["delete /api/v1/devices/{name}"] = "manage-accounts",
         ["get /api/v1/sources"] = "read",
         ["get /api/v1/sources/{id}"] = "read",
+        ["get /api/v1/sources/{id}/balance"] = "read",
         ["get /api/v1/sources/{id}/profile"] = "read",
         ["get /api/v1/sources/{id}/readings"] = "read",
         ["get /api/v1/assessments"] = "read",

@@ -90,6 +90,16 @@ internal sealed class BalanceBlocks
             span, observed, celsius, Means(First(source, ChannelQuantity.AmbientTemperature)!), Optional(ChannelQuantity.SetPoint), Optional(ChannelQuantity.Shutter), Optional(ChannelQuantity.PurgeFlow));
     }
 
+    /// <summary>Blocks of parts that follow one another.</summary>
+    public static BalanceBlocks Join(IReadOnlyList<BalanceBlocks> parts) => new(
+        new(parts[0].Span.Start, parts[^1].Span.End),
+        [.. parts.SelectMany(part => part._observed)],
+        [.. parts.SelectMany(part => part._celsius)],
+        [.. parts.SelectMany(part => part._air)],
+        parts[0].HasSetPoint ? [.. parts.SelectMany(part => part._setPoint)] : null,
+        parts[0].HasShutter ? [.. parts.SelectMany(part => part._shutter)] : null,
+        parts[0].HasFlow ? [.. parts.SelectMany(part => part._flow)] : null);
+
     /// <summary>Time of the middle of a block.</summary>
     public Instant At(int block) => Span.Start + (block * Length) + (Length / 2);
 

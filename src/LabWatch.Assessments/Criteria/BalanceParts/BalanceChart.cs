@@ -18,7 +18,7 @@ internal sealed record BalanceChart(double Ewma, bool EwmaSignals, double CusumU
     public const double Lambda = 0.1;
 
     /// <summary>Limits of the average in its standard deviations: mean run length 52 560 values or more.</summary>
-    public const double EwmaLimit = 4.05;
+    public const double EwmaLimit = 4.2;
 
     /// <summary>Reference value of the sums: half of the shift to be found.</summary>
     public const double Reference = 0.5;

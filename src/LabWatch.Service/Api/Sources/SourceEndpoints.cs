@@ -33,6 +33,15 @@ internal static class SourceEndpoints
             .ProducesProblem(StatusCodes.Status400BadRequest)
             .ProducesProblem(StatusCodes.Status404NotFound)
             .ProducesProblem(StatusCodes.Status503ServiceUnavailable);
+        group.MapGet("{id}/balance", BalanceEndpoint.LearnAsync)
+            .WithName("LearnBalance")
+            .WithSummary("A baseline of heater power, or of a redundant thermometer, learnt from readings of a span")
+            .WithDescription(
+                "The regression that the criteria heater-balance and reference-agreement compare with, in the form of the lab file's member balances: look at it, then put it on record there. "
+                + "channel is the heater power or a well thermometer that is not the reference; from and until enclose 1 to 31 days in which the source was in order.")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound)
+            .ProducesProblem(StatusCodes.Status503ServiceUnavailable);
         group.MapGet("{id}/readings", ReadingEndpoints.ReadAsync)
             .WithName("GetReadings")
             .WithSummary("Readings of one channel of a source, raw or reduced to buckets")
