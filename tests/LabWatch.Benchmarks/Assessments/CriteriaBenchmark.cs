@@ -28,8 +28,11 @@ internal static class CriteriaBenchmark
         int sources = args.Length > 0 ? int.Parse(args[0], CultureInfo.InvariantCulture) : 200;
         BenchSite site = BenchSite.Of(sources, BenchSite.Morning);
         TimeWindow span = new(BenchSite.Morning, BenchSite.Morning + TimeSpan.FromHours(3));
-        List<ReadingPack> packs = [.. BenchSite.Packs(span.Start, span.Duration)];
-        Evaluate(site, BenchSite.Windows(packs, span), span.End);
+        // The longest criterion looks at a day; planner and store take the last hours, in which each criterion has a window.
+        TimeWindow day = new(span.End - TimeSpan.FromHours(25), span.End);
+        List<ReadingPack> all = [.. BenchSite.Packs(day.Start, day.Duration)];
+        Evaluate(site, BenchSite.Windows(all, day), span.End);
+        List<ReadingPack> packs = [.. all.Where(pack => span.Contains(pack.Arrival))];
         await PlannerBench.CycleAsync(site, packs, span);
         return 0;
     }
