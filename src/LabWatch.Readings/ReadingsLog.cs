@@ -25,6 +25,12 @@ internal static partial class ReadingsLog
     [LoggerMessage(2008, LogLevel.Warning, "The commit mark beside the readings could not be written; lost commits would be noticed later.")]
     public static partial void MarkFailed(ILogger log, Exception error);
 
+    [LoggerMessage(2020, LogLevel.Information, "All {Parts} sealed parts were compared with their digests; {Wrong} differ.")]
+    public static partial void IntegrityChecked(ILogger log, long parts, long wrong);
+
+    [LoggerMessage(2021, LogLevel.Warning, "The comparison of sealed parts with their digests stopped and will begin again: {Reason}")]
+    public static partial void IntegrityFailed(ILogger log, string reason);
+
     [LoggerMessage(2007, LogLevel.Critical, "The readings could not be opened and were moved to {Target}; a new store takes what comes now.")]
     public static partial void WholeSetAside(ILogger log, string target, Exception error);
 

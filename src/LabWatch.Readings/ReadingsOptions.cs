@@ -32,6 +32,12 @@ public sealed record ReadingsOptions
     /// <summary>How large the journal may grow, in bytes, before what it holds is sealed early. 1 MiB to 16 GiB; 128 MiB unless stated.</summary>
     public long JournalBytesLimit { get; init; } = 128L << 20;
 
+    /// <summary>How often all sealed parts are compared with their digests. 1 h to 365 d; 1 d unless stated.</summary>
+    public TimeSpan IntegrityCheckEvery { get; init; } = TimeSpan.FromDays(1);
+
+    /// <summary>How many years raw readings must be kept, by quantity; readings without a rule are kept for ever. Only <c>labwatch retention</c> removes anything.</summary>
+    public IReadOnlyList<RetentionRule> Retention { get; init; } = [];
+
     /// <summary>How many refused messages are kept. 1 to 1,000,000; 10,000 unless stated.</summary>
     public int QuarantineCountLimit { get; init; } = 10_000;
 
@@ -45,6 +51,17 @@ public sealed record ReadingsOptions
         if (string.IsNullOrWhiteSpace(DataDirectory))
         {
             findings.Add(new Finding("missing", nameof(DataDirectory), "The folder for readings is not stated.", null, "State a folder on a local disk."));
+        }
+
+        Check(findings, nameof(IntegrityCheckEvery), IntegrityCheckEvery.TotalHours, 1, 365 * 24, "hours");
+        for (int i = 0; i < Retention.Count; i++)
+        {
+            Check(findings, FormattableString.Invariant($"{nameof(Retention)}:{i}:{nameof(RetentionRule.Years)}"), Retention[i].Years, 1, 200, "years");
+        }
+
+        if (Retention.Select(rule => rule.Quantity).Distinct().Count() < Retention.Count)
+        {
+            findings.Add(new Finding("doubled", nameof(Retention), "Two rules are about the same quantity.", null, "Keep one of them."));
         }
 
         Check(findings, nameof(QuietPeriod), QuietPeriod.TotalSeconds, 1, 86_400, "seconds");

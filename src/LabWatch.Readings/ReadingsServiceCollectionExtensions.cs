@@ -39,6 +39,7 @@ public static class ReadingsServiceCollectionExtensions
 
         services.TryAddSingleton<IQuarantine, SqliteQuarantine>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, SealingService>());
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<IHostedService, IntegrityService>());
         return services;
     }
 

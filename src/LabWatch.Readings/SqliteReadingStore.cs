@@ -14,7 +14,7 @@ namespace LabWatch.Readings;
 /// Readings in a SQLite file: every commit is forced to the disk, hours that are over lie in sealed blocks. One process owns the file;
 /// others may read it. Opens on first use, so that a start does not depend on the disk.
 /// </summary>
-public sealed class SqliteReadingStore : IReadingStore, IReadingSealer, IReadingStoreHealth
+public sealed class SqliteReadingStore : IReadingStore, IReadingSealer, IReadingStoreHealth, IReadingIntegrity
 {
     /// <summary>Name of the database in the data directory.</summary>
     public const string FileName = "readings.db";
@@ -73,6 +73,10 @@ public sealed class SqliteReadingStore : IReadingStore, IReadingSealer, IReading
     /// <inheritdoc/>
     public ValueTask<IReadOnlyList<SealedHour>> SealedHoursAsync(long afterSeal, int count, CancellationToken cancellationToken) =>
         _engine.SealedHoursAsync(afterSeal, count, cancellationToken);
+
+    /// <inheritdoc/>
+    public ValueTask<IntegrityBatch> CheckSealedAsync(long afterSeal, int count, CancellationToken cancellationToken) =>
+        _engine.CheckSealedAsync(afterSeal, count, cancellationToken);
 
     /// <inheritdoc/>
     public Task<int> SealDueAsync(CancellationToken cancellationToken) => _engine.SealDueAsync(cancellationToken);

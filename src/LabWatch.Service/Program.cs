@@ -16,6 +16,7 @@ RootCommand root = new("Watches the reference blackbody sources of a calibration
     VerifyCommand.Create(),
     BackupCommand.Create(),
     RestoreCommand.Create(),
+    RetentionCommand.Create(),
     RecomputeCommand.Create(),
     AccountCommand.Create(),
     CalcCommand.Create(),

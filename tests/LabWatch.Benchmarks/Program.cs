@@ -31,9 +31,15 @@ switch (args.FirstOrDefault())
         return StatisticsBenchmark.Run(rest);
     case "store":
         return await StoreBenchmark.RunAsync(rest);
+    case "store-memory":
+        return await YearBenchmark.MemoryAsync(rest);
+    case "store-open":
+        return await YearBenchmark.OpenAsync(rest);
+    case "store-year":
+        return await YearBenchmark.RunAsync(rest);
     case "trail":
         return await TrailBenchmark.RunAsync(rest);
     default:
-        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, engine, evaluation, hazard, intake, profile, simulator, statistics, store, trail.");
+        Console.Error.WriteLine("Give the name of a benchmark: cavity, criteria, engine, evaluation, hazard, intake, profile, simulator, statistics, store, store-memory, store-year, trail.");
         return 1;
 }

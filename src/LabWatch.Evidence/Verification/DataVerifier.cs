@@ -22,6 +22,7 @@ public sealed class DataVerifier
     private readonly TrailFindings _findings = new();
     private readonly SortedDictionary<string, long> _examined = new(StringComparer.Ordinal);
     private readonly Dictionary<int, HourFacts> _hours = [];
+    private readonly HashSet<(string Before, string After)> _removals = [];
     private readonly List<string> _notes = [];
     private long _readings;
 
@@ -93,6 +94,10 @@ public sealed class DataVerifier
         {
             _hours[place] = facts;
         }
+        else if (subject.StartsWith("removal/"u8))
+        {
+            _removals.UnionWith(RemovalNote.Read(content));
+        }
     }
 
     private void CheckHeads(TrailVerifier verifier, IReadOnlyDictionary<string, AuditHead>? kept)
@@ -140,9 +145,14 @@ public sealed class DataVerifier
         try
         {
             using ISealedParts file = isFile ? SealedFile.Open(path, _inUse) : OpenSchema(_request.Readings!);
-            HourCheck check = new(file, verifier.Facts, _hours, _findings);
+            HourCheck check = new(file, verifier.Facts, _hours, _removals, _findings);
             check.Run(count => _progress("block", count));
             _readings = check.Readings;
+            if (check.Thinned > 0)
+            {
+                _notes.Add(FormattableString.Invariant($"Readings of {check.Thinned} sealed parts were removed by the rules of retention, and the trail says so; what is left of them is as recorded, their summaries cannot be compared any more."));
+            }
+
             if (check.Pending > 0)
             {
                 _notes.Add(FormattableString.Invariant($"{check.Pending} sealed parts are newer than the trail; the service enters them within seconds when it runs, and until then they are not covered."));

@@ -11,7 +11,7 @@ using LabWatch.Records.Audit.Verification;
 namespace LabWatch.Evidence.Verification;
 
 /// <summary>Checks every sealed part of every source-hour: its bytes against the trail, its columns and its summary against its bytes.</summary>
-internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDictionary<int, HourFacts> told, TrailFindings findings)
+internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDictionary<int, HourFacts> told, IReadOnlySet<(string Before, string After)> removals, TrailFindings findings)
 {
     private const string Altered = "The sealed readings or what is kept about them were altered, by a person or by a fault of the disk; assessments made from this hour cannot be relied on.";
 
@@ -22,6 +22,9 @@ internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDi
 
     /// <summary>Parts that were sealed after the last entry about one: the service enters them within seconds when it runs.</summary>
     public long Pending { get; private set; }
+
+    /// <summary>Parts of which readings were removed as the trail says.</summary>
+    public long Thinned { get; private set; }
 
     /// <summary>Readings that were decoded.</summary>
     public long Readings { get; private set; }
@@ -61,6 +64,12 @@ internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDi
     private void Examine(StoredPart part, SourceKey? named, long last, bool hasSummary)
     {
         (byte[]? data, string? unreadable) = Data("block", "id", part.Id);
+        if (data is not null && part.Digest.Length == SHA256.HashSizeInBytes && removals.Contains((Convert.ToHexStringLower(part.Digest), Convert.ToHexStringLower(SHA256.HashData(data)))))
+        {
+            ExamineThinned(part, named, data);
+            return;
+        }
+
         (SealedBlock? block, List<ReadingSeries> series, string? reason) = data is null ? (null, [], unreadable) : BlockExaminer.Decode(data);
         Readings += block?.Readings ?? 0;
         // What stands inside the sealed bytes is what their digest proves; the columns only say it again.
@@ -86,6 +95,40 @@ internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDi
         if (block is not null)
         {
             CheckSummary(part, series, block.Header.Hour, where, hasSummary);
+        }
+    }
+
+    /// <summary>What is left is proved by the entry about the removal; that it was sealed, by the entry about the hour and the digest kept beside.</summary>
+    private void ExamineThinned(StoredPart part, SourceKey? named, byte[] data)
+    {
+        Thinned++;
+        SealedBlock? block = data.Length == 0 ? null : BlockExaminer.Decode(data).Block;
+        SourceKey source = block?.Header.Source ?? named ?? default;
+        string subject = HourNote.Subject(source, new Instant(part.Hour), unchecked((int)part.Part));
+        string where = NameOf(subject, part.Id);
+        Readings += block?.Readings ?? 0;
+        int place = facts.Find(Encoding.UTF8.GetBytes(source.Site ?? string.Empty), Encoding.UTF8.GetBytes(subject));
+        if (place < 0)
+        {
+            Add(TrailCodes.RowAdded, "block", where, null, "No entry of the trail tells of the sealed part.");
+            return;
+        }
+
+        ref EntryFacts entry = ref facts.Entries[place];
+        if (entry.IsClaimed)
+        {
+            Add(TrailCodes.RowAdded, "block", where, null, "The sealed part is there a second time.");
+        }
+        else if (entry.Record != Vector256.Create(part.Digest))
+        {
+            Add(TrailCodes.BlockAltered, "block", where, "digest", "The digest kept of the sealed part is not the one that was recorded.");
+        }
+
+        entry.IsClaimed = true;
+        CompareFacts(part, place, where);
+        if (told.TryGetValue(place, out HourFacts fact))
+        {
+            Compare(where, "readings", part.Readings, fact.Readings);
         }
     }
 
@@ -126,6 +169,11 @@ internal sealed class HourCheck(ISealedParts file, TrailFacts facts, IReadOnlyDi
         }
 
         entry.IsClaimed = true;
+        CompareFacts(part, place, where);
+    }
+
+    private void CompareFacts(StoredPart part, int place, string where)
+    {
         if (told.TryGetValue(place, out HourFacts fact))
         {
             Compare(where, "id", part.Id, fact.Seal);

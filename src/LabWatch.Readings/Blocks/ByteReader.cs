@@ -25,6 +25,16 @@ internal ref struct ByteReader(ReadOnlySpan<byte> bytes)
         return span;
     }
 
+    /// <summary>Passes over zero bytes, at most a number of them; gives how many there were.</summary>
+    public int SkipZeros(int most)
+    {
+        ReadOnlySpan<byte> ahead = _bytes.Slice(_position, Math.Min(most, Remaining));
+        int count = ahead.IndexOfAnyExcept((byte)0);
+        count = count < 0 ? ahead.Length : count;
+        _position += count;
+        return count;
+    }
+
     public byte ReadByte() => Take(1)[0];
 
     public uint ReadUInt32() => BinaryPrimitives.ReadUInt32LittleEndian(Take(4));

@@ -45,6 +45,14 @@ internal static class TimeColumn
         long step = 0;
         for (int i = 0; i < times.Length; i++)
         {
+            if (step > 0 && reader.SkipZeros(times.Length - i) is > 0 and int run)
+            {
+                // Readings at even steps, which most are: no change of the step, one zero byte each.
+                i = FillEven(times, i, run, ref before, step, unit, hour);
+                last = times[i];
+                continue;
+            }
+
             unchecked
             {
                 step += reader.ReadSigned();
@@ -59,5 +67,26 @@ internal static class TimeColumn
 
             last = times[i];
         }
+    }
+
+    private static int FillEven(Span<long> times, int from, int count, ref long before, long step, long unit, long hour)
+    {
+        // The last of them decides whether all lie in the hour; sums that wrap are far outside.
+        Int128 end = ((Int128)before + ((Int128)step * count)) * unit;
+        if (end >= Lab.Time.Instant.MicrosecondsPerHour || end < 0 || before < 0)
+        {
+            throw new DamagedDataException("Times do not rise inside their hour.");
+        }
+
+        long time = hour + (before * unit);
+        long every = step * unit;
+        foreach (ref long one in times.Slice(from, count))
+        {
+            time += every;
+            one = time;
+        }
+
+        before += step * count;
+        return from + count - 1;
     }
 }

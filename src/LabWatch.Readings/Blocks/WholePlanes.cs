@@ -43,6 +43,12 @@ internal static class WholePlanes
         }
 
         ReadOnlySpan<byte> planes = reader.Take(checked(width * values.Length));
+        if (predictor < 2 && width is 1 or 2)
+        {
+            ReadNarrow(planes, values, predictor, origin, power);
+            return;
+        }
+
         long before = origin;
         long beforeThat = origin;
         for (int i = 0; i < values.Length; i++)
@@ -57,6 +63,22 @@ internal static class WholePlanes
             long whole = unchecked(predicted + Zigzag.Decode(rest));
             values[i] = whole / power;
             beforeThat = before;
+            before = whole;
+        }
+    }
+
+    // What nearly every column of telemetry is: one or two bytes a value, from the one before or from the middle.
+    private static void ReadNarrow(ReadOnlySpan<byte> planes, Span<double> values, int predictor, long origin, double power)
+    {
+        ReadOnlySpan<byte> low = planes[..values.Length];
+        ReadOnlySpan<byte> high = planes[values.Length..];
+        long before = origin;
+        for (int i = 0; i < values.Length; i++)
+        {
+            uint rest = high.IsEmpty ? low[i] : low[i] | ((uint)high[i] << 8);
+            long difference = (rest >> 1) ^ -(long)(rest & 1);
+            long whole = unchecked((predictor == 0 ? origin : before) + difference);
+            values[i] = whole / power;
             before = whole;
         }
     }

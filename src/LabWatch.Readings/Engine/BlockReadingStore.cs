@@ -13,7 +13,7 @@ namespace LabWatch.Readings.Engine;
 /// The engine of sealed source-hours over a database: commits go to a journal and to memory, hours that are over are sealed by
 /// <see cref="SealDueAsync"/> beside them, reads take both. Opens on first use.
 /// </summary>
-internal sealed class BlockReadingStore : IReadingStore, IReadingSealer, IReadingStoreHealth
+internal sealed class BlockReadingStore : IReadingStore, IReadingSealer, IReadingStoreHealth, IReadingIntegrity
 {
     private readonly ReadingsOptions _options;
     private readonly StoreDialect _dialect;
@@ -92,6 +92,10 @@ internal sealed class BlockReadingStore : IReadingStore, IReadingSealer, IReadin
             _writing.Release();
         }
     }
+
+    /// <inheritdoc/>
+    public ValueTask<IntegrityBatch> CheckSealedAsync(long afterSeal, int count, CancellationToken cancellationToken) =>
+        ReadAsync(() => new IntegrityCheck(_readers, _incidents).Run(afterSeal, count, cancellationToken), cancellationToken);
 
     public Task<int> SealDueAsync(CancellationToken cancellationToken) => Task.Run(() => _sealer.PassAsync(everything: false, cancellationToken), cancellationToken);
 

@@ -56,6 +56,12 @@ internal sealed class HourlyRollUp(StoreWriter writer, HeadState head, StoreInci
 
     private void TakeHour(long id, HeadSource source, long hour, int part)
     {
+        if (part > 0 && writer.Connection.Number(null, StoreDialect.ThinnedOfHour, source.Id, hour) > 0)
+        {
+            // Readings of this hour were removed: the row from the time when they were there is the better one.
+            return;
+        }
+
         foreach (ChannelSummary channel in (part == 0 ? OfSummary(id, hour) : null) ?? writer.FoldHour(source.Id, hour))
         {
             if (channel.Rows.Count > 0 && source.Find(channel.Channel) is { } known)

@@ -13,7 +13,8 @@ internal sealed class Recovery(StoreDialect dialect, StoreWriter writer, HeadSta
 {
     private readonly List<JournalReading> _readings = [];
     private readonly Dictionary<(int Source, long Hour), (long Change, long Parts)> _sealedThrough = [];
-    private readonly HashSet<(HeadHour Hour, HeadChannel Channel)> _touched = [];
+    private readonly List<(HeadHour Hour, HeadChannel Channel)> _touched = [];
+    private (HeadSource Source, long Start, HeadHour? Hour, long Through)? _recent;
 
     /// <summary>Journal rows taken over.</summary>
     public int Rows { get; private set; }
@@ -160,26 +161,36 @@ internal sealed class Recovery(StoreDialect dialect, StoreWriter writer, HeadSta
             return;
         }
 
-        long start = new Instant(reading.Time).StartOfHour().Microseconds;
-        (long through, long parts) = SealedThrough(source, start);
-        if (change <= through)
+        if (HourOf(source, reading.Time, change) is not { } hour)
         {
             return;
         }
 
-        if (!source.Hours.TryGetValue(start, out HeadHour? hour))
-        {
-            hour = head.AddHour(source, start);
-            hour.Recover((int)parts);
-        }
-
         HeadChannel channel = source.Channels[reading.Channel];
-        HeadColumn column = head.AddColumn(hour.OpenPart(), channel.Number);
-        if (!column.TryFind(reading.Time, out _))
+        HeadColumn column = hour.Open?.Find(channel.Number) ?? head.AddColumn(hour.OpenPart(), channel.Number);
+        if (!column.TryFind(reading.Time, out _) && column.Stage(reading.Time, reading.Value, reading.Quality))
         {
-            column.Stage(reading.Time, reading.Value, reading.Quality);
             _touched.Add((hour, channel));
         }
+    }
+
+    /// <summary>The hour that a reading of a commit belongs to; null where the commit is sealed already. Most often it is that of the reading before.</summary>
+    private HeadHour? HourOf(HeadSource source, long time, long change)
+    {
+        if (_recent is not { } recent || !ReferenceEquals(recent.Source, source) || unchecked((ulong)(time - recent.Start)) >= Instant.MicrosecondsPerHour)
+        {
+            long start = new Instant(time).StartOfHour().Microseconds;
+            recent = (source, start, source.Hours.GetValueOrDefault(start), SealedThrough(source, start).Change);
+        }
+
+        if (change > recent.Through && recent.Hour is null)
+        {
+            recent.Hour = head.AddHour(source, recent.Start);
+            recent.Hour.Recover((int)SealedThrough(source, recent.Start).Parts);
+        }
+
+        _recent = recent;
+        return change <= recent.Through ? null : recent.Hour;
     }
 
     private (long Change, long Parts) SealedThrough(HeadSource source, long hour)

@@ -88,6 +88,21 @@ internal abstract class StoreDialect
 
     public const string BlocksAfter = "SELECT id, source_id, hour, part FROM block WHERE id > @id ORDER BY id LIMIT @count";
 
+    public const string BlocksToCheck =
+        "SELECT b.id, b.digest, t.digest, b.data FROM block b LEFT JOIN thinned t ON t.block_id = b.id WHERE b.id > @id ORDER BY b.id LIMIT @count";
+
+    public const string OldBlocks =
+        "SELECT b.id, b.source_id, b.hour, b.part, b.digest, b.data FROM block b WHERE b.hour < @before AND b.id > @id ORDER BY b.id LIMIT @count";
+
+    public const string SetBlockData = "UPDATE block SET data = @data WHERE id = @id";
+
+    public const string SetThinned =
+        "INSERT INTO thinned(block_id, removed_at, digest) VALUES (@id, @at, @digest) " +
+        "ON CONFLICT(block_id) DO UPDATE SET removed_at = excluded.removed_at, digest = excluded.digest";
+
+    public const string ThinnedOfHour =
+        "SELECT COUNT(*) FROM thinned t JOIN block b ON b.id = t.block_id WHERE b.source_id = @source AND b.hour = @hour";
+
     public const string Summary = "SELECT data FROM summary WHERE block_id = @id";
 
     public const string Hourly = "SELECT data FROM hourly WHERE source_id = @source AND channel = @channel AND day = @day";

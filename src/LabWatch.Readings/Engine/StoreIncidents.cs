@@ -19,6 +19,7 @@ internal sealed class StoreIncidents(string location, TimeProvider clock, ILogge
     public const string MissingKind = "missing";
     public const string SummaryKind = "summary";
     public const string FileKind = "file";
+    public const string DigestKind = "digest";
 
     public IReadOnlyList<Finding> Findings => _known.OrderBy(one => one.Key.Kind, StringComparer.Ordinal).ThenBy(one => one.Key.Reference)
         .Select(one => new Finding(

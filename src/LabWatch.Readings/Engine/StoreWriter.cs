@@ -184,7 +184,7 @@ internal sealed class StoreWriter(StoreDialect dialect, StoreConnection connecti
         try
         {
             using DbDataReader reader = connection.Query(StoreDialect.Block, id);
-            return reader.Read() ? SealedBlock.Open(reader.GetFieldValue<byte[]>(0)) : null;
+            return reader.Read() && reader.GetFieldValue<byte[]>(0) is { Length: > 0 } data ? SealedBlock.Open(data) : null;
         }
         catch (DamagedDataException damage)
         {

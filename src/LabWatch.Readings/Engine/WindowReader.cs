@@ -71,7 +71,14 @@ internal sealed class WindowReader(StoreDialect dialect, HeadState head, ReaderP
     {
         try
         {
-            SealedBlock block = SealedBlock.Open(reader.GetFieldValue<byte[]>(4));
+            byte[] data = reader.GetFieldValue<byte[]>(4);
+            if (data.Length == 0)
+            {
+                // Removed by retention: the hour keeps its revision, its readings are gone.
+                return true;
+            }
+
+            SealedBlock block = SealedBlock.Open(data);
             List<ReadingSeries> pieces = [];
             for (int channel = 0; channel < block.Channels.Count; channel++)
             {

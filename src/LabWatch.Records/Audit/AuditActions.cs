@@ -27,6 +27,9 @@ public static class AuditActions
     /// <summary>A sealed part of a source-hour.</summary>
     public const string HourSealed = "hour-sealed";
 
+    /// <summary>Readings were removed by the rules of retention, with the digests before and after.</summary>
+    public const string ReadingsRemoved = "readings-removed";
+
     /// <summary>The service started, with the version of the program.</summary>
     public const string ServiceStarted = "service-started";
 

@@ -14,6 +14,9 @@ internal static class DataFiles
     public const string RestoreMarker = "restore-incomplete";
 
     private static readonly string[] Databases = [RecordsOptions.FileName, "quarantine.db", SqliteReadingStore.FileName];
+    /// <summary>Device accounts with hashes of passwords, not keys of this machine.</summary>
+    private const string DeviceAccounts = "keys/devices.json";
+
     private static readonly string[] Private = ["keys/", "secrets/"];
     private static readonly string[] First = [TrailHeadFile.FileName, "readings.mark"];
     private static readonly string[] LeftOutEndings = [".lock", ".db-wal", ".db-shm", ".db-journal", ".part", ".tmp", ".partial", ".migrating"];
@@ -35,6 +38,6 @@ internal static class DataFiles
     public static bool IsDatabase(string path) => Databases.Contains(path, StringComparer.Ordinal);
 
     private static bool IsTaken(string path) =>
-        !Private.Any(folder => path.StartsWith(folder, StringComparison.Ordinal)) && path is not ("set-up-code" or RestoreMarker)
+        (path == DeviceAccounts || !Private.Any(folder => path.StartsWith(folder, StringComparison.Ordinal))) && path is not ("set-up-code" or RestoreMarker)
         && !LeftOutEndings.Any(ending => path.EndsWith(ending, StringComparison.Ordinal));
 }

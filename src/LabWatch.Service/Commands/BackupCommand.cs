@@ -37,6 +37,7 @@ internal static class BackupCommand
 
         try
         {
+            using FileStream held = BackupLock.Take(data);
             (BackupManifest manifest, string digest) = writer.Run(cancellationToken);
             output.WriteLine(string.Create(CultureInfo.InvariantCulture, $"Backed up {manifest.Files.Count} files, {manifest.Files.Sum(file => file.Bytes):N0} bytes, to {target}"));
             output.WriteLine($"SHA-256 of {BackupManifest.FileName}: {digest}");

@@ -25,7 +25,7 @@ public sealed class RegistrationTests
         Assert.Same(store, provider.GetRequiredService<IReadingSealer>());
         Assert.Same(store, provider.GetRequiredService<IReadingStoreHealth>());
         Assert.NotNull(provider.GetRequiredService<IQuarantine>());
-        IHostedService sealing = Assert.Single(provider.GetServices<IHostedService>());
+        IHostedService sealing = Assert.Single(provider.GetServices<IHostedService>(), service => service is SealingService);
         await sealing.StartAsync(Token);
         await store.AppendAsync([Pack(Fir, Noon + TimeSpan.FromHours(-2), 1, 2)], Token);
         for (int turn = 0; turn < 1000 && (await store.SealedHoursAsync(0, 10, Token)).Count == 0; turn++)

@@ -85,7 +85,7 @@ internal sealed class EntryScan(RecordsSnapshot records, TrailFacts facts, Trail
             facts.Computed[place] = right;
         }
 
-        if (read.HasRecord)
+        if (read.HasRecord || !read.IsAltered)
         {
             OnEntry?.Invoke(place, entry.Subject, entry.Content);
         }
