@@ -19,7 +19,7 @@ internal static class DataFiles
 
     private static readonly string[] Private = ["keys/", "secrets/"];
     private static readonly string[] First = [TrailHeadFile.FileName, "readings.mark"];
-    private static readonly string[] LeftOutEndings = [".lock", ".db-wal", ".db-shm", ".db-journal", ".part", ".tmp", ".partial", ".migrating"];
+    private static readonly string[] LeftOutEndings = [".lock", ".db-wal", ".db-shm", ".db-journal", ".part", ".tmp", ".partial", ".migrating", ".owner"];
 
     /// <summary>What is left out and why, for people.</summary>
     public static string KeysNote => "The directories keys (private keys of this machine) and secrets: a restored service makes new keys, so its own certificate has a new fingerprint; put the secrets there again.";
