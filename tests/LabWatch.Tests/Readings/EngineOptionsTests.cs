@@ -39,7 +39,13 @@ public sealed class EngineOptionsTests
     {
         InfluxDbReadingsOptions wrong = new()
         {
-            Url = "http://127.0.0.1", Database = "a/b/c", WritePath = "write", User = "labwatch", BatchPoints = 1, RequestTimeout = TimeSpan.Zero, Attempts = 0,
+            Url = "http://127.0.0.1",
+            Database = "a/b/c",
+            WritePath = "write",
+            User = "labwatch",
+            BatchPoints = 1,
+            RequestTimeout = TimeSpan.Zero,
+            Attempts = 0,
         };
         Assert.Equal(6, wrong.Validate("InfluxDb").Count);
     }
