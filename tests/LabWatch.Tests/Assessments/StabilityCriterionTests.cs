@@ -56,6 +56,19 @@ public sealed class StabilityCriterionTests
     }
 
     [Fact]
+    public void Allan_deviations_of_a_published_data_set_come_through_the_whole_criterion()
+    {
+        // NBS 9-point data set, NIST SP 1065 (2008), table 30: Allan deviation 91.22945 for one value in a mean, overlapping 85.95287 for two. As mK, one value each ten seconds.
+        double[] values = [892, 809, 823, 798, 671, 644, 883, 903, 677];
+        IEnumerable<Reading> readings = TestLab.WellReadings(Span.Start, Window.Start, _ => 300)
+            .Concat(values.Select((value, index) => new Reading(TestLab.Well, Window.Start + TimeSpan.FromSeconds(10 * index), 300 + (value / 1000))))
+            .Concat(TestLab.SetPoints(Span.Start, Span.End, _ => 300));
+        CriterionResult result = Evaluate(TestLab.Snapshot(), readings);
+        Assert.Equal(91.22945, Figure(result, "allan-10-s"), 5e-5);
+        Assert.Equal(85.95287, Figure(result, "allan-20-s"), 5e-5);
+    }
+
+    [Fact]
     public void A_quiet_source_passes_and_says_so_with_numbers_and_units()
     {
         CriterionResult result = Evaluate(TestLab.Snapshot(), TestLab.Run(Span.Start, Span.End));

@@ -24,6 +24,7 @@ internal static class StabilityFigures
             new(FigureName.LeftOutCount, Exact(evidence.Within.LeftOut), "1"),
             new(FigureName.OutsideCertificateCount, Exact(evidence.Within.OutsideCertificate), "1"),
         ];
+        figures.AddRange(AllanFigures.Of(evidence, verdict.Unit, factor));
         if (double.IsFinite(evidence.SetPoint.Celsius))
         {
             figures.Insert(0, new(FigureName.SetPoint, Exact(evidence.SetPoint.Celsius), "Cel"));
