@@ -64,6 +64,15 @@ public sealed record AlertsOptions
     /// <summary>Attempts under way at the same time to one notifier. Default 4, 1 to 64.</summary>
     public int ParallelAttempts { get; init; } = 4;
 
+    /// <summary>
+    /// What follows within this time on the same thing at the same source is told by summary, and people get one summary in this time at most;
+    /// 0 tells everything at once. Default 60 s.
+    /// </summary>
+    public TimeSpan GroupWindow { get; init; } = TimeSpan.FromSeconds(60);
+
+    /// <summary>Longest time for which somebody may shelve an alert. Default 24 h.</summary>
+    public TimeSpan ShelfLongest { get; init; } = TimeSpan.FromHours(24);
+
     /// <summary>How long a receiver that failed five times in a row is left alone before one attempt tests whether it is back. Default 30 s.</summary>
     public TimeSpan CircuitRest { get; init; } = TimeSpan.FromSeconds(30);
 
@@ -126,6 +135,8 @@ public sealed record AlertsOptions
         Check(findings, nameof(WebhookTimeout), WebhookTimeout.TotalSeconds, 0.1, 120, "s");
         Check(findings, nameof(RetryFirst), RetryFirst.TotalSeconds, 0.01, 600, "s");
         Check(findings, nameof(RetryLongest), RetryLongest.TotalSeconds, RetryFirst.TotalSeconds, 3600, "s");
+        Check(findings, nameof(GroupWindow), GroupWindow.TotalSeconds, 0, 600, "s");
+        Check(findings, nameof(ShelfLongest), ShelfLongest.TotalSeconds, 60, 7 * 86_400d, "s");
         Check(findings, nameof(CircuitRest), CircuitRest.TotalSeconds, 1, 600, "s");
         Check(findings, nameof(LinkLife), LinkLife.TotalSeconds, 60, 30 * 86_400d, "s");
         Check(findings, nameof(MailPort), MailPort, 1, 65_535, "(a port)");

@@ -72,7 +72,8 @@ public static class AlertsRegistration
         services.TryAddSingleton(provider => new SetAsideFile(provider.GetRequiredService<AlertsOptions>().DataDirectory));
         services.TryAddSingleton<LedgerRecorder>();
         services.TryAddSingleton(provider => new DeskReducer(
-            provider.GetRequiredService<AlertJournalHandle>().State, () => provider.GetRequiredService<NotifierBook>().Current));
+            provider.GetRequiredService<AlertJournalHandle>().State, () => provider.GetRequiredService<NotifierBook>().Current,
+            provider.GetRequiredService<AlertsOptions>().GroupWindow));
         services.TryAddSingleton(provider => new AlertDesk(
             provider.GetRequiredService<DeskQueue>(),
             provider.GetRequiredService<DeskReducer>(),

@@ -36,6 +36,17 @@ public interface IAlertBoard
     /// <param name="cancellationToken">Stops waiting; the acknowledgement may still happen.</param>
     ValueTask<AcknowledgeResult> AcknowledgeAsync(Guid id, string by, string? note, CancellationToken cancellationToken);
 
+    /// <summary>Shelves an alert, or takes it out of service: people are not told of it until that ends. Never a hazard.</summary>
+    /// <param name="id">Id of the alert.</param>
+    /// <param name="by">Who decides it.</param>
+    /// <param name="length">For how long; null for out of service.</param>
+    /// <param name="reason">Why, 1 to 1000 characters.</param>
+    /// <param name="cancellationToken">Stops waiting; it may still happen.</param>
+    ValueTask<AcknowledgeResult> ShelveAsync(Guid id, string by, TimeSpan? length, string? reason, CancellationToken cancellationToken);
+
+    /// <summary>Ends a shelf, or puts an alert back into service: what stands needs a new acknowledgement.</summary>
+    ValueTask<AcknowledgeResult> UnshelveAsync(Guid id, string by, string? note, CancellationToken cancellationToken);
+
     /// <summary>The messages still to be sent, with attempts made and the last error.</summary>
     IReadOnlyList<OutboxMessage> PendingMessages();
 }

@@ -85,6 +85,14 @@ export const listAlerts = (after: string | null): Promise<{ items: Alert[]; next
 
 export const acknowledge = (id: string, note: string): Promise<Alert> => send(`alerts/${id}/acknowledge`, { note: note === "" ? null : note });
 
+/** Tells nobody of an alert for some minutes, or until it is put back into service where there are none. */
+export const shelve = (id: string, reason: string, minutes: number | null): Promise<Alert> =>
+  send(`alerts/${id}/${minutes === null ? "out-of-service" : "shelve"}`, { reason, minutes });
+
+/** Ends a shelf, or puts an alert back into service. */
+export const unshelve = (alert: Alert): Promise<Alert> =>
+  send(`alerts/${alert.id}/${alert.shelf?.until === null ? "return-to-service" : "unshelve"}`, { note: null });
+
 export const listFaults = (): Promise<Faults> => ask("demo/faults");
 
 export const injectFault = (kind: string, source: string, channel: string | null, size: number | null): Promise<Faults> =>

@@ -52,6 +52,8 @@ export interface Alert {
   limit: number | null;
   unit: string;
   outlook?: string | null;
+  /** Why nobody is told of it for a while. */
+  shelf?: { by: string; at: string; until: string | null; reason: string } | null;
 }
 
 export interface SourceStatus {

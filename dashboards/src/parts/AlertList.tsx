@@ -10,6 +10,7 @@ import { Acknowledge } from "./Acknowledge";
 import { Detail } from "./Detail";
 import { ageOf } from "./freshness";
 import { Icon } from "./Icon";
+import { Shelf } from "./Shelf";
 
 /** Alerts that are no hazards, and the alerts of before. */
 export function AlertList({ onAcknowledge }: { onAcknowledge: (alerts: Alert[]) => void }) {
@@ -55,6 +56,7 @@ export function AlertRow({ alert, onAcknowledge }: { alert: Alert; onAcknowledge
       {onAcknowledge !== undefined && alert.acknowledgedAt === null && (
         <Acknowledge alert={alert} onAcknowledge={onAcknowledge} />
       )}
+      {onAcknowledge !== undefined && <Shelf alert={alert} />}
     </li>
   );
 }

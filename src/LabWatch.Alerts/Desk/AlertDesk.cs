@@ -55,6 +55,7 @@ internal sealed class AlertDesk
         }
 
         List<JournalEntry> entries = [];
+        _reducer.Expect(batch, Instant.Now(_clock));
         foreach (DeskWork work in batch)
         {
             Do(work, entries);
@@ -109,10 +110,9 @@ internal sealed class AlertDesk
     {
         foreach (DeskWork work in batch)
         {
-            if (work is DeskWork.Acknowledge acknowledge)
+            if (work is DeskWork.Asked asked)
             {
-                acknowledge.Answer.TrySetResult(
-                    _reducer.State.Open.GetValueOrDefault(acknowledge.Id)?.Alert ?? _closed.GetValueOrDefault(acknowledge.Id));
+                asked.Answer.TrySetResult(_reducer.State.Open.GetValueOrDefault(asked.Id)?.Alert ?? _closed.GetValueOrDefault(asked.Id));
             }
             else if (work is DeskWork.Barrier barrier)
             {

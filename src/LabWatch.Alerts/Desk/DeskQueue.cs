@@ -20,7 +20,7 @@ internal sealed class DeskQueue : IConditionSink, IDisposable
     /// <summary>Adds work.</summary>
     public void Post(DeskWork work)
     {
-        (work is DeskWork.Condition or DeskWork.Acknowledge ? _urgent : _other).Enqueue(work);
+        (work is DeskWork.Condition or DeskWork.Asked ? _urgent : _other).Enqueue(work);
         _signal.Release();
     }
 

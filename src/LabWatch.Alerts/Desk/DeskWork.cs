@@ -11,8 +11,20 @@ internal abstract record DeskWork
     /// <summary>A condition appeared or went.</summary>
     public sealed record Condition(AlertCondition Found) : DeskWork;
 
+    /// <summary>Somebody does something with an alert and waits for it.</summary>
+    public abstract record Asked(Guid Id, TaskCompletionSource<Alert?> Answer) : DeskWork;
+
     /// <summary>Somebody acknowledges an alert.</summary>
-    public sealed record Acknowledge(Guid Id, string By, string? Note, TaskCompletionSource<Alert?> Answer) : DeskWork;
+    public sealed record Acknowledge(Guid Id, string By, string? Note, TaskCompletionSource<Alert?> Answer) : Asked(Id, Answer);
+
+    /// <summary>Somebody shelves an alert or takes it out of service.</summary>
+    public sealed record Shelve(Guid Id, AlertShelf Shelf, TaskCompletionSource<Alert?> Answer) : Asked(Id, Answer);
+
+    /// <summary>Somebody ends that.</summary>
+    public sealed record Unshelve(Guid Id, string By, string? Note, TaskCompletionSource<Alert?> Answer) : Asked(Id, Answer);
+
+    /// <summary>Time has passed: shelves end, and what was held back is summarised.</summary>
+    public sealed record Tick : DeskWork;
 
     /// <summary>A message after an attempt to send it.</summary>
     public sealed record Settled(OutboxMessage Message) : DeskWork;

@@ -4,13 +4,15 @@ using LabWatch.Alerts.Hazards;
 using LabWatch.Alerts.Recording;
 using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Findings;
+using LabWatch.Lab.Time;
 using LabWatch.Records.Alerts;
 
 namespace LabWatch.Alerts.Hosting;
 
 /// <inheritdoc cref="IAlertBoard"/>
 internal sealed class AlertBoard(
-    DeskQueue queue, AlertDesk desk, HazardWatch watch, LedgerRecorder recorder, AlertJournalHandle journal, IAlertLedger ledger, TimeProvider clock) : IAlertBoard
+    DeskQueue queue, AlertDesk desk, HazardWatch watch, LedgerRecorder recorder, AlertJournalHandle journal, IAlertLedger ledger, AlertsOptions options,
+    TimeProvider clock) : IAlertBoard
 {
     private const int LongestName = 100;
     private const int LongestNote = 2000;
@@ -52,6 +54,37 @@ internal sealed class AlertBoard(
         queue.Post(new DeskWork.Acknowledge(id, by, string.IsNullOrWhiteSpace(note) ? null : note, answer));
         Alert? alert = await answer.Task.WaitAsync(cancellationToken) ?? await FromLedgerAsync(id, cancellationToken);
         return new AcknowledgeResult(alert, []);
+    }
+
+    /// <inheritdoc/>
+    public async ValueTask<AcknowledgeResult> ShelveAsync(Guid id, string by, TimeSpan? length, string? reason, CancellationToken cancellationToken)
+    {
+        Alert? open = desk.View.Open.FirstOrDefault(alert => alert.Id == id);
+        List<Finding> findings = [.. Check(by, null), .. ShelfChecks.Of(open, length, reason, options.ShelfLongest)];
+        if (findings.Count > 0 || open is null)
+        {
+            return new AcknowledgeResult(null, findings);
+        }
+
+        Instant now = Instant.Now(clock);
+        AlertShelf shelf = new(by, now, length is { } time ? now + time : null, reason!.Trim());
+        TaskCompletionSource<Alert?> answer = new(TaskCreationOptions.RunContinuationsAsynchronously);
+        queue.Post(new DeskWork.Shelve(id, shelf, answer));
+        return new AcknowledgeResult(await answer.Task.WaitAsync(cancellationToken), []);
+    }
+
+    /// <inheritdoc/>
+    public async ValueTask<AcknowledgeResult> UnshelveAsync(Guid id, string by, string? note, CancellationToken cancellationToken)
+    {
+        List<Finding> findings = Check(by, note);
+        if (findings.Count > 0)
+        {
+            return new AcknowledgeResult(null, findings);
+        }
+
+        TaskCompletionSource<Alert?> answer = new(TaskCreationOptions.RunContinuationsAsynchronously);
+        queue.Post(new DeskWork.Unshelve(id, by, string.IsNullOrWhiteSpace(note) ? null : note, answer));
+        return new AcknowledgeResult(await answer.Task.WaitAsync(cancellationToken), []);
     }
 
     /// <inheritdoc/>

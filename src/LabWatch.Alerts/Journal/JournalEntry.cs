@@ -30,6 +30,12 @@ internal sealed record JournalEntry(long Number)
     /// <summary>A message still to be sent, as the ledger has it: as for <see cref="Open"/>.</summary>
     public OutboxMessage? Pending { get; init; }
 
+    /// <summary>True where people are told of the transition by the next summary; null elsewhere.</summary>
+    public bool? Held { get; init; }
+
+    /// <summary>The alerts that wait for the next summary, from here on: empty with a summary, all of them at the end of what a rewritten journal takes over; null elsewhere.</summary>
+    public IReadOnlyList<Guid>? HeldAlerts { get; init; }
+
     /// <summary>The next number to be given: at the head of a rewritten journal.</summary>
     public long? NextNumber { get; init; }
 

@@ -13,6 +13,7 @@ internal sealed class JournalState
     private readonly Dictionary<Guid, AlertTransition> _open = [];
     private readonly Dictionary<AlertKey, Guid> _standing = [];
     private readonly Dictionary<string, OutboxMessage> _pending = new(StringComparer.Ordinal);
+    private readonly HashSet<Guid> _held = [];
     private readonly Queue<JournalEntry> _unrecorded = [];
     private readonly Dictionary<(Lab.Identity.SourceKey Source, string Criterion, string Scope), DecidedWindow> _decided = [];
 
@@ -24,6 +25,9 @@ internal sealed class JournalState
 
     /// <summary>Entries that the ledger does not have yet, in order.</summary>
     public IReadOnlyCollection<JournalEntry> Unrecorded => _unrecorded;
+
+    /// <summary>Alerts of which people are told by the next summary.</summary>
+    public IReadOnlySet<Guid> Held => _held;
 
     /// <summary>The newest decided windows.</summary>
     public IReadOnlyCollection<DecidedWindow> Decided => _decided.Values;
@@ -56,6 +60,17 @@ internal sealed class JournalState
             Apply(message);
         }
 
+        if (entry.HeldAlerts is { } held)
+        {
+            _held.Clear();
+            _held.UnionWith(held);
+        }
+
+        if (entry is { Held: true, Transition: { } waiting })
+        {
+            _held.Add(waiting.Alert.Id);
+        }
+
         Apply(entry.Pending);
         Apply(entry.Settled);
         Apply(entry.Followed);
@@ -73,6 +88,7 @@ internal sealed class JournalState
         .. _pending.Values.Select(message => new JournalEntry(0) { Pending = message }),
         new JournalEntry(0) { Followed = new FollowedPosition(FollowedSequence, [.. _decided.Values]) },
         .. _unrecorded,
+        new JournalEntry(0) { HeldAlerts = [.. _held] },
     ];
 
     private void Apply(AlertTransition? step)

@@ -12,6 +12,21 @@ public static class AlertEvent
     /// <summary>Somebody acknowledged it.</summary>
     public const string Acknowledged = "acknowledged";
 
+    /// <summary>Somebody shelved it until an end.</summary>
+    public const string Shelved = "shelved";
+
+    /// <summary>Its shelf has ended, or was ended by somebody.</summary>
+    public const string Unshelved = "unshelved";
+
+    /// <summary>A quality manager took it out of service.</summary>
+    public const string OutOfService = "out-of-service";
+
+    /// <summary>A quality manager put it back into service.</summary>
+    public const string ReturnedToService = "returned-to-service";
+
+    /// <summary>People were told of it and others together, in one message.</summary>
+    public const string Summarised = "summarised";
+
     /// <summary>The condition went away.</summary>
     public const string Returned = "returned";
 }

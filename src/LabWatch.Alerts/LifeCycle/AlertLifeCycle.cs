@@ -25,14 +25,47 @@ internal static class AlertLifeCycle
             return null;
         }
 
-        AlertState next = last.Alert.State == AlertState.RaisedAcknowledged ? AlertState.Normal : AlertState.ReturnedUnacknowledged;
-        return Step(last, last.Alert with { State = next, ReturnedAt = at }, at, AlertEvent.Returned, Service, note);
+        bool isLatched = HazardCode.IsLatched(last.Alert.Code);
+        bool isOver = last.Alert.State == AlertState.RaisedAcknowledged && last.Alert.Shelf is null && !isLatched;
+        Alert alert = last.Alert with { State = isOver ? AlertState.Normal : AlertState.ReturnedUnacknowledged, ReturnedAt = at };
+        return Step(last, isLatched ? NotAcknowledged(alert) : alert, at, AlertEvent.Returned, Service, note);
     }
+
+    /// <summary>The next step where nobody is to be told of it for a while; null for a hazard, and where it is so already.</summary>
+    public static AlertTransition? Shelve(AlertTransition last, AlertShelf shelf) =>
+        last.Alert.IsHazard || last.Alert.State == AlertState.Normal || last.Alert.Shelf is not null
+            ? null
+            : Step(
+                last, last.Alert with { Shelf = shelf }, shelf.At, shelf.IsOutOfService ? AlertEvent.OutOfService : AlertEvent.Shelved, shelf.By,
+                shelf.Until is { } until ? $"Until {until}: {shelf.Reason}" : shelf.Reason);
+
+    /// <summary>
+    /// The next step where people are to be told again: what stands needs a new acknowledgement, what has gone and was acknowledged is over.
+    /// </summary>
+    public static AlertTransition? Unshelve(AlertTransition last, Instant at, string by, string? note)
+    {
+        if (last.Alert.Shelf is not { } shelf)
+        {
+            return null;
+        }
+
+        Alert alert = last.Alert with { Shelf = null };
+        alert = alert.State == AlertState.ReturnedUnacknowledged
+            ? alert.AcknowledgedAt is null ? alert : alert with { State = AlertState.Normal }
+            : NotAcknowledged(alert) with { State = AlertState.RaisedUnacknowledged };
+        return Step(last, alert, at, shelf.IsOutOfService ? AlertEvent.ReturnedToService : AlertEvent.Unshelved, by, note);
+    }
+
+    /// <summary>The step that says that people were told of it with others.</summary>
+    public static AlertTransition Summarise(AlertTransition last, Instant at, string note) => Step(last, last.Alert, at, AlertEvent.Summarised, Service, note);
+
+    private static Alert NotAcknowledged(Alert alert) => alert with { AcknowledgedAt = null, AcknowledgedBy = null, AcknowledgeNote = null };
 
     /// <summary>The next step for an acknowledgement. Acknowledging again changes nothing.</summary>
     public static AlertTransition? Acknowledge(AlertTransition last, Instant at, string by, string? note)
     {
-        if (last.Alert.State is AlertState.RaisedAcknowledged or AlertState.Normal)
+        bool waitsForShelf = last.Alert.Shelf is not null && last.Alert.State == AlertState.ReturnedUnacknowledged;
+        if (last.Alert.State is AlertState.RaisedAcknowledged or AlertState.Normal || waitsForShelf)
         {
             return null;
         }
@@ -59,10 +92,12 @@ internal static class AlertLifeCycle
     // A graver condition needs a new acknowledgement: the former one was given for something less.
     private static AlertTransition RaiseAgain(AlertTransition last, AlertCondition found)
     {
+        bool isGraver = found.Priority > last.Alert.Priority;
         Alert alert = last.Alert with
         {
             State = AlertState.RaisedUnacknowledged,
-            Priority = found.Priority > last.Alert.Priority ? found.Priority : last.Alert.Priority,
+            Shelf = isGraver ? null : last.Alert.Shelf,
+            Priority = isGraver ? found.Priority : last.Alert.Priority,
             Headline = found.Headline,
             Detail = found.Detail,
             Value = found.Value,

@@ -166,6 +166,18 @@ internal static class AlertTexts
 
     public static string MailLook => Text();
 
+    public static string ShelvedHeadline => Text();
+
+    public static string UnshelvedHeadline => Text();
+
+    public static string ShelfEnded => Text();
+
+    public static string SummaryHeadline => Text();
+
+    public static string SummaryDetail => Text();
+
+    public static string SummaryMore => Text();
+
     /// <summary>A text about a hazard of a source.</summary>
     public static string Of(Hazards.HazardCause cause, string part) => Text(cause.ToString() + part);
 

@@ -46,6 +46,9 @@ public sealed record Alert(
     /// <summary>What the acknowledging person wrote; null where nothing.</summary>
     public string? AcknowledgeNote { get; init; }
 
+    /// <summary>Why nobody is told of it for a while; null where people are told. It stays open until that has ended.</summary>
+    public AlertShelf? Shelf { get; init; }
+
     /// <summary>
     /// When the sensor of a standing alert is expected to fall below its limit, in words; null where that cannot be told. Never stored:
     /// it belongs to the moment it was asked for.

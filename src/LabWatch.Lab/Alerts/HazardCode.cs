@@ -43,6 +43,12 @@ public static class HazardCode
     public static IReadOnlyList<string> All { get; } =
         [HotSurface, ColdSurface, OverTemperature, HeaterRunaway, PurgeLost, Condensation, UnattendedHot, CutoutTripped, OxygenLow, CoolingLost, BathFault, HazardSilent];
 
+    /// <summary>
+    /// Whether an alert of a code latches (IEC 62682): once its condition has gone somebody must say so anew, although they had acknowledged it
+    /// while it stood, because what it left behind must be looked at before work goes on.
+    /// </summary>
+    public static bool IsLatched(string code) => code is OverTemperature or HeaterRunaway or CutoutTripped or Condensation;
+
     /// <summary>Whether a code names a hazard (and not a criterion out of tolerance).</summary>
     public static bool IsHazard(string code) => All.Contains(code, StringComparer.Ordinal);
 }

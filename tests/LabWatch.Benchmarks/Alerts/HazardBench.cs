@@ -56,7 +56,7 @@ internal sealed class HazardBench : HttpMessageHandler, ILabSnapshotSource, IAsy
         services.AddSingleton<ILabSnapshotSource>(bench);
         services.AddSingleton<IAlertLedger>(new BenchLedger(behaviour));
         services.AddSingleton<IAssessmentLedger>(new BenchLedger(behaviour));
-        services.AddLabWatchAlerts(new AlertsOptions { DataDirectory = bench._folder, StartGrace = TimeSpan.FromMinutes(10) });
+        services.AddLabWatchAlerts(new AlertsOptions { DataDirectory = bench._folder, StartGrace = TimeSpan.FromMinutes(10), GroupWindow = TimeSpan.Zero });
         services.AddHttpClient(WebhookChannel.ClientName).ConfigurePrimaryHttpMessageHandler(() => bench);
         bench._services = services.BuildServiceProvider();
         foreach (IHostedService service in bench._services.GetServices<IHostedService>())

@@ -106,12 +106,13 @@ public sealed class WebhookTests : IDisposable
         };
         LabWatch.Lab.LabSnapshot lab = TestSite.Lab(
             [new Notifier("hook", NotifierKind.Webhook, new Uri("https://messages.example/"), null)], [], [],
-            TestSite.Source(TestSite.Rowan, TestSite.Surface(TestSite.Rowan), TestSite.Surface(TestSite.Rowan, "case-2")));
+            TestSite.Source(TestSite.Rowan, TestSite.Surface(TestSite.Rowan)), TestSite.Source(TestSite.Yew, TestSite.Surface(TestSite.Yew)));
         await using AlertsHost two = new(_folder, _clock, _ledger, lab, receiver);
         await two.StartAsync();
         two.Send(186);
         await AlertsHost.UntilAsync(() => two.Receiver.Received.Count == 1, "the first");
-        two.Send(186, "case-2");
+        LabWatch.Lab.Time.Instant now = LabWatch.Lab.Time.Instant.Now(_clock);
+        two.Tap.OnPack(new LabWatch.Lab.Readings.ReadingPack(TestSite.Yew, now, [new LabWatch.Lab.Readings.Reading("case", now, 186)]));
         await AlertsHost.UntilAsync(() => two.Receiver.Received.Count == 2, "the second beside the first");
         await two.UntilAsync(() => two.Receiver.Received.Count == 3, "the first again", TimeSpan.FromSeconds(1));
         await two.StopAsync();

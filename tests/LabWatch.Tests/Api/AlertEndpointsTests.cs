@@ -34,6 +34,21 @@ public sealed class AlertEndpointsTests
     }
 
     [Fact]
+    public async Task A_shelf_names_who_until_when_and_why_and_can_be_ended()
+    {
+        await using ApiHost host = await ApiHost.StartAsync();
+        Alert alert = host.Rooms.Alerts.Raise(HotCase(host));
+
+        Answer shelved = await host.SendAsync(HttpMethod.Post, $"/api/v1/alerts/{alert.Id}/shelve", """{"reason":"compressor is serviced","minutes":60}""");
+        Answer wrong = await host.SendAsync(HttpMethod.Post, $"/api/v1/alerts/{alert.Id}/return-to-service", "{}");
+        Answer ended = await host.SendAsync(HttpMethod.Post, $"/api/v1/alerts/{alert.Id}/unshelve", """{"note":"done"}""");
+
+        Assert.Equal(("kim", "compressor is serviced"), (shelved.Json.GetProperty("shelf").GetProperty("by").GetString(), shelved.Json.GetProperty("shelf").GetProperty("reason").GetString()));
+        Assert.Equal(HttpStatusCode.NotFound, wrong.Status);
+        Assert.Equal(JsonValueKind.Null, ended.Json.GetProperty("shelf").ValueKind);
+    }
+
+    [Fact]
     public async Task Acknowledging_again_changes_nothing_and_another_person_comes_too_late()
     {
         await using ApiHost host = await ApiHost.StartAsync();

@@ -43,6 +43,34 @@ internal static class AlertEndpoints
             .WithName("FollowAlertLink")
             .WithSummary("The alert that a link in a message leads to; refused once the link has ended")
             .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapPost("{id}/shelve", (string id, ShelveRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken) =>
+                ShelveAsync(id, request, TimeSpan.FromMinutes(Math.Clamp(request.Minutes ?? 0, 0, 1_000_000)), http, board, desk, cancellationToken))
+            .Allow(Permission.Acknowledge)
+            .WithName("ShelveAlert")
+            .WithSummary("Tell nobody of an alert until an end; never of a hazard")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapPost("{id}/out-of-service", (string id, ShelveRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken) =>
+                ShelveAsync(id, request, null, http, board, desk, cancellationToken))
+            .Allow(Permission.ReviseRecords)
+            .WithName("TakeAlertOutOfService")
+            .WithSummary("Tell nobody of an alert until it is put back into service; never of a hazard")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapPost("{id}/unshelve", (string id, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken) =>
+                UnshelveAsync(id, isOutOfService: false, request, http, board, desk, cancellationToken))
+            .Allow(Permission.Acknowledge)
+            .WithName("UnshelveAlert")
+            .WithSummary("End the shelf of an alert")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound);
+        group.MapPost("{id}/return-to-service", (string id, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken) =>
+                UnshelveAsync(id, isOutOfService: true, request, http, board, desk, cancellationToken))
+            .Allow(Permission.ReviseRecords)
+            .WithName("ReturnAlertToService")
+            .WithSummary("Put an alert back into service")
+            .ProducesProblem(StatusCodes.Status400BadRequest)
+            .ProducesProblem(StatusCodes.Status404NotFound);
         group.MapPost("{id}/acknowledge", AcknowledgeAsync)
             .Allow(Permission.Acknowledge)
             .WithName("AcknowledgeAlert")
@@ -116,6 +144,31 @@ internal static class AlertEndpoints
         links.Read(token, Instant.Now(clock)) is { } alert
             ? TypedResults.Ok(new AlertLinkView(alert))
             : Refusals.NotFound("link", "it has ended, or was not made here", "Open the list of alerts: what stands is there.");
+
+    private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> ShelveAsync(
+        string id, ShelveRequest request, TimeSpan? length, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken) =>
+        Guid.TryParse(id, out Guid guid)
+            ? Answer(id, board, await desk.ShelveAsync(guid, Caller.Of(http).Name, length, request.Reason, cancellationToken))
+            : Missing(id);
+
+    private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> UnshelveAsync(
+        string id, bool isOutOfService, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)
+    {
+        IReadOnlyList<Finding> findings = request.Check();
+        if (findings.Count > 0)
+        {
+            return Refusals.BadRequest(findings);
+        }
+
+        // What is out of service only a quality manager puts back.
+        bool fits = Guid.TryParse(id, out Guid guid) && board.OpenAlerts().Any(alert => alert.Id == guid && alert.Shelf?.IsOutOfService == isOutOfService);
+        return fits ? Answer(id, board, await desk.UnshelveAsync(guid, Caller.Of(http).Name, request.Note?.Trim(), cancellationToken)) : Missing(id);
+    }
+
+    private static Results<Ok<AlertView>, ProblemHttpResult> Answer(string id, SiteBoard board, AcknowledgeResult result) =>
+        result.Findings.Count > 0
+            ? Refusals.BadRequest(result.Findings)
+            : result.Alert is { } alert ? TypedResults.Ok(AlertViews.Of(board.Lab, alert)) : Missing(id);
 
     private static async Task<Results<Ok<AlertView>, ProblemHttpResult>> AcknowledgeAsync(
         string id, AcknowledgeRequest request, HttpContext http, SiteBoard board, IAlertBoard desk, CancellationToken cancellationToken)

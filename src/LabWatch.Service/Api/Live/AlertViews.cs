@@ -31,7 +31,8 @@ internal static class AlertViews
         alert.Value is { } value ? Numbers.OrNull(value) : null,
         alert.Limit is { } limit ? Numbers.OrNull(limit) : null,
         alert.Unit,
-        alert.Outlook);
+        alert.Outlook,
+        alert.Shelf is { } shelf ? new AlertShelfView(shelf.By, shelf.At, shelf.Until, shelf.Reason) : null);
 
     /// <summary>The headline of a message, from its JSON.</summary>
     public static string HeadlineOf(OutboxMessage message)
@@ -49,6 +50,7 @@ internal static class AlertViews
     [
         .. alerts
             .OrderByDescending(alert => alert.IsHazard)
+            .ThenBy(alert => alert.Shelf is not null)
             .ThenByDescending(alert => alert.AcknowledgedAt is null)
             .ThenByDescending(alert => alert.Priority)
             .ThenByDescending(alert => alert.RaisedAt)

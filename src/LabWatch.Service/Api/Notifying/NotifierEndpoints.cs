@@ -62,10 +62,10 @@ internal static class NotifierEndpoints
         return result is null ? Refusals.NotFound("notifier", id, "GET /api/v1/notifiers lists them.") : TypedResults.Ok(new TestView(result.IsTaken, result.Error));
     }
 
-    private static Ok<DeviceListView> Devices(HttpContext http, IPushDesk push) =>
-        TypedResults.Ok(new DeviceListView(push.PublicKey, [.. push.Of(Caller.Of(http).Name).OrderBy(device => device.CreatedAt).Select(DeviceView.Of)]));
+    private static Ok<PushDeviceListView> Devices(HttpContext http, IPushDesk push) =>
+        TypedResults.Ok(new PushDeviceListView(push.PublicKey, [.. push.Of(Caller.Of(http).Name).OrderBy(device => device.CreatedAt).Select(PushDeviceView.Of)]));
 
-    private static Results<Created<DeviceView>, ProblemHttpResult> AddDevice(DeviceRequest request, HttpContext http, IPushDesk push)
+    private static Results<Created<PushDeviceView>, ProblemHttpResult> AddDevice(PushDeviceRequest request, HttpContext http, IPushDesk push)
     {
         Finding[] findings = [.. AccountChecks.DisplayName(request.Name, "/name")];
         if (findings.Length > 0)
@@ -75,7 +75,7 @@ internal static class NotifierEndpoints
 
         (PushSubscription? made, IReadOnlyList<Finding> wrong) = push.Add(
             Caller.Of(http).Name, request.Name!.Trim(), request.Endpoint ?? string.Empty, request.Keys?.P256dh ?? string.Empty, request.Keys?.Auth ?? string.Empty);
-        return made is null ? Refusals.BadRequest(wrong) : TypedResults.Created($"/api/v1/me/devices/{made.Id}", DeviceView.Of(made));
+        return made is null ? Refusals.BadRequest(wrong) : TypedResults.Created($"/api/v1/me/devices/{made.Id}", PushDeviceView.Of(made));
     }
 
     private static Results<NoContent, ProblemHttpResult> RemoveDevice(string id, HttpContext http, IPushDesk push) =>

@@ -24,4 +24,5 @@ internal sealed record AlertView(
     [property: Description("The value that raised it, latest while it stands, in unit.")] double? Value,
     [property: Description("The limit that was crossed, in unit.")] double? Limit,
     [property: Description("Unit of value and limit.")] string Unit,
-    [property: Description("When the sensor of a hot surface is expected to fall below its limit, with an interval, in words; null where that cannot be told. An estimate about one sensor: treat as hot until measured.")] string? Outlook);
+    [property: Description("When the sensor of a hot surface is expected to fall below its limit, with an interval, in words; null where that cannot be told. An estimate about one sensor: treat as hot until measured.")] string? Outlook,
+    [property: Description("Why nobody is told of it for a while: shelved, or out of service; null where people are told.")] AlertShelfView? Shelf);

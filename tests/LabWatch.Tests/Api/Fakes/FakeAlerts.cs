@@ -52,6 +52,19 @@ internal sealed class FakeAlerts(TimeProvider clock) : IAlertBoard, IAlertLedger
         }
     }
 
+    public ValueTask<AcknowledgeResult> ShelveAsync(Guid id, string by, TimeSpan? length, string? reason, CancellationToken cancellationToken)
+    {
+        Alert? alert = Open().FirstOrDefault(open => open.Id == id);
+        return new(new AcknowledgeResult(
+            alert is null ? null : Step(alert with { Shelf = new AlertShelf(by, Instant.Now(clock), length is { } time ? Instant.Now(clock) + time : null, reason!) }, "shelved", by, reason), []));
+    }
+
+    public ValueTask<AcknowledgeResult> UnshelveAsync(Guid id, string by, string? note, CancellationToken cancellationToken)
+    {
+        Alert? alert = Open().FirstOrDefault(open => open.Id == id);
+        return new(new AcknowledgeResult(alert is null ? null : Step(alert with { Shelf = null }, "unshelved", by, note), []));
+    }
+
     public ValueTask<AcknowledgeResult> AcknowledgeAsync(Guid id, string by, string? note, CancellationToken cancellationToken)
     {
         lock (_gate)
