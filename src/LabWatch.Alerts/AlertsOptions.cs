@@ -73,6 +73,15 @@ public sealed record AlertsOptions
     /// <summary>Longest time for which somebody may shelve an alert. Default 24 h.</summary>
     public TimeSpan ShelfLongest { get; init; } = TimeSpan.FromHours(24);
 
+    /// <summary>How long no reading of any source may arrive before people are told. Default 5 min.</summary>
+    public TimeSpan NoReadingsAfter { get; init; } = TimeSpan.FromMinutes(5);
+
+    /// <summary>Address of a monitor that gets a heartbeat, https (or http to this machine); null for none.</summary>
+    public string? HeartbeatAddress { get; init; }
+
+    /// <summary>How often the monitor gets it. Default 60 s.</summary>
+    public TimeSpan HeartbeatInterval { get; init; } = TimeSpan.FromSeconds(60);
+
     /// <summary>How long a receiver that failed five times in a row is left alone before one attempt tests whether it is back. Default 30 s.</summary>
     public TimeSpan CircuitRest { get; init; } = TimeSpan.FromSeconds(30);
 
@@ -135,6 +144,8 @@ public sealed record AlertsOptions
         Check(findings, nameof(WebhookTimeout), WebhookTimeout.TotalSeconds, 0.1, 120, "s");
         Check(findings, nameof(RetryFirst), RetryFirst.TotalSeconds, 0.01, 600, "s");
         Check(findings, nameof(RetryLongest), RetryLongest.TotalSeconds, RetryFirst.TotalSeconds, 3600, "s");
+        Check(findings, nameof(NoReadingsAfter), NoReadingsAfter.TotalSeconds, 10, 86_400, "s");
+        Check(findings, nameof(HeartbeatInterval), HeartbeatInterval.TotalSeconds, 10, 86_400, "s");
         Check(findings, nameof(GroupWindow), GroupWindow.TotalSeconds, 0, 600, "s");
         Check(findings, nameof(ShelfLongest), ShelfLongest.TotalSeconds, 60, 7 * 86_400d, "s");
         Check(findings, nameof(CircuitRest), CircuitRest.TotalSeconds, 1, 600, "s");
@@ -153,6 +164,13 @@ public sealed record AlertsOptions
         if (PublicAddress is not null && !isAddress)
         {
             findings.Add(new Finding("bad-address", nameof(PublicAddress), "This is no address of a page.", Finding.Quote(PublicAddress), "Write it in full, for example https://labwatch.laboratory.example."));
+        }
+
+        bool isMonitor = Uri.TryCreate(HeartbeatAddress, UriKind.Absolute, out Uri? monitor)
+            && (monitor.Scheme == Uri.UriSchemeHttps || (monitor.Scheme == Uri.UriSchemeHttp && monitor.IsLoopback));
+        if (HeartbeatAddress is not null && !isMonitor)
+        {
+            findings.Add(new Finding("bad-address", nameof(HeartbeatAddress), "This is no https address of a monitor.", Finding.Quote(HeartbeatAddress), "Write it in full, for example https://monitor.laboratory.example/labwatch."));
         }
 
         if (MailHost is not null && (MailFrom is null || !MimeKit.MailboxAddress.TryParse(MailFrom, out _)))

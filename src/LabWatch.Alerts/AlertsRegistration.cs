@@ -63,6 +63,8 @@ public static class AlertsRegistration
         services.TryAddEnumerable(ServiceDescriptor.Singleton<IReadingTap, HazardWatch>(provider => provider.GetRequiredService<HazardWatch>()));
         services.TryAddSingleton<HazardTicker>();
         services.TryAddSingleton<RunAttention>();
+        services.TryAddSingleton<ReadingsWatch>();
+        services.TryAddSingleton<Heartbeat>();
     }
 
     private static void AddDesk(IServiceCollection services)

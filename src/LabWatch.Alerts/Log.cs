@@ -21,6 +21,9 @@ internal static partial class Log
     [LoggerMessage(4004, LogLevel.Warning, "Which runs are open could not be asked; a hot source counts as unattended when its time is over.")]
     public static partial void RunsUnknown(ILogger logger, Exception exception);
 
+    [LoggerMessage(4005, LogLevel.Error, "The heartbeat was missed: the alert desk, the disk or the monitor did not answer. Tried again in ten seconds.")]
+    public static partial void HeartbeatMissed(ILogger logger, Exception exception);
+
     [LoggerMessage(4010, LogLevel.Error, "The alert journal could not be written; steps are kept in memory and tried again with the next one. Check the disk.")]
     public static partial void JournalFailed(ILogger logger, Exception exception);
 

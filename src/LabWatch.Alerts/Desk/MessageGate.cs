@@ -16,7 +16,10 @@ internal sealed class MessageGate(TimeSpan window)
     /// <summary>Steps in a minute from which on people are told by summary: more than ten alarms in ten minutes are a flood for one person (ISA-18.2; EEMUA 191; from memory), and a minute of that is over in any case.</summary>
     private const int Flood = 10;
 
-    private readonly Dictionary<(SourceKey Source, string Code), (Instant At, Guid Alert)> _told = [];
+    /// <summary>Times that one alert is told within the time before it chatters: three or more a minute (ISA-18.2, from memory).</summary>
+    private const int Chattering = 3;
+
+    private readonly Dictionary<(SourceKey Source, string Code), (Instant At, Guid Alert, int Times)> _told = [];
     private readonly Queue<(Instant At, AlertPriority Priority)> _lately = new();
     private Instant _floodUntil = Instant.MinValue;
 
@@ -62,12 +65,14 @@ internal sealed class MessageGate(TimeSpan window)
         }
 
         (SourceKey, string) key = (step.Alert.Source, step.Alert.Code);
-        bool isFollower = _told.TryGetValue(key, out (Instant At, Guid Alert) told) && step.At - told.At < window;
+        bool isRecent = _told.TryGetValue(key, out (Instant At, Guid Alert, int Times) told) && step.At - told.At < window;
+        bool isSame = isRecent && told.Alert == step.Alert.Id;
+        bool isFollower = isRecent && !(isSame && told.Times < Chattering);
         bool isGraver = _lately.Count > 0 && step.Alert.Priority > _lately.Max(one => one.Priority);
         bool tells = !isFollower && (step.Alert.IsHazard || !isFlood || isGraver);
         if (tells)
         {
-            _told[key] = (step.At, step.Alert.Id);
+            _told[key] = isSame ? told with { Times = told.Times + 1 } : (step.At, step.Alert.Id, 1);
         }
 
         return tells;

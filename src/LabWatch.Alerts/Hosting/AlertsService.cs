@@ -23,6 +23,7 @@ internal sealed class AlertsService(
     AssessmentFollower follower,
     HazardTicker ticker,
     RunAttention attention,
+    Heartbeat heartbeat,
     LastHeardFile heard,
     AlertsMetrics metrics,
     ILabSnapshotSource lab,
@@ -51,7 +52,7 @@ internal sealed class AlertsService(
 
         Measure();
         _thread = new DeskThread(queue, desk, loggers.CreateLogger<DeskThread>());
-        _running = Task.WhenAll(Loop(ticker.RunAsync), Loop(recorder.RunAsync), Loop(follower.RunAsync), Loop(attention.RunAsync));
+        _running = Task.WhenAll(Loop(ticker.RunAsync), Loop(recorder.RunAsync), Loop(follower.RunAsync), Loop(attention.RunAsync), Loop(heartbeat.RunAsync));
         return Task.CompletedTask;
     }
 

@@ -5,7 +5,7 @@ using Microsoft.Extensions.Logging;
 namespace LabWatch.Alerts.Hosting;
 
 /// <summary>Lets time pass for the hazard watch, once a second, and keeps what a restart needs.</summary>
-internal sealed class HazardTicker(HazardWatch watch, LastHeardFile heard, DeskQueue desk, TimeProvider clock, ILogger<HazardTicker> logger)
+internal sealed class HazardTicker(HazardWatch watch, LastHeardFile heard, DeskQueue desk, ReadingsWatch readings, TimeProvider clock, ILogger<HazardTicker> logger)
 {
     private const int TicksPerHeard = 10;
     private const int TicksPerCertificates = 60;
@@ -26,6 +26,7 @@ internal sealed class HazardTicker(HazardWatch watch, LastHeardFile heard, DeskQ
         try
         {
             watch.Tick();
+            readings.Tick();
             desk.Post(new DeskWork.Tick());
             if (tick % TicksPerHeard == 0)
             {

@@ -166,6 +166,14 @@ internal static class AlertTexts
 
     public static string MailLook => Text();
 
+    public static string NoReadingsHeadline => Text();
+
+    public static string NoReadingsWhat => Text();
+
+    public static string NoReadingsDo => Text();
+
+    public static string NoReadingsReturned => Text();
+
     public static string ShelvedHeadline => Text();
 
     public static string UnshelvedHeadline => Text();

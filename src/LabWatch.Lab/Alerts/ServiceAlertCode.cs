@@ -12,11 +12,14 @@ public static class ServiceAlertCode
     /// <summary>Stored readings were found damaged or missing.</summary>
     public const string ReadingsDamaged = "readings-damaged";
 
+    /// <summary>No reading of any source arrives.</summary>
+    public const string NoReadings = "no-readings";
+
     /// <summary>What stands for the source in these alerts.</summary>
     public const string Source = "labwatch";
 
     /// <summary>All codes.</summary>
-    public static IReadOnlyList<string> All { get; } = [ReadingsNotStored, DiskNearlyFull, ReadingsDamaged];
+    public static IReadOnlyList<string> All { get; } = [ReadingsNotStored, DiskNearlyFull, ReadingsDamaged, NoReadings];
 
     /// <summary>Whether an alert is about the service itself.</summary>
     public static bool IsService(string code) => All.Contains(code, StringComparer.Ordinal);

@@ -43,6 +43,22 @@ public sealed class FloodTests
     }
 
     [Fact]
+    public void An_alert_that_comes_and_goes_is_told_three_times_and_then_by_summary()
+    {
+        List<int> told = [];
+        for (int i = 0; i < 6; i++)
+        {
+            told.Add(Raise("rowan", CriterionCode.Stability, "well-1", AlertPriority.Medium));
+            DeskWork.Condition gone = Work("rowan", CriterionCode.Stability, "well-1", AlertPriority.Medium);
+            _desk.Do(new DeskWork.Condition(gone.Found with { Present = false }), _now);
+            _now += TimeSpan.FromSeconds(2);
+        }
+
+        Assert.Equal([1, 1, 1, 0, 0, 0], told);
+        Assert.Single(Pass(10));
+    }
+
+    [Fact]
     public void The_same_hazard_goes_at_once_again_when_the_time_is_over()
     {
         Raise("rowan", HazardCode.HotSurface, "case");
