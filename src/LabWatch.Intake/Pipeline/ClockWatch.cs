@@ -47,12 +47,18 @@ internal sealed class ClockWatch(ReadingTimeRule rule)
         lock (_lock)
         {
             DeviceClockState state = rule.LeapLimit is { } limit && _count >= Needed ? Judge(device, arrival, Microseconds(limit)) : DeviceClockState.Steady;
+            bool keepsPace = KeepsPace(device, arrival);
             _last = (device, arrival);
             bool admitted = state == DeviceClockState.Steady;
             if (admitted && _inPace == 0)
             {
                 _newest = device > _newest ? device : _newest;
-                Learn(device.Microseconds - arrival.Microseconds);
+
+                // A backlog tells nothing of the clock: it runs faster than time.
+                if (keepsPace)
+                {
+                    Learn(device.Microseconds - arrival.Microseconds);
+                }
             }
 
             DeviceClockState shown = admitted && _count < Needed ? DeviceClockState.Learning : state;
@@ -110,14 +116,9 @@ internal sealed class ClockWatch(ReadingTimeRule rule)
     /// <summary>Counts messages that lie behind and advance in step with the arrivals.</summary>
     private bool IsInPace(Instant device, Instant arrival)
     {
-        if (_inPace > 0 && _last is { } last)
+        if (!KeepsPace(device, arrival))
         {
-            long arrived = arrival.Microseconds - last.Arrival.Microseconds;
-            long advanced = device.Microseconds - last.Device.Microseconds;
-            if (Math.Abs(advanced - arrived) > Math.Max(Microseconds(PaceSlack), (long)(PaceTolerance * arrived)))
-            {
-                _inPace = 0;
-            }
+            _inPace = 0;
         }
 
         if (_inPace == 0)
@@ -128,6 +129,18 @@ internal sealed class ClockWatch(ReadingTimeRule rule)
 
         _inPace++;
         return _inPace > 1;
+    }
+
+    private bool KeepsPace(Instant device, Instant arrival)
+    {
+        if (_last is not { } last)
+        {
+            return false;
+        }
+
+        long arrived = arrival.Microseconds - last.Arrival.Microseconds;
+        long advanced = device.Microseconds - last.Device.Microseconds;
+        return Math.Abs(advanced - arrived) <= Math.Max(Microseconds(PaceSlack), (long)(PaceTolerance * arrived));
     }
 
     private void Learn(long offset)

@@ -84,6 +84,19 @@ public class ClockWatchTests
     }
 
     [Fact]
+    public void A_backlog_alone_tells_nothing_of_the_clock()
+    {
+        for (int i = 0; i < 100; i++)
+        {
+            _now += TimeSpan.FromMilliseconds(10);
+            Assert.True(_watch.Admit(_now - TimeSpan.FromDays(3) + TimeSpan.FromSeconds(10 * i), _now));
+        }
+
+        Assert.Equal(0, _watch.Describe().Messages);
+        Assert.True(double.IsNaN(_watch.Describe().OffsetSeconds));
+    }
+
+    [Fact]
     public void A_clock_that_was_put_right_is_learnt_anew()
     {
         Settle(-500);
