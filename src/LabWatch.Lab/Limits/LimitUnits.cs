@@ -14,6 +14,7 @@ public static class LimitUnits
     {
         CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.ReferenceAgreement => TemperatureDifference,
         CriterionCode.Settled => Rate,
+        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.Budget => TemperatureDifference,
         CriterionCode.EffectiveEmissivity => Ratio,
         CriterionCode.HeaterBalance => Power,
         CriterionCode.DataHealth or CriterionCode.Purge or CriterionCode.Surroundings or CriterionCode.Traceability => Share,
