@@ -13,7 +13,7 @@ namespace LabWatch.Assessments.Attribution;
 internal static class Attributions
 {
     /// <summary>Most deviations that are weighed together: as many as <c>calc attribution</c> takes.</summary>
-    public const int MostDeviations = 32;
+    public const int MostDeviations = 16;
 
     /// <summary>The findings of one source: against its reference days, and against the model.</summary>
     public static IReadOnlyList<AttributionFinding> Of(LabSnapshot snapshot, ReferenceSource source, IReadOnlyList<DriftForecast> forecasts, ICavityModels models)

@@ -34,7 +34,7 @@ internal sealed class AttributionCalculator : Calculator
             CalcField.Positive("u_k", "its standard uncertainty, kelvin"),
             CalcField.Number("k_per_emissivity", "kelvin for a unit of wall emissivity; 0 where missing").Optional(),
             CalcField.Number("k_per_gradient", "kelvin for a kelvin of the assumed gradient; 0 where missing").Optional(),
-            CalcField.Number("k_per_signal", "kelvin for a unit of relative signal; 0 where missing").Optional()) with { MaximumItems = 32 },
+            CalcField.Number("k_per_signal", "kelvin for a unit of relative signal; 0 where missing").Optional()) with { MaximumItems = 16 },
         CalcField.Number("prior_probability", "probability of each candidate before; 0.02 where missing").Optional() with { Minimum = 1e-6, Maximum = 0.5 },
         CalcField.Positive("prior_thermometer_k", "usual size of a thermometer error, kelvin; 0.1 where missing").Optional(),
         CalcField.Positive("prior_emissivity", "usual change of the wall emissivity; 0.05 where missing").Optional(),
