@@ -13,7 +13,7 @@ internal static class TrackedPoints
 
     /// <summary>The criteria whose assessments are followed.</summary>
     public static IReadOnlyList<string> Criteria { get; } =
-        [CriterionCode.EffectiveEmissivity, CriterionCode.Stability, CriterionCode.AxialUniformity, CriterionCode.Budget];
+        [CriterionCode.EffectiveEmissivity, CriterionCode.Stability, CriterionCode.AxialUniformity, CriterionCode.Budget, CriterionCode.ReferenceAgreement, CriterionCode.HeaterBalance];
 
     /// <summary>The points of one assessment.</summary>
     /// <param name="source">The source as it is described now.</param>

@@ -17,8 +17,7 @@ internal static class SourceSection
     public static ReferenceSource Read(JsonCursor item, string site)
     {
         item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
-            "view", "baselines", "surroundings", "wellToWallDrop", "conditions", "purge", "balances", "effectiveFrom", "hazards");
-            "view", "baselines", "surroundings", "wellToWallDrop", "claimed", "effectiveFrom", "hazards");
+            "view", "baselines", "surroundings", "wellToWallDrop", "claimed", "conditions", "purge", "balances", "effectiveFrom", "hazards");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(

@@ -12,9 +12,8 @@ public static class LimitUnits
     /// <summary>The units; empty where the criterion is not judged yet, so that any stands.</summary>
     public static IReadOnlyList<string> Of(string criterion) => criterion switch
     {
-        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.ReferenceAgreement => TemperatureDifference,
+        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.ReferenceAgreement or CriterionCode.Budget => TemperatureDifference,
         CriterionCode.Settled => Rate,
-        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.Budget => TemperatureDifference,
         CriterionCode.EffectiveEmissivity => Ratio,
         CriterionCode.HeaterBalance => Power,
         CriterionCode.DataHealth or CriterionCode.Purge or CriterionCode.Surroundings or CriterionCode.Traceability => Share,
