@@ -1,13 +1,13 @@
 using System.Text.Json.Nodes;
 using LabWatch.Assessments;
 using LabWatch.Assessments.Budgets;
-using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
+using LabWatch.Assessments.Evaluation;
 using LabWatch.Assessments.Forecasts;
 using LabWatch.Assessments.Power;
 using LabWatch.Lab.Assessments;
+using LabWatch.Lab.Readings;
 using LabWatch.Lab.Time;
-using LabWatch.Metrology.Uncertainty;
 using LabWatch.Readings;
 using LabWatch.Service.Api.Live;
 using LabWatch.Service.Api.Views;
@@ -100,7 +100,7 @@ public sealed class RecomputeByHandTests
     {
         AssessmentView served = Serve(new BudgetCriterion(BudgetCriterion.DefaultSchedule, DemoRun.Models), out _);
 
-        JsonArray lines = [.. served.Figures.Where(figure => BudgetFigures.LineOf(figure.Name) is not null).Select(figure =>
+        JsonArray lines = new([.. served.Figures.Where(figure => BudgetFigures.LineOf(figure.Name) is not null).Select(figure =>
         {
             JsonObject line = new() { ["name"] = BudgetFigures.LineOf(figure.Name), ["u"] = figure.Value };
             if (served.Figures.FirstOrDefault(other => other.Name == "degrees-of-freedom-" + BudgetFigures.LineOf(figure.Name)) is { Value: { } freedom })
@@ -109,7 +109,7 @@ public sealed class RecomputeByHandTests
             }
 
             return line;
-        })];
+        })]);
         JsonObject answer = Calculate("budget", new JsonObject { ["inputs"] = lines });
 
         Assert.Equal(Number(answer, "expanded_u"), served.Value!.Value, served.Value.Value * 1e-9);
@@ -160,7 +160,7 @@ public sealed class RecomputeByHandTests
         var snapshot = Lab.Snapshot();
         TimeWindow window = criterion.Schedule.EndingAt(CavityLab.Noon);
         readings = Lab.Readings(criterion.Schedule.SpanOf(window), (id, time, value) =>
-            (id.StartsWith("well", StringComparison.Ordinal) ? Math.Round(value + (0.01 * TestLab.Noise(time)), 5) : value, LabWatch.Lab.Readings.ReadingQuality.None));
+            (id.StartsWith("well", StringComparison.Ordinal) ? Math.Round(value + (0.01 * TestLab.Noise(time)), 5) : value, ReadingQuality.None));
         CriterionResult result = criterion.Evaluate(new CriterionInput(snapshot, snapshot.Sources[0], window, readings)).First(one => scope is null || one.Scope == scope);
         return AssessmentViews.Of(new Assessment(
             CavityLab.Key, criterion.Code, result.Scope, window, 1, result.Value, result.Unit, result.Limit?.Maximum, result.CoverageFactor, result.Decision, result.ConformityProbability,
