@@ -49,6 +49,9 @@ public sealed record AssessmentsOptions
     /// <summary>Windows of the criterion <c>reference-agreement</c>.</summary>
     public CriterionSchedule ReferenceAgreement { get; init; } = ReferenceAgreementCriterion.DefaultSchedule;
 
+    /// <summary>Windows of the criterion <c>budget</c>.</summary>
+    public CriterionSchedule Budget { get; init; } = BudgetCriterion.DefaultSchedule;
+
     /// <summary>Folder in which traces of cavities are kept, so that a start need not trace again; null for memory alone. It can be deleted at any time.</summary>
     public string? TraceDirectory { get; init; }
 
@@ -72,6 +75,7 @@ public sealed record AssessmentsOptions
         Check(findings, nameof(Traceability), Traceability, leastLeadIn: TimeSpan.FromMinutes(1));
         Check(findings, nameof(HeaterBalance), HeaterBalance, leastLeadIn: TimeSpan.FromHours(6));
         Check(findings, nameof(ReferenceAgreement), ReferenceAgreement, leastLeadIn: TimeSpan.FromHours(6));
+        Check(findings, nameof(Budget), Budget, leastLeadIn: TimeSpan.FromMinutes(1));
         if (Concurrency is < 1 or > 64)
         {
             findings.Add(new Finding(

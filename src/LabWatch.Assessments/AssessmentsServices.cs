@@ -1,3 +1,4 @@
+using LabWatch.Assessments.Attribution;
 using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Clock;
 using LabWatch.Assessments.Criteria;
@@ -40,6 +41,8 @@ public static class AssessmentsServices
             provider => new AxialUniformityCriterion(options.AxialUniformity, provider.GetRequiredService<ICavityModels>())));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, EffectiveEmissivityCriterion>(
             provider => new EffectiveEmissivityCriterion(options.EffectiveEmissivity, provider.GetRequiredService<ICavityModels>())));
+        services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, BudgetCriterion>(
+            provider => new BudgetCriterion(options.Budget, provider.GetRequiredService<ICavityModels>())));
         services.TryAddSingleton<AssessmentHistory>();
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, SettledCriterion>(_ => new SettledCriterion(options.Settled)));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, PurgeCriterion>(_ => new PurgeCriterion(options.Purge)));
@@ -47,6 +50,7 @@ public static class AssessmentsServices
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, TraceabilityCriterion>(_ => new TraceabilityCriterion(options.Traceability)));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, HeaterBalanceCriterion>(_ => new HeaterBalanceCriterion(options.HeaterBalance)));
         services.TryAddEnumerable(ServiceDescriptor.Singleton<ICriterion, ReferenceAgreementCriterion>(_ => new ReferenceAgreementCriterion(options.ReferenceAgreement)));
+        services.TryAddSingleton<AttributionReader>();
         services.TryAddSingleton<PlannerState>();
         services.TryAddSingleton<IPlannerState>(provider => provider.GetRequiredService<PlannerState>());
         services.TryAddSingleton<Planner>();

@@ -25,6 +25,9 @@ import { assessmentsOf } from "./criteria";
 import { DriftSection } from "./drift/DriftSection";
 import { Guarded } from "./Guarded";
 import { HistorySection } from "./history/HistorySection";
+import { AttributionSection } from "./insight/AttributionSection";
+import { BudgetSection } from "./insight/BudgetSection";
+import { PowerSection } from "./insight/PowerSection";
 import { usePolled } from "./polled";
 import { ProfileSection } from "./profile/ProfileSection";
 import { RadianceSection } from "./radiance/RadianceSection";
@@ -56,6 +59,9 @@ const sections: [id: string, name: string][] = [
   ["radiance", "Radiance"],
   ["history", "Criteria"],
   ["drift", "Drift"],
+  ["causes", "Causes"],
+  ["budget", "Budget"],
+  ["power", "Power"],
   ["chart", "Channels"],
   ["runs", "Runs"],
   ["instruments", "Instruments"],
@@ -114,6 +120,15 @@ function Known({ source, onAcknowledge }: { source: Source; onAcknowledge: (aler
       </Guarded>
       <Guarded name="Drift and forecast">
         <DriftSection source={source} />
+      </Guarded>
+      <Guarded name="What lies behind a deviation">
+        <AttributionSection source={source} />
+      </Guarded>
+      <Guarded name="Uncertainty budget, live">
+        <BudgetSection source={source} onOpen={open} />
+      </Guarded>
+      <Guarded name="What the monitoring would miss">
+        <PowerSection source={source} />
       </Guarded>
       <Guarded name="Channels over time">
         <ChannelSection source={source} />

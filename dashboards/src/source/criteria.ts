@@ -39,6 +39,7 @@ const meanings: Record<string, string> = {
   purge: "Relative humidity of the gas at the aperture at the temperature of the coldest wall, by 5 min means.",
   surroundings: "Largest distance of a condition of the room from the middle of its permitted range, in parts of half its width.",
   traceability: "Age of the oldest calibration or check that results rest on, as a part of its interval.",
+  budget: "Live expanded uncertainty of the radiance temperature; the limit is the CMC.",
   "data-health": "Share of the promised readings that are missing or bad, of the worst channel, in an hour.",
 };
 

@@ -1,6 +1,7 @@
 import { ask } from "../api/client";
 import type { Outcome } from "../api/types";
 import type { ForecastList } from "./drift/types";
+import type { Attribution, Budget, Power } from "./insight/types";
 import type { FullAssessment, Profile, SourceDetail } from "./types";
 
 const path = (id: string): string => encodeURIComponent(id);
@@ -12,6 +13,12 @@ export const readProfile = (source: string, signal: AbortSignal): Promise<Profil
 export const readForecasts = (source: string, signal: AbortSignal): Promise<ForecastList> => ask(`sources/${path(source)}/forecasts`, { signal });
 
 export const readForecastsOf = (assessment: string, signal: AbortSignal): Promise<ForecastList> => ask(`assessments/${path(assessment)}/forecasts`, { signal });
+
+export const readAttribution = (source: string, signal: AbortSignal): Promise<Attribution> => ask(`sources/${path(source)}/attribution`, { signal });
+
+export const readBudgets = (source: string, signal: AbortSignal): Promise<{ items: Budget[] }> => ask(`budgets?source=${path(source)}`, { signal });
+
+export const readPower = (source: string, signal: AbortSignal): Promise<{ items: Power[] }> => ask(`power?source=${path(source)}`, { signal });
 
 export const readRevisions = (assessment: string, signal: AbortSignal): Promise<FullAssessment[]> => ask(`assessments/${path(assessment)}/revisions`, { signal });
 

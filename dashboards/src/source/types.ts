@@ -17,6 +17,8 @@ export interface ProfilePoint {
 }
 
 export interface Comparator {
+  channel: string;
+  name: string;
   celsius: number | null;
   effectiveEmissivity: Stated | null;
   showsChangeOnly: boolean;
@@ -36,7 +38,7 @@ export interface BandProfile {
   radianceTemperature: Stated | null;
   offsetMillikelvin: Stated | null;
   surroundingsCelsius: number | null;
-  comparator: Comparator | null;
+  comparators: Comparator[];
   baseline: Baseline | null;
 }
 

@@ -17,9 +17,16 @@ public static class Quantities
     public static string Value(double value, double expandedUncertainty) =>
         expandedUncertainty > 0 ? Fixed(value, Decimals(expandedUncertainty, 2)) : Significant(value, 3);
 
-    /// <summary>A number with a fixed number of decimals.</summary>
+    /// <summary>A number with a fixed number of decimals; a negative number of them rounds to tens, hundreds and so on.</summary>
     public static string Fixed(double value, int decimals)
     {
+        if (decimals < 0 && double.IsFinite(value))
+        {
+            double step = Math.Pow(10, -decimals);
+            return Fixed(Math.Round(value / step, MidpointRounding.ToEven) * step, 0);
+        }
+
+        decimals = Math.Max(0, decimals);
         string text = Math.Round(value, decimals, MidpointRounding.ToEven).ToString("F" + decimals.ToString(CultureInfo.InvariantCulture), CultureInfo.InvariantCulture);
         return text.AsSpan().TrimStart('-').ContainsAnyExcept("0.") ? text : text.TrimStart('-');
     }
@@ -44,11 +51,17 @@ public static class Quantities
         _ => Fixed(duration.TotalDays, 0) + " days",
     };
 
+    /// <summary>Decimals that leave so many significant digits after rounding: 0.0996 with two is 0.10, and 186 is 190.</summary>
     private static int Decimals(double value, int digits)
     {
         double magnitude = Math.Abs(value);
-        return magnitude is 0 || !double.IsFinite(magnitude)
-            ? 0
-            : Math.Clamp(digits - 1 - (int)Math.Floor(Math.Log10(magnitude)), 0, MostDecimals);
+        if (magnitude is 0 || !double.IsFinite(magnitude))
+        {
+            return 0;
+        }
+
+        int decimals = digits - 1 - (int)Math.Floor(Math.Log10(magnitude));
+        bool carries = Math.Round(magnitude * Math.Pow(10, decimals), MidpointRounding.ToEven) >= Math.Pow(10, digits);
+        return Math.Min(carries ? decimals - 1 : decimals, MostDecimals);
     }
 }

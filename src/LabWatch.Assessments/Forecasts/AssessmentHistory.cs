@@ -4,6 +4,7 @@ using LabWatch.Lab.Assessments;
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Metrology.Uncertainty;
 using LabWatch.Records.Assessments;
 
 namespace LabWatch.Assessments.Forecasts;
@@ -46,6 +47,12 @@ public sealed class AssessmentHistory(IAssessmentLedger ledger, ILabSnapshotSour
         return upTo is null ? kept.Forecasts.Value : DriftForecasts.Of(described, kept.Points, upTo);
     }
 
+    /// <summary>The newest decided assessments of a source by a criterion, one a scope and set point.</summary>
+    public async ValueTask<IReadOnlyList<Assessment>> NewestDecidedAsync(SourceKey source, string criterion, CancellationToken cancellationToken) =>
+        snapshots.Current.FindSource(source) is { } described
+            ? [.. (await PointsAsync(described, cancellationToken).ConfigureAwait(false)).Newest.Where(pair => pair.Key.Criterion == criterion).Select(pair => pair.Value)]
+            : [];
+
     /// <inheritdoc/>
     public void Dispose() => _reading.Dispose();
 
@@ -66,15 +73,20 @@ public sealed class AssessmentHistory(IAssessmentLedger ledger, ILabSnapshotSour
             }
 
             List<TrackedPoint> points = [];
+            Dictionary<(string, string, double), Assessment> newest = [];
             foreach (string criterion in TrackedPoints.Criteria)
             {
                 await foreach (Assessment assessment in ReadAsync(source.Key, criterion, Reach, cancellationToken).ConfigureAwait(false))
                 {
                     points.AddRange(TrackedPoints.Of(source, assessment));
+                    if (assessment.Decision is not Decision.NotDecided)
+                    {
+                        newest.TryAdd((criterion, assessment.Scope, Math.Round(CriterionResult.Figure(assessment.Figures, FigureName.SetPoint), 1)), assessment);
+                    }
                 }
             }
 
-            Kept read = new(source, clock.GetTimestamp(), points);
+            Kept read = new(source, clock.GetTimestamp(), points, newest);
             _kept[source.Key] = read;
             foreach ((SourceKey key, Kept old) in _kept)
             {
@@ -115,7 +127,7 @@ public sealed class AssessmentHistory(IAssessmentLedger ledger, ILabSnapshotSour
     private Kept? Fresh(ReferenceSource source) =>
         _kept.TryGetValue(source.Key, out Kept? kept) && ReferenceEquals(kept.Source, source) && clock.GetElapsedTime(kept.ReadAt) < KeepFor ? kept : null;
 
-    private sealed record Kept(ReferenceSource Source, long ReadAt, IReadOnlyList<TrackedPoint> Points)
+    private sealed record Kept(ReferenceSource Source, long ReadAt, IReadOnlyList<TrackedPoint> Points, IReadOnlyDictionary<(string Criterion, string Scope, double SetPoint), Assessment> Newest)
     {
         public Lazy<IReadOnlyList<DriftForecast>> Forecasts { get; } = new(() => DriftForecasts.Of(Source, Points));
     }

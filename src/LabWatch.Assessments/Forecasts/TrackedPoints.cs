@@ -13,7 +13,7 @@ internal static class TrackedPoints
 
     /// <summary>The criteria whose assessments are followed.</summary>
     public static IReadOnlyList<string> Criteria { get; } =
-        [CriterionCode.EffectiveEmissivity, CriterionCode.Stability, CriterionCode.AxialUniformity, CriterionCode.Budget];
+        [CriterionCode.EffectiveEmissivity, CriterionCode.Stability, CriterionCode.AxialUniformity, CriterionCode.Budget, CriterionCode.ReferenceAgreement, CriterionCode.HeaterBalance];
 
     /// <summary>The points of one assessment.</summary>
     /// <param name="source">The source as it is described now.</param>
@@ -28,8 +28,21 @@ internal static class TrackedPoints
         return assessment.Criterion switch
         {
             CriterionCode.EffectiveEmissivity => Emissivity(source, assessment),
+            CriterionCode.AxialUniformity => Uniformity(source, assessment),
             _ => [Point(assessment, TrackedQuantity.CriterionValue, assessment.Value.Value, assessment.Unit, assessment.Limit, string.Empty)],
         };
+    }
+
+    private static IEnumerable<TrackedPoint> Uniformity(ReferenceSource source, Assessment assessment)
+    {
+        yield return Point(assessment, TrackedQuantity.CriterionValue, assessment.Value.Value, assessment.Unit, assessment.Limit, string.Empty);
+        string own = "mean-" + source.ReferenceChannel?.Id;
+        double[] others = [.. assessment.Figures.Where(figure => figure.Name.StartsWith("mean-", StringComparison.Ordinal) && figure.Name != own).Select(figure => figure.Value.Value)];
+        double reference = Figure(assessment, own);
+        if (others.Length > 0 && double.IsFinite(reference))
+        {
+            yield return Point(assessment, TrackedQuantity.WellDifference, (reference - others.Average()) * 1000, "mK", null, string.Empty);
+        }
     }
 
     private static IEnumerable<TrackedPoint> Emissivity(ReferenceSource source, Assessment assessment)

@@ -15,6 +15,9 @@ public static class TrackedQuantity
     /// <summary>Radiance temperature that a comparator shows less that of the model, mK.</summary>
     public const string ComparatorOffset = "comparator-minus-model";
 
+    /// <summary>Mean of the reference well less that of the other wells, mK.</summary>
+    public const string WellDifference = "reference-minus-wells";
+
     /// <summary>The value of the criterion itself, for those whose value is a magnitude.</summary>
     public const string CriterionValue = "value";
 
@@ -31,6 +34,7 @@ public static class TrackedQuantity
         RadianceOffset => "the offset of the radiance temperature, by the model,",
         ComparatorDeparture => "the departure of e_eff from its baseline, as the comparator shows it,",
         ComparatorOffset => "the difference between comparator and model",
+        WellDifference => "the difference between the reference well and the other wells",
         _ => Lab.Limits.CriterionCode.NameOf(criterion),
     };
 }

@@ -74,6 +74,14 @@ internal static class LabFileChecks
 
     private static void CheckRadiance(List<Finding> findings, ReferenceSource source, string pointer, HashSet<string> bands, string bandCure)
     {
+        for (int i = 0; i < source.Claimed.Count; i++)
+        {
+            if (source.Claimed[i].Band is { } claimed)
+            {
+                Known(findings, bands, claimed, $"{pointer}/claimed/{i}/band", "band", bandCure);
+            }
+        }
+
         for (int i = 0; i < source.Baselines.Count; i++)
         {
             Known(findings, bands, source.Baselines[i].Band, $"{pointer}/baselines/{i}/band", "band", bandCure);

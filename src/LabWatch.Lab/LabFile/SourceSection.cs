@@ -1,6 +1,7 @@
 using LabWatch.Lab.Identity;
 using LabWatch.Lab.Sources;
 using LabWatch.Lab.Time;
+using LabWatch.Metrology.Uncertainty;
 
 namespace LabWatch.Lab.LabFile;
 
@@ -16,7 +17,7 @@ internal static class SourceSection
     public static ReferenceSource Read(JsonCursor item, string site)
     {
         item.OnlyMembers("id", "name", "kind", "route", "range", "purgeGas", "bands", "cavity", "channels",
-            "view", "baselines", "surroundings", "wellToWallDrop", "conditions", "purge", "balances", "effectiveFrom", "hazards");
+            "view", "baselines", "surroundings", "wellToWallDrop", "claimed", "conditions", "purge", "balances", "effectiveFrom", "hazards");
         SourceKey key = new(site, item.Id("id"));
         (double minimum, double maximum) = Range(item) ?? (double.NaN, double.NaN);
         return new ReferenceSource(
@@ -33,6 +34,7 @@ internal static class SourceSection
             PurgeGas = item.OptionalText("purgeGas"),
             View = RadianceSection.View(item),
             Baselines = [.. item.Items("baselines", required: false).Select(RadianceSection.Baseline)],
+            Claimed = [.. item.Items("claimed", required: false).Select(Claimed)],
             SurroundingsOffsetKelvin = RadianceSection.Surroundings(item),
             WellToWallDrop = RadianceSection.Drop(item),
             Hazards = HazardSection.Read(item),
@@ -60,6 +62,23 @@ internal static class SourceSection
         }
 
         return (minimum, maximum);
+    }
+
+    private static ClaimedUncertainty Claimed(JsonCursor item)
+    {
+        item.OnlyMembers("contribution", "standardUncertaintyKelvin", "degreesOfFreedom", "shape", "from", "band", "range");
+        (double Minimum, double Maximum)? range = Range(item, required: false);
+        return new ClaimedUncertainty(
+            item.Id("contribution"),
+            item.Number("standardUncertaintyKelvin", 0, 1000),
+            item.OptionalNumber("degreesOfFreedom", 1, 1e9) ?? double.PositiveInfinity,
+            item.OptionalText("shape") is null ? DistributionShape.Normal : item.Choice<DistributionShape>("shape"),
+            item.Text("from"))
+        {
+            Band = item.OptionalText("band"),
+            MinimumCelsius = range?.Minimum,
+            MaximumCelsius = range?.Maximum,
+        };
     }
 
     private static WorkingBand Band(JsonCursor item)

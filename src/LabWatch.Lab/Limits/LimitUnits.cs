@@ -12,7 +12,7 @@ public static class LimitUnits
     /// <summary>The units; empty where the criterion is not judged yet, so that any stands.</summary>
     public static IReadOnlyList<string> Of(string criterion) => criterion switch
     {
-        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.ReferenceAgreement => TemperatureDifference,
+        CriterionCode.Stability or CriterionCode.AxialUniformity or CriterionCode.ReferenceAgreement or CriterionCode.Budget => TemperatureDifference,
         CriterionCode.Settled => Rate,
         CriterionCode.EffectiveEmissivity => Ratio,
         CriterionCode.HeaterBalance => Power,

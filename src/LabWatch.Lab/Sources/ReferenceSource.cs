@@ -43,6 +43,9 @@ public sealed record ReferenceSource(
     /// <summary>Effective emissivities that a drift is told from; empty where none is on record.</summary>
     public IReadOnlyList<EmissivityBaseline> Baselines { get; init; } = [];
 
+    /// <summary>Contributions that the laboratory's own uncertainty budget claims; empty where none is on record.</summary>
+    public IReadOnlyList<ClaimedUncertainty> Claimed { get; init; } = [];
+
     /// <summary>Radiance temperature of the surroundings minus the air temperature, kelvin.</summary>
     public Estimate SurroundingsOffsetKelvin { get; init; } = UsualSurroundingsOffsetKelvin;
 

@@ -46,6 +46,8 @@ internal static class ApiMapping
         SourceEndpoints.Map(api);
         AssessmentEndpoints.Map(api);
         ForecastEndpoints.Map(api);
+        AttributionEndpoints.Map(api);
+        BudgetEndpoints.Map(api);
         AlertEndpoints.Map(api);
         NotifierEndpoints.Map(api);
         AuditEndpoints.Map(api);

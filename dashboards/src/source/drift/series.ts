@@ -8,10 +8,11 @@ const quantityName: Record<string, string> = {
   "radiance-temperature-offset": "Offset of the radiance temperature",
   "comparator-departure": "Effective emissivity less baseline",
   "comparator-minus-model": "Comparator less model",
+  "reference-minus-wells": "Reference less other wells",
 };
 
 /** What is followed, without its set point. */
-export function seriesName(forecast: Forecast, source: Source): string {
+export function seriesName(forecast: Pick<Forecast, "criterion" | "scope" | "quantity">, source: Source): string {
   const scope = scopeName(forecast.scope, source);
   return `${quantityName[forecast.quantity] ?? criterionName(forecast.criterion)}${scope === "" ? "" : `, ${scope}`}`;
 }

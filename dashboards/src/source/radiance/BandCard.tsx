@@ -38,7 +38,15 @@ export function BandCard({ band, source, assessments, onOpen }: BandCardProps) {
         </Row>
         <Row term="Surroundings">{band.surroundingsCelsius === null ? "not measured" : celsius(band.surroundingsCelsius, 1)}</Row>
         <Row term="Method">{methodName[band.method] ?? words(band.method)}</Row>
-        <Row term="Comparator">{band.comparator === null ? "none in this band" : <ComparatorText comparator={band.comparator} />}</Row>
+        {band.comparators.length === 0 ? (
+          <Row term="Comparator">none in this band</Row>
+        ) : (
+          band.comparators.map((comparator) => (
+            <Row key={comparator.channel} term={band.comparators.length === 1 ? "Comparator" : typeset(comparator.name)}>
+              <ComparatorText comparator={comparator} />
+            </Row>
+          ))
+        )}
         <Row term="Baseline">
           <BaselineText band={band} />
         </Row>

@@ -28,7 +28,7 @@ internal static class EmissivityText
         string method = model.Method switch
         {
             "ring-kernels" => $"Method: ring kernels for diffuse walls, numerical error {Quantities.Significant(model.MethodError, 1)}",
-            "monte-carlo" => $"Method: Monte Carlo with {Quantities.Count((int)model.Weights!.Counts.Rays)} rays, standard error {Quantities.Significant(model.MethodError, 2)}",
+            "monte-carlo" => $"Method: Monte Carlo at a diffuse fraction of {Quantities.Fixed(model.Optics.DiffuseFraction.Value, 3)} with {Quantities.Count((int)model.Weights!.Counts.Rays)} rays, seed {Seed}, standard error {Quantities.Significant(model.MethodError, 2)}",
             "flat-plate" => "Method: flat plate, e_eff is the emissivity of the coating",
             _ => "Method: closed form",
         };
@@ -45,6 +45,8 @@ internal static class EmissivityText
             .Select(part => $"{part.Name} {Quantities.Significant(part.Value, 2)}"));
         return $"{method}. Largest standard uncertainties of e_eff: {largest}.";
     }
+
+    private static string Seed => CavityTraces.Options.Seed.ToString(System.Globalization.CultureInfo.InvariantCulture);
 
     private static double Expanded(Estimate estimate) => CoverageFactor.For(estimate.DegreesOfFreedom) * estimate.StandardUncertainty;
 }

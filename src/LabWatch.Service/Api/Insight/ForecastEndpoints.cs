@@ -25,7 +25,7 @@ internal static class ForecastEndpoints
             .WithSummary("Drift of a source's results over the days, and when each would reach its limit")
             .WithDescription(
                 "One item a quantity, scope and set point, the soonest crossing first: effective emissivity less its baseline and offset of the radiance temperature by model and by comparator, "
-                + "stability, axial uniformity, budget. Day means, slope with uncertainty for autocorrelated noise, crossing with its 95 % interval, state of the control charts. Read anew every five minutes.")
+                + "stability, axial uniformity, budget, agreement of the references, heater balance. Day means, slope with uncertainty for autocorrelated noise, crossing with its 95 % interval, state of the control charts. Read anew every five minutes.")
             .ProducesProblem(StatusCodes.Status404NotFound);
         api.MapGet("assessments/{id}/forecasts", OfAssessmentAsync)
             .WithTags("Assessments")

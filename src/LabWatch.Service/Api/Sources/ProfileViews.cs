@@ -71,13 +71,15 @@ internal static class ProfileViews
             Expanded(radiance.RadianceCelsius),
             Expanded(new(offset.Value * 1000, offset.StandardUncertainty * 1000, offset.DegreesOfFreedom)),
             radiance.Evidence.Surroundings.RadianceCelsius.Value,
-            band.Comparators.Count > 0 ? Comparator(band.Comparators[0]) : null,
+            [.. band.Comparators.Select(Comparator)],
             band.Baseline.IsDesignValue
                 ? null
                 : new(band.Baseline.EffectiveEmissivity.Value, 2 * band.Baseline.EffectiveEmissivity.StandardUncertainty, band.Baseline.From));
     }
 
     private static ComparatorProfileView Comparator(ComparatorProfile comparator) => new(
+        comparator.Point.Channel.Id,
+        comparator.Point.Channel.Name,
         Numbers.OrNull(comparator.Point.Celsius.Value),
         comparator.Emissivity is { } found ? Expanded(found.EffectiveEmissivity) : null,
         comparator.Point.ShowsChangeOnly,

@@ -13,5 +13,5 @@ internal sealed record BandProfileView(
     [property: Description("The same with its uncertainty, that of the reference included, degree Celsius and kelvin.")] EstimateView RadianceTemperature,
     [property: Description("Radiance temperature minus reference temperature, millikelvin.")] EstimateView OffsetMillikelvin,
     [property: Description("Radiance temperature of the surroundings, degree Celsius.")] double SurroundingsCelsius,
-    [property: Description("What the comparator of the band shows; null where there is none.")] ComparatorProfileView? Comparator,
+    [property: Description("What each comparator of the band shows; empty where there is none.")] IReadOnlyList<ComparatorProfileView> Comparators,
     [property: Description("The baseline on record; null where the isothermal design value serves.")] BaselineView? Baseline);

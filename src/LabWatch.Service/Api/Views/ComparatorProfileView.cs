@@ -4,6 +4,8 @@ namespace LabWatch.Service.Api.Views;
 
 /// <summary>What a comparator shows of a source.</summary>
 internal sealed record ComparatorProfileView(
+    [property: Description("Id of its channel.")] string Channel,
+    [property: Description("Name for people.")] string Name,
     [property: Description("Radiance temperature it shows through its certificate, degree Celsius; null where it shows none.")] double? Celsius,
     [property: Description("The effective emissivity that follows; null where it gives none.")] EstimateView? EffectiveEmissivity,
     [property: Description("Whether it was calibrated against this very source.")] bool ShowsChangeOnly,

@@ -2,6 +2,7 @@ using LabWatch.Alerts;
 using LabWatch.Alerts.Links;
 using LabWatch.Alerts.Push;
 using LabWatch.Assessments;
+using LabWatch.Assessments.Attribution;
 using LabWatch.Assessments.Cavities;
 using LabWatch.Assessments.Criteria;
 using LabWatch.Assessments.Forecasts;
@@ -65,6 +66,7 @@ internal sealed class ApiServices(TimeProvider clock)
         services.AddSingleton<ICriterion>(new StabilityCriterion(StabilityCriterion.DefaultSchedule));
         services.AddSingleton<ICavityModels>(DemoRun.Models);
         services.AddSingleton<AssessmentHistory>();
+        services.AddSingleton<AttributionReader>();
         services.AddSingleton<IIntakeState>(Intake);
         services.AddSingleton<IDeviceAccounts>(new DeviceAccountFile(Path.Combine(Path.GetTempPath(), $"labwatch-devices-{Guid.NewGuid():N}.json")));
         services.TryAddSingleton<IRunLedger, NoRuns>();
