@@ -9,7 +9,6 @@ using LabWatch.Alerts.Outbox;
 using LabWatch.Alerts.Push;
 using LabWatch.Alerts.Recording;
 using LabWatch.Lab;
-using LabWatch.Lab.Alerts;
 using LabWatch.Lab.Readings;
 using LabWatch.Lab.Secrets;
 using Microsoft.Extensions.DependencyInjection;

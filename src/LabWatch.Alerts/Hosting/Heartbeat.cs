@@ -1,7 +1,6 @@
 using System.Globalization;
 using System.Net.Http.Headers;
 using System.Text;
-using System.Text.Json;
 using System.Text.Json.Nodes;
 using LabWatch.Alerts.Desk;
 using LabWatch.Alerts.Outbox;

@@ -9,7 +9,7 @@ public interface IPushDesk
     string PublicKey { get; }
 
     /// <summary>The subscriptions of a person.</summary>
-    IReadOnlyList<PushSubscription> Of(string account);
+    IReadOnlyList<PushSubscription> DevicesOf(string account);
 
     /// <summary>Whose device a notifier is; null where it is no device, or one that is gone.</summary>
     string? AccountOf(string notifier);

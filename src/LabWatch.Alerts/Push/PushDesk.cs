@@ -43,7 +43,7 @@ internal sealed class PushDesk : IPushDesk
     public IReadOnlyList<Notifier> Notifiers => _notifiers;
 
     /// <inheritdoc/>
-    public IReadOnlyList<PushSubscription> Of(string account) =>
+    public IReadOnlyList<PushSubscription> DevicesOf(string account) =>
         [.. _all.Where(one => string.Equals(one.Account, account, StringComparison.Ordinal))];
 
     /// <summary>The subscription that a notifier is; null where it is gone.</summary>

@@ -88,7 +88,7 @@ internal sealed class BackupWriter(string data, string target, IReadOnlyList<str
             }
             catch (IOException exception) when (exception is not (FileNotFoundException or DirectoryNotFoundException) && attempt < OpenAttempts)
             {
-                Thread.Sleep(BetweenAttempts);
+                Task.Delay(BetweenAttempts, TimeProvider.System).GetAwaiter().GetResult();
             }
         }
     }

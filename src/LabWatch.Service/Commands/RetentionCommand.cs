@@ -1,5 +1,4 @@
 using System.CommandLine;
-using System.Globalization;
 using LabWatch.Evidence.Recording;
 using LabWatch.Lab;
 using LabWatch.Lab.Findings;

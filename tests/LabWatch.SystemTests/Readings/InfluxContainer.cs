@@ -54,7 +54,7 @@ public sealed class InfluxContainer : IAsyncLifetime
                     }
                 })
                 .Build();
-            using CancellationTokenSource patience = new(TimeSpan.FromMinutes(3));
+            using CancellationTokenSource patience = new(TimeSpan.FromMinutes(3), TimeProvider.System);
             await _container.StartAsync(patience.Token);
         }
         catch (Exception error) when (error is DockerUnavailableException or Docker.DotNet.DockerApiException or OperationCanceledException)

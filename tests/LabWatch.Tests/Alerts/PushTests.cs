@@ -5,7 +5,6 @@ using System.Text;
 using System.Text.Json;
 using LabWatch.Alerts;
 using LabWatch.Alerts.Push;
-using LabWatch.Lab.Time;
 using Microsoft.Extensions.Logging.Abstractions;
 
 namespace LabWatch.Tests.Alerts;
@@ -102,7 +101,7 @@ public sealed class PushTests : IDisposable
         using PushReader reader = new();
         PushSubscription made = Add(Desk(keys), reader);
         PushDesk again = Desk(keys);
-        Assert.Equal(made, Assert.Single(again.Of("tess")));
+        Assert.Equal(made, Assert.Single(again.DevicesOf("tess")));
         Assert.False(again.Remove("uli", made.Id));
         Assert.True(again.Remove("tess", made.Id));
         Assert.Empty(Desk(keys).Notifiers);

@@ -1,5 +1,4 @@
 using System.Net;
-using LabWatch.Tests.Api.Fakes;
 
 namespace LabWatch.Tests.Api;
 

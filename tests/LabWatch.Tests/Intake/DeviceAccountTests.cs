@@ -6,7 +6,7 @@ using LabWatch.Lab.Time;
 namespace LabWatch.Tests.Intake;
 
 /// <summary>Who may publish what at the embedded broker.</summary>
-public class DeviceAccountTests : IDisposable
+public sealed class DeviceAccountTests : IDisposable
 {
     private static readonly Instant Now = Instant.FromUnixSeconds(1_796_112_930);
     private readonly TemporaryDirectory _directory = new();

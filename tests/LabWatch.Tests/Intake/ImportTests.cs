@@ -7,7 +7,7 @@ using Microsoft.Extensions.Time.Testing;
 namespace LabWatch.Tests.Intake;
 
 /// <summary>Readings of the past from delimited text.</summary>
-public class ImportTests : IDisposable
+public sealed class ImportTests : IDisposable
 {
     private readonly TemporaryDirectory _directory = new();
     private readonly FakeStore _store = new();

@@ -32,11 +32,11 @@ public class MappingTests
     [InlineData("/k\"l", "6")]
     [InlineData("/ ", "7")]
     [InlineData("/m~0n", "8")]
-    public void Pointers_of_rfc_6901_lead_where_it_says(string pointer, string? expected)
+    public void Pointers_of_rfc_6901_lead_where_it_says(string written, string? expected)
     {
         const string Document = """{"foo": ["bar", "baz"], "": 0, "a/b": 1, "c%d": 2, "e^f": 3, "g|h": 4, "i\\j": 5, "k\"l": 6, " ": 7, "m~n": 8}""";
         using JsonDocument document = JsonDocument.Parse(Document);
-        Assert.True(JsonPointer.TryParse(pointer, out JsonPointer parsed));
+        Assert.True(JsonPointer.TryParse(written, out JsonPointer parsed));
         Assert.True(parsed.TryEvaluate(document.RootElement, out JsonElement value));
         Assert.Equal(expected ?? Document, value.GetRawText());
     }

@@ -63,7 +63,7 @@ internal static class NotifierEndpoints
     }
 
     private static Ok<PushDeviceListView> Devices(HttpContext http, IPushDesk push) =>
-        TypedResults.Ok(new PushDeviceListView(push.PublicKey, [.. push.Of(Caller.Of(http).Name).OrderBy(device => device.CreatedAt).Select(PushDeviceView.Of)]));
+        TypedResults.Ok(new PushDeviceListView(push.PublicKey, [.. push.DevicesOf(Caller.Of(http).Name).OrderBy(device => device.CreatedAt).Select(PushDeviceView.Of)]));
 
     private static Results<Created<PushDeviceView>, ProblemHttpResult> AddDevice(PushDeviceRequest request, HttpContext http, IPushDesk push)
     {
@@ -85,7 +85,7 @@ internal static class NotifierEndpoints
         string id, HttpContext http, IPushDesk push, ITestMessages messages, CancellationToken cancellationToken)
     {
         string by = Caller.Of(http).Name;
-        bool isOwn = push.Of(by).Any(device => device.Id == id);
+        bool isOwn = push.DevicesOf(by).Any(device => device.Id == id);
         TestOutcome? result = isOwn ? await messages.SendAsync("push-" + id, by, cancellationToken) : null;
         return result is null ? Missing(id) : TypedResults.Ok(new TestView(result.IsTaken, result.Error));
     }

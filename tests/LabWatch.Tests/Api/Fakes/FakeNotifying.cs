@@ -27,7 +27,7 @@ internal sealed class FakeNotifying(TimeProvider clock) : ITestMessages, IPushDe
         return ValueTask.FromResult<TestOutcome?>(new TestOutcome(false, "No answer within 10 s."));
     }
 
-    public IReadOnlyList<PushSubscription> Of(string account) => [.. _devices.Where(device => device.Account == account)];
+    public IReadOnlyList<PushSubscription> DevicesOf(string account) => [.. _devices.Where(device => device.Account == account)];
 
     public string? AccountOf(string notifier) => _devices.FirstOrDefault(device => "push-" + device.Id == notifier)?.Account;
 
