@@ -73,7 +73,7 @@ internal sealed class LedgerRecorder(
                 Answered();
                 return;
             }
-            catch (Exception exception) when (!stopping.IsCancellationRequested)
+            catch (Exception exception) when (exception is not OperationCanceledException || !stopping.IsCancellationRequested)
             {
                 // Whatever the ledger throws, the entry stays in the journal and is tried again; only one that it alone refuses is set aside.
                 Failed(exception);
@@ -121,7 +121,7 @@ internal sealed class LedgerRecorder(
             await CallAsync(async token => await ledger.OpenAsync(token), stopping);
             return true;
         }
-        catch (Exception) when (!stopping.IsCancellationRequested)
+        catch (Exception exception) when (exception is not OperationCanceledException || !stopping.IsCancellationRequested)
         {
             // It does not answer at all, so it is not this entry's fault.
             return false;

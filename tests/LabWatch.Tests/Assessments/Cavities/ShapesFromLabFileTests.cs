@@ -84,8 +84,16 @@ public sealed class ShapesFromLabFileTests
     {
         JsonObject input = new()
         {
-            ["form"] = shape, ["radius_mm"] = radius, ["aperture_radius_mm"] = aperture, ["view"] = "cone", ["view_radius_mm"] = 4, ["view_distance_mm"] = 700, ["emissivity"] = emissivity,
-            ["diffuse_fraction"] = diffuse, ["rays"] = Rays, ["seed"] = (long)CavityTraces.Options.Seed,
+            ["form"] = shape,
+            ["radius_mm"] = radius,
+            ["aperture_radius_mm"] = aperture,
+            ["view"] = "cone",
+            ["view_radius_mm"] = 4,
+            ["view_distance_mm"] = 700,
+            ["emissivity"] = emissivity,
+            ["diffuse_fraction"] = diffuse,
+            ["rays"] = Rays,
+            ["seed"] = (long)CavityTraces.Options.Seed,
         };
         if (length > 0)
         {
