@@ -110,6 +110,8 @@ public class MappingTests
     [Theory]
     [InlineData("""{"at":"2026-12-01T08:15:29Z","sensors":[],"shell":300.15,"open":true}""", IntakeCode.MappedMissing, "/sensors/0/ohm", 2)]
     [InlineData("""{"at":"2026-12-01T08:15:29Z","sensors":[{"ohm":{}}],"shell":300.15,"open":true}""", IntakeCode.ValueNotNumber, "/sensors/0/ohm", 2)]
+    [InlineData("""{"at":"2026-12-01T08:15:29Z","sensors":[{"ohm":"1e999"}],"shell":300.15,"open":true}""", IntakeCode.ValueOutOfRange, "/sensors/0/ohm", 2)]
+    [InlineData("""{"at":"2026-12-01T08:15:29Z","sensors":[{"ohm":-1e999}],"shell":300.15,"open":true}""", IntakeCode.ValueOutOfRange, "/sensors/0/ohm", 2)]
     [InlineData("""{"at":"2027-12-01T08:15:29Z","sensors":[{"ohm":1}],"shell":300.15,"open":true}""", IntakeCode.TimeInTheFuture, "/at", 0)]
     [InlineData("""{"sensors":[{"ohm":1}],"shell":300.15,"open":true}""", IntakeCode.MappedMissing, "/at", 0)]
     [InlineData("""{"sensors":[{"ohm":1}],"shell":""", IntakeCode.MalformedJson, "payload", 0)]

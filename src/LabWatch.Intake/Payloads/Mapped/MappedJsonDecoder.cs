@@ -96,10 +96,13 @@ internal static class MappedJsonDecoder
             {
                 SenmlRefusal.Report(IntakeCode.ValueNotNumber, where, Encoding.UTF8.GetBytes(element.GetRawText()), findings ??= new());
             }
+            else if (double.IsInfinity(value = conversion?.Convert(value) ?? value))
+            {
+                SenmlRefusal.Report(IntakeCode.ValueOutOfRange, where, Encoding.UTF8.GetBytes(element.GetRawText()), findings ??= new());
+            }
             else
             {
                 last = channel;
-                value = conversion?.Convert(value) ?? value;
                 ReadingQuality judged = double.IsNaN(value) ? ReadingQuality.NoValue : channel.JudgeRange(value);
                 readings.Add(new Reading(channel.Id, time, value, quality | judged | (conversion is null ? ReadingQuality.None : ReadingQuality.Converted)));
             }
@@ -154,7 +157,7 @@ internal static class MappedJsonDecoder
                 value = element.ValueKind == JsonValueKind.True ? 1 : 0;
                 return true;
             case JsonValueKind.Number:
-                return element.TryGetDouble(out value) && double.IsFinite(value);
+                return element.TryGetDouble(out value);
             case JsonValueKind.String:
                 return BareNumberDecoder.TryParse(Encoding.UTF8.GetBytes(element.GetString() ?? string.Empty), out value);
             default:
