@@ -6,9 +6,12 @@ namespace LabWatch.Assessments.Budgets;
 /// <summary>A live budget in plain words.</summary>
 internal static class BudgetText
 {
+    /// <summary>From here on the coverage factor is that of the normal distribution to three digits, and the number itself says nothing.</summary>
+    private const double ManyDegrees = 1000;
+
     public static string Of(string band, LiveBudget budget, LimitVerdict verdict, string wells)
     {
-        string freedom = double.IsFinite(budget.Combined.DegreesOfFreedom) ? $"{Quantities.Fixed(budget.Combined.DegreesOfFreedom, 0)} effective degrees of freedom" : "infinite degrees of freedom";
+        string freedom = budget.Combined.DegreesOfFreedom < ManyDegrees ? $"{Quantities.Fixed(budget.Combined.DegreesOfFreedom, 0)} effective degrees of freedom" : "more than 1000 effective degrees of freedom";
         string value = VerdictText.Sentence(
             $"Live expanded uncertainty of the radiance temperature in the band {band} (k = {Quantities.Fixed(budget.CoverageFactor, 2)}, {freedom})",
             verdict.Value.Value, verdict.Unit, verdict.Limit, verdict.Conformity, verdict.Obstacles.Count == 0);

@@ -62,7 +62,7 @@ function BudgetTable({ budget, name, onOpen }: { budget: Budget; name: string; o
         <Row term="Live expanded uncertainty">
           U{"\u00a0=\u00a0"}
           {milli(budget.expandedMillikelvin)}, k{"\u00a0=\u00a0"}
-          {coverageText(budget.coverageFactor)}, {budget.degreesOfFreedom === null ? "infinite degrees of freedom" : `${fixed(budget.degreesOfFreedom, 0)} effective degrees of freedom`}
+          {coverageText(budget.coverageFactor)}, {budget.degreesOfFreedom === null || budget.degreesOfFreedom > 1000 ? "more than 1000 effective degrees of freedom" : `${fixed(budget.degreesOfFreedom, 0)} effective degrees of freedom`}
         </Row>
         <Row term="CMC">{budget.cmcMillikelvin === null ? "none on record" : `${milli(budget.cmcMillikelvin)}: ${budget.cmcHolds === true ? "holds" : "does not hold"}`}</Row>
         <Row term="Report at least">{milli(budget.reportableMillikelvin)} (never below the CMC)</Row>
