@@ -104,7 +104,7 @@ internal static class RecomputeCommand
             }
         }
 
-        return tally.Finish(parsed.GetValue(Json), parsed.GetValue(Reason) is not null);
+        return tally.Finish(parsed.GetValue(Json));
     }
 
     private static RecomputeRequest Request(ParseResult parsed)

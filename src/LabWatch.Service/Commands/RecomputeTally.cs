@@ -36,8 +36,8 @@ internal sealed class RecomputeTally(InvocationConfiguration console, ProgressLi
         progress.Report($"{item.Standing.Source} {item.Standing.Criterion}, assessments in all", _count);
     }
 
-    /// <summary>Prints the result. Exit code 0 where everything is identical or agrees, or what differs was recorded; else 3.</summary>
-    public int Finish(FileInfo? json, bool recorded)
+    /// <summary>Prints the result. Exit code 0 where everything is identical, agrees or was superseded; else 3.</summary>
+    public int Finish(FileInfo? json)
     {
         TimeSpan took = TimeProvider.System.GetElapsedTime(_start);
         progress.Dispose();
@@ -64,7 +64,7 @@ internal sealed class RecomputeTally(InvocationConfiguration console, ProgressLi
             WriteJson(json);
         }
 
-        return recorded || _others.TrueForAll(item => item.Agreement is Agreement.Agrees) ? ExitCode.Success : ExitCode.TamperingFound;
+        return _others.TrueForAll(item => item.Agreement is Agreement.Agrees || item.Superseding is not null) ? ExitCode.Success : ExitCode.TamperingFound;
     }
 
     private void WriteJson(FileInfo json)
